@@ -13,10 +13,14 @@ namespace sumwright::claim {
 /// Limits that keep a stranger's file from exhausting the machine.
 struct Limits {
   std::size_t file_bytes = 1U << 20U;
-  std::size_t nesting = 200;          ///< depth of an expression
+  std::size_t nesting = 200;          ///< brackets, signs and powers one inside the other
   std::size_t nodes = 20000;          ///< nodes of one expression
   std::size_t literal_digits = 1000;  ///< digits of one integer literal
   long exponent = 1000;               ///< largest literal exponent, in absolute value
+  std::size_t tree_depth = 4000;      ///< depth of the tree: long sums lean to the left
+  std::size_t power_bits = 100000;    ///< estimated size of an expression once powers are expanded
+  long magnitude = 1000000;           ///< of `from`, `at_least`, and integers in affine forms
+  std::size_t entries = 1000;         ///< entries of one array or table
 };
 
 /// A claim and the warnings met on the way (already rendered, for stderr).

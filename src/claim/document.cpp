@@ -1,0 +1,144 @@
+// From TOML text to a tree of values with byte places, through toml++.
+//
+// toml++ counts lines and characters; every stage here counts bytes of the file. Depth
+// is bounded by check_toml_nesting before toml++ sees the text.
+#include "claim/document.hpp"
+
+#include <fmt/format.h>
+#include <toml++/toml.h>
+
+#include <algorithm>
+#include <sstream>
+
+#include "claim/text.hpp"
+
+namespace sumwright::claim {
+
+namespace {
+
+constexpr std::string_view kByteOrderMark = "\xEF\xBB\xBF";
+
+class Converter {
+ public:
+  explicit Converter(const Source& source) : source_(source) {
+    const std::string_view text = source.text;
+    lines_.push_back(text.starts_with(kByteOrderMark) ? kByteOrderMark.size() : 0);
+    for (std::size_t i = 0; i < text.size(); ++i) {
+      if (text[i] == '\n') lines_.push_back(i + 1);
+    }
+  }
+
+  [[nodiscard]] std::size_t offset(toml::source_position position) const {
+    if (position.line == 0) return lines_[0];
+    if (position.line > lines_.size()) return source_.text.size();
+    std::size_t at = lines_[position.line - 1];
+    const std::string_view text = source_.text;
+    for (toml::source_index column = 1; column < position.column && at < text.size(); ++column) {
+      if (text[at] == '\n') break;
+      at += decode(text, at).length;
+    }
+    return at;
+  }
+
+  [[nodiscard]] Place place(const toml::source_region& region) const {
+    const std::size_t begin = offset(region.begin);
+    const std::size_t end = offset(region.end);
+    return {begin, end > begin ? end - begin : 0};
+  }
+
+  [[nodiscard]] Value value(const toml::node& node) const {
+    Value out;
+    out.place = place(node.source());
+    if (const auto* table = node.as_table()) {
+      out.kind = Value::Kind::table;
+      fill_table(out, *table);
+    } else if (const auto* array = node.as_array()) {
+      out.kind = Value::Kind::array;
+      for (const toml::node& item : *array) out.items.push_back(value(item));
+    } else if (const auto* text = node.as_string()) {
+      out.kind = Value::Kind::text;
+      out.text = mapped(text->get(), out.place);
+    } else if (const auto* integer = node.as_integer()) {
+      out.kind = Value::Kind::integer;
+      out.integer = integer->get();
+    } else {
+      out.kind = node.is_floating_point() ? Value::Kind::floating
+                 : node.is_boolean()      ? Value::Kind::boolean
+                                          : Value::Kind::date;
+    }
+    return out;
+  }
+
+ private:
+  void fill_table(Value& out, const toml::table& table) const {
+    for (const auto& [key, node] : table) {
+      Entry entry;
+      entry.key = std::string(key.str());
+      entry.key_place = place(key.source());
+      entry.value = value(node);
+      out.entries.push_back(std::move(entry));
+    }
+    // The library sorts by name; the formal statement follows the file.
+    std::stable_sort(out.entries.begin(), out.entries.end(), [](const Entry& a, const Entry& b) {
+      return a.key_place.offset < b.key_place.offset;
+    });
+  }
+
+  [[nodiscard]] MappedText mapped(const std::string& text, Place where) const {
+    auto literal = string_literal(source_.text, where.offset);
+    if (literal && literal->text == text) return *std::move(literal);
+    MappedText out;  // the two readings differ: point at the whole literal
+    out.text = text;
+    out.units.assign(text.size(), {where.offset, where.length});
+    out.place = where;
+    return out;
+  }
+
+  const Source& source_;
+  std::vector<std::size_t> lines_;
+};
+
+}  // namespace
+
+const Entry* Value::find(std::string_view key) const {
+  const auto found = std::find_if(entries.begin(), entries.end(),
+                                  [key](const Entry& entry) { return entry.key == key; });
+  return found == entries.end() ? nullptr : &*found;
+}
+
+Value parse_document(const Source& source) {
+  if (const auto invalid = first_invalid_utf8(source.text)) {
+    throw InputError(source, {*invalid, 1}, "this byte is not valid UTF-8",
+                     "a claim file is a UTF-8 text");
+  }
+  check_toml_nesting(source);
+  const Converter converter(source);
+  try {
+    return converter.value(toml::parse(std::string_view(source.text)));
+  } catch (const toml::parse_error& error) {
+    throw InputError(source, {converter.offset(error.source().begin), 1},
+                     fmt::format("not valid TOML: {}", error.description()));
+  }
+}
+
+std::string kind_name(Value::Kind kind) {
+  switch (kind) {
+    case Value::Kind::text:
+      return "a text";
+    case Value::Kind::integer:
+      return "an integer";
+    case Value::Kind::floating:
+      return "a floating-point number";
+    case Value::Kind::boolean:
+      return "a truth value";
+    case Value::Kind::date:
+      return "a date or time";
+    case Value::Kind::array:
+      return "an array";
+    case Value::Kind::table:
+      return "a table";
+  }
+  return "a value";
+}
+
+}  // namespace sumwright::claim
