@@ -32,10 +32,9 @@ mpq_class rational_power(const mpq_class& base, long exponent) {
 // Inserts a canonical factor (primitive, leading coefficient > 0, not constant).
 void insert(Factored& into, const Polynomial& base, long exponent) {
   auto& list = into.factors;
-  const auto at =
-      std::lower_bound(list.begin(), list.end(), base, [](const auto& entry, const Polynomial& b) {
-        return compare(entry.first, b) < 0;
-      });
+  const auto at = std::lower_bound(
+      list.begin(), list.end(), base,
+      [](const auto& entry, const Polynomial& b) { return compare(entry.first, b) < 0; });
   if (at == list.end() || compare(at->first, base) != 0) {
     list.insert(at, {base, exponent});
     return;

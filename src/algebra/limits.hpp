@@ -7,15 +7,14 @@
 
 namespace sumwright::algebra {
 
-/// Thrown by Deadline::check; caught in `cli` only (undecided) or where a smaller answer is possible.
+/// Thrown by Deadline::check; caught in `cli` only (undecided) or where a smaller answer is
+/// possible.
 class TimeUp : public std::runtime_error {
  public:
   explicit TimeUp(bool by_user)
-      : std::runtime_error(by_user ? "interrupted" : "time limit reached"),
-        interrupted(by_user) {}
+      : std::runtime_error(by_user ? "interrupted" : "time limit reached"), interrupted(by_user) {}
   /// An intermediate result that would be larger than `algebra` works with.
-  explicit TimeUp(const char* size_reason)
-      : std::runtime_error(size_reason), interrupted(false) {}
+  explicit TimeUp(const char* size_reason) : std::runtime_error(size_reason), interrupted(false) {}
   bool interrupted;
 };
 

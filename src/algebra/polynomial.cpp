@@ -130,9 +130,7 @@ Polynomial Polynomial::power(unsigned long exponent) const {
 
 bool Polynomial::is_zero() const { return fmpz_mpoly_is_zero(value_, ring_->context()) != 0; }
 bool Polynomial::is_one() const { return fmpz_mpoly_is_one(value_, ring_->context()) != 0; }
-bool Polynomial::is_constant() const {
-  return fmpz_mpoly_is_fmpz(value_, ring_->context()) != 0;
-}
+bool Polynomial::is_constant() const { return fmpz_mpoly_is_fmpz(value_, ring_->context()) != 0; }
 
 mpz_class Polynomial::constant() const {
   if (!is_constant()) throw std::logic_error("constant() of a polynomial that is not constant");
@@ -221,8 +219,8 @@ Polynomial lcm(const Polynomial& a, const Polynomial& b) {
 
 int compare(const Polynomial& a, const Polynomial& b) {
   const auto* context = a.ring()->context();
-  const slong common = std::min(fmpz_mpoly_length(a.raw(), context),
-                                fmpz_mpoly_length(b.raw(), context));
+  const slong common =
+      std::min(fmpz_mpoly_length(a.raw(), context), fmpz_mpoly_length(b.raw(), context));
   std::vector<ulong> left(a.ring()->size());
   std::vector<ulong> right(a.ring()->size());
   Fmpz x;

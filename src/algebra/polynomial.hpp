@@ -43,10 +43,11 @@ struct Monomial {
 /// An element of the ring. Value semantics; operands must share the ring.
 class Polynomial {
  public:
-  explicit Polynomial(RingPtr ring);                                   ///< 0
+  explicit Polynomial(RingPtr ring);  ///< 0
   Polynomial(RingPtr ring, const mpz_class& constant);
   static Polynomial variable(RingPtr ring, std::size_t index);
-  /// The affine form sum coefficients[i] x_i + constant (coefficients may be shorter than the ring).
+  /// The affine form sum coefficients[i] x_i + constant (coefficients may be shorter than the
+  /// ring).
   static Polynomial affine(RingPtr ring, const std::vector<long>& coefficients, long constant);
   static Polynomial from_terms(RingPtr ring, const std::vector<Monomial>& terms);
 
@@ -73,14 +74,14 @@ class Polynomial {
   [[nodiscard]] bool is_zero() const;
   [[nodiscard]] bool is_one() const;
   [[nodiscard]] bool is_constant() const;
-  [[nodiscard]] mpz_class constant() const;                    ///< value of a constant polynomial
-  [[nodiscard]] std::size_t terms() const;                     ///< number of monomials
-  [[nodiscard]] long degree(std::size_t variable) const;       ///< -1 for 0
-  [[nodiscard]] long total_degree() const;                     ///< -1 for 0
+  [[nodiscard]] mpz_class constant() const;               ///< value of a constant polynomial
+  [[nodiscard]] std::size_t terms() const;                ///< number of monomials
+  [[nodiscard]] long degree(std::size_t variable) const;  ///< -1 for 0
+  [[nodiscard]] long total_degree() const;                ///< -1 for 0
   [[nodiscard]] bool depends_on(std::size_t variable) const { return degree(variable) > 0; }
-  [[nodiscard]] mpz_class leading_coefficient() const;         ///< in the ring's order; 0 for 0
-  [[nodiscard]] mpz_class content() const;                     ///< gcd of coefficients, >= 0
-  [[nodiscard]] std::vector<Monomial> to_terms() const;        ///< descending in the ring's order
+  [[nodiscard]] mpz_class leading_coefficient() const;   ///< in the ring's order; 0 for 0
+  [[nodiscard]] mpz_class content() const;               ///< gcd of coefficients, >= 0
+  [[nodiscard]] std::vector<Monomial> to_terms() const;  ///< descending in the ring's order
   /// Coefficients as a polynomial in one variable: entry j multiplies variable^j.
   [[nodiscard]] std::vector<Polynomial> coefficients_in(std::size_t variable) const;
 
@@ -92,7 +93,8 @@ class Polynomial {
   [[nodiscard]] mpz_class evaluate(const std::vector<mpz_class>& point) const;
   [[nodiscard]] mpq_class evaluate_rational(const std::vector<mpq_class>& point) const;
 
-  /// Exact quotient; `exact` tells whether the division left no remainder (then *this == q * divisor).
+  /// Exact quotient; `exact` tells whether the division left no remainder (then *this == q *
+  /// divisor).
   [[nodiscard]] std::pair<Polynomial, bool> divide(const Polynomial& divisor) const;
   [[nodiscard]] Polynomial primitive_part() const;  ///< over Z, leading coefficient > 0; 0 stays 0
   [[nodiscard]] std::string to_string() const;      ///< `3*n^2*k - 1`, in the claim language

@@ -118,11 +118,14 @@ Factored RationalFunction::factored() const {
 
 std::string RationalFunction::to_string() const {
   if (is_polynomial()) return numerator_.to_string();
-  const bool constant = numerator_.is_constant() && denominator_.is_constant();
-  if (constant) return numerator_.to_string() + '/' + denominator_.to_string();
-  const std::string above = numerator_.terms() == 1 ? numerator_.to_string()
-                                                    : '(' + numerator_.to_string() + ')';
-  return above + "/(" + denominator_.to_string() + ')';
+  const std::string above =
+      numerator_.terms() == 1 ? numerator_.to_string() : '(' + numerator_.to_string() + ')';
+  // A number or a variable divides without brackets; `2*n` would not.
+  const bool plain = denominator_.is_constant() ||
+                     (denominator_.terms() == 1 && denominator_.total_degree() == 1 &&
+                      denominator_.content() == 1);
+  const std::string below = denominator_.to_string();
+  return above + (plain ? '/' + below : "/(" + below + ')');
 }
 
 }  // namespace sumwright::algebra

@@ -7,11 +7,13 @@
 
 namespace sumwright::algebra {
 
-/// numerator / denominator, coprime over Z (contents too), leading coefficient of the denominator > 0.
+/// numerator / denominator, coprime over Z (contents too), leading coefficient of the denominator >
+/// 0.
 class RationalFunction {
  public:
   explicit RationalFunction(const Polynomial& numerator);
-  RationalFunction(const Polynomial& numerator, const Polynomial& denominator);  ///< denominator != 0
+  RationalFunction(const Polynomial& numerator,
+                   const Polynomial& denominator);  ///< denominator != 0
   explicit RationalFunction(const RingPtr& ring, const mpq_class& value);
   explicit RationalFunction(const RingPtr& ring, const Factored& value);
 
@@ -24,7 +26,8 @@ class RationalFunction {
   friend RationalFunction operator+(const RationalFunction& a, const RationalFunction& b);
   friend RationalFunction operator-(const RationalFunction& a, const RationalFunction& b);
   friend RationalFunction operator*(const RationalFunction& a, const RationalFunction& b);
-  friend RationalFunction operator/(const RationalFunction& a, const RationalFunction& b);  ///< b != 0
+  friend RationalFunction operator/(const RationalFunction& a,
+                                    const RationalFunction& b);  ///< b != 0
   friend RationalFunction operator-(const RationalFunction& a);
   friend bool operator==(const RationalFunction& a, const RationalFunction& b);
 

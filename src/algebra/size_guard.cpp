@@ -11,9 +11,9 @@
 namespace sumwright::algebra {
 namespace {
 
-constexpr double kMaxBytes = 1.0e9;      // of one result
-constexpr double kMaxWork = 4.0e10;      // word products in one call
-constexpr double kMaxExponent = 1.0e6;   // of one variable
+constexpr double kMaxBytes = 1.0e9;     // of one result
+constexpr double kMaxWork = 4.0e10;     // word products in one call
+constexpr double kMaxExponent = 1.0e6;  // of one variable
 constexpr std::size_t kMaxTermsToFactor = 30000;
 
 double bits(const Polynomial& a) {
@@ -42,6 +42,12 @@ double degree_of(const Polynomial& a, std::size_t v) {
   return static_cast<double>(std::max(a.degree(v), 0L));
 }
 
+// Monomials of degree e in t letters: binomial(t + e - 1, e), by logarithms.
+double multisets(std::size_t letters, double e) {
+  const double t = std::max(static_cast<double>(letters), 1.0);
+  return std::exp(std::lgamma(t + e) - std::lgamma(e + 1) - std::lgamma(t));
+}
+
 }  // namespace
 
 void guard_product(const Polynomial& a, const Polynomial& b) {
@@ -62,10 +68,8 @@ void guard_product(const Polynomial& a, const Polynomial& b) {
 void guard_power(const Polynomial& base, unsigned long exponent) {
   const double e = static_cast<double>(exponent);
   const double t = static_cast<double>(base.terms());
-  // Monomials of degree e in t letters: binomial(t + e - 1, e), by logarithms.
-  const double choices = std::exp(std::lgamma(t + e) - std::lgamma(e + 1) - std::lgamma(t));
-  const double monomials =
-      std::min(choices, box(base, [&](std::size_t v) { return e * degree_of(base, v); }));
+  const double monomials = std::min(
+      multisets(base.terms(), e), box(base, [&](std::size_t v) { return e * degree_of(base, v); }));
   refuse_large(monomials, e * (bits(base) + std::log2(t + 1)));
 }
 
@@ -75,8 +79,8 @@ void guard_substitution(const Polynomial& a, std::size_t variable, const Polynom
     return (v == variable ? 0 : degree_of(a, v)) + d * degree_of(value, v);
   });
   const double growth = d * (bits(value) + std::log2(static_cast<double>(value.terms()) + 1));
-  const double choices = static_cast<double>(a.terms()) *
-  refuse_large(std::min(monomials, std::max(choices, 1.0)), bits(a) + growth);
+  const double choices = static_cast<double>(a.terms()) * multisets(value.terms(), d);
+  refuse_large(std::min(monomials, choices), bits(a) + growth);
 }
 
 void guard_factorisation(const Polynomial& a) {

@@ -55,8 +55,8 @@ struct Parameter {
   enum class Ring { rationals, integers };
   std::string name;
   Ring ring = Ring::rationals;
-  std::vector<Exclusion> excluded;     ///< rationals only
-  std::optional<mpz_class> at_least;   ///< integers only
+  std::vector<Exclusion> excluded;    ///< rationals only
+  std::optional<mpz_class> at_least;  ///< integers only
   Place place;
 };
 
@@ -73,9 +73,9 @@ struct Assumption {
 
 /// What the author brings as evidence (or, without `equals`, as the claim).
 struct Evidence {
-  std::vector<ExpressionPtr> recurrence;              ///< coefficients of S(n), S(n+1), ...
-  ExpressionPtr right_side;                           ///< null when not given: 0
-  std::map<std::string, ExpressionPtr> certificate;   ///< index name -> rational function
+  std::vector<ExpressionPtr> recurrence;             ///< coefficients of S(n), S(n+1), ...
+  ExpressionPtr right_side;                          ///< null when not given: 0
+  std::map<std::string, ExpressionPtr> certificate;  ///< index name -> rational function
   Place place;
 };
 
@@ -93,10 +93,10 @@ struct Claim {
   mpz_class from;
   std::vector<Assumption> assumptions;
   Sum sum;
-  ExpressionPtr closed;              ///< `equals.closed`; null when absent
-  std::optional<Sum> other_sum;      ///< `equals.summand` + `equals.over`
-  std::vector<Parameter> parameters; ///< in file order
-  Evidence evidence;                 ///< empty recurrence: none brought
+  ExpressionPtr closed;               ///< `equals.closed`; null when absent
+  std::optional<Sum> other_sum;       ///< `equals.summand` + `equals.over`
+  std::vector<Parameter> parameters;  ///< in file order
+  Evidence evidence;                  ///< empty recurrence: none brought
   Record record;
   std::shared_ptr<const Source> source;  ///< the file's text, for messages and exports
 

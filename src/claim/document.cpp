@@ -8,7 +8,8 @@
 #include <toml++/toml.h>
 
 #include <algorithm>
-#include <sstream>
+#include <string_view>
+#include <utility>
 
 #include "claim/text.hpp"
 
@@ -18,26 +19,61 @@ namespace {
 
 constexpr std::string_view kByteOrderMark = "\xEF\xBB\xBF";
 
-class Converter {
+// Finds bytes by line and character. A mark at every kStride-th character of a line keeps a
+// long line from being walked once for each value on it.
+class LineIndex {
  public:
-  explicit Converter(const Source& source) : source_(source) {
-    const std::string_view text = source.text;
-    lines_.push_back(text.starts_with(kByteOrderMark) ? kByteOrderMark.size() : 0);
-    for (std::size_t i = 0; i < text.size(); ++i) {
-      if (text[i] == '\n') lines_.push_back(i + 1);
+  explicit LineIndex(std::string_view text) : text_(text) {
+    std::size_t at = text.starts_with(kByteOrderMark) ? kByteOrderMark.size() : 0;
+    start_line(at);
+    for (std::size_t character = 1; at < text.size(); ++character) {
+      const bool newline = text[at] == '\n';
+      at += decode(text, at).length;
+      if (newline) {
+        start_line(at);
+        character = 0;
+      } else if (character % kStride == 0) {
+        marks_.push_back(at);
+      }
     }
   }
 
   [[nodiscard]] std::size_t offset(toml::source_position position) const {
-    if (position.line == 0) return lines_[0];
-    if (position.line > lines_.size()) return source_.text.size();
-    std::size_t at = lines_[position.line - 1];
-    const std::string_view text = source_.text;
-    for (toml::source_index column = 1; column < position.column && at < text.size(); ++column) {
-      if (text[at] == '\n') break;
-      at += decode(text, at).length;
+    if (position.line == 0) return marks_[0];
+    if (position.line > lines_.size()) return text_.size();
+    const std::size_t first = lines_[position.line - 1];
+    const std::size_t behind =
+        position.line < lines_.size() ? lines_[position.line] : marks_.size();
+    const std::size_t skip = position.column > 0 ? position.column - 1 : 0;
+    const std::size_t mark = std::min(first + skip / kStride, behind - 1);
+    std::size_t at = marks_[mark];
+    for (std::size_t left = skip - (mark - first) * kStride; left > 0 && at < text_.size();
+         --left) {
+      if (text_[at] == '\n') break;
+      at += decode(text_, at).length;
     }
     return at;
+  }
+
+ private:
+  static constexpr std::size_t kStride = 256;
+
+  void start_line(std::size_t at) {
+    lines_.push_back(marks_.size());
+    marks_.push_back(at);
+  }
+
+  std::string_view text_;
+  std::vector<std::size_t> lines_;  // index of the line's first mark
+  std::vector<std::size_t> marks_;  // offset of every kStride-th character of a line
+};
+
+class Converter {
+ public:
+  explicit Converter(const Source& source) : source_(source), lines_(source.text) {}
+
+  [[nodiscard]] std::size_t offset(toml::source_position position) const {
+    return lines_.offset(position);
   }
 
   [[nodiscard]] Place place(const toml::source_region& region) const {
@@ -95,7 +131,7 @@ class Converter {
   }
 
   const Source& source_;
-  std::vector<std::size_t> lines_;
+  LineIndex lines_;
 };
 
 }  // namespace

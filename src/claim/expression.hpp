@@ -29,7 +29,7 @@ enum class Operation {
   multiply,  ///< u * v
   divide,    ///< u / v
   power,     ///< u ^ v
-  call       ///< `name`(children...): binomial, factorial, rising, falling; floor, min, max in bounds
+  call  ///< `name`(children...): binomial, factorial, rising, falling; floor, min, max in bounds
 };
 
 struct Expression;

@@ -36,8 +36,8 @@ class Level {
 
 class Parser {
  public:
-  Parser(const Source& source, const MappedText& text, const Symbols& symbols,
-         const Limits& limits, std::vector<Remark>* remarks)
+  Parser(const Source& source, const MappedText& text, const Symbols& symbols, const Limits& limits,
+         std::vector<Remark>* remarks)
       : source_(source),
         text_(text),
         symbols_(symbols),
@@ -229,9 +229,8 @@ class Parser {
     const std::string inner = as_written(operand.place);
     const std::string number = base.value.get_str();
     remarks_->push_back(
-        {join(sign.place, outer),
-         fmt::format("-{} is -({}); for a power of -{} write (-{})^...", inner, inner, number,
-                     number)});
+        {join(sign.place, outer), fmt::format("-{} is -({}); for a power of -{} write (-{})^...",
+                                              inner, inner, number, number)});
   }
 
   [[nodiscard]] std::string as_written(Place place) const {
@@ -265,7 +264,7 @@ class Parser {
       case Kind::close:
         refuse("an operand is expected before this bracket");
       default:
-        refuse(fmt::format("an operand is expected, not {}", quoted(current_.text)));
+        refuse(fmt::format("an operand is expected, not {}", in_quotes(current_.text)));
     }
   }
 
@@ -305,15 +304,16 @@ class Parser {
     advance();
     if (const Function* function = find_function(token.text)) return call(token, *function);
     if (current_.kind == Kind::open) refuse_call(token);
-    const auto& allowed = symbols_.allowed;
-    if (std::find(allowed.begin(), allowed.end(), token.text) == allowed.end()) {
-      refuse_symbol(token);
-    }
+    if (!is_allowed(token.text)) refuse_symbol(token);
     Expression node;
     node.operation = Operation::symbol;
     node.name = std::string(token.text);
     node.sign = token.place;
     return make(std::move(node), {}, token.place);
+  }
+
+  [[nodiscard]] bool is_allowed(std::string_view name) const {
+    return std::binary_search(symbols_.allowed.begin(), symbols_.allowed.end(), name);
   }
 
   [[noreturn]] void refuse_symbol(const Token& token) const {
@@ -324,23 +324,23 @@ class Parser {
     }
     if (const auto found = symbols_.elsewhere.find(name); found != symbols_.elsewhere.end()) {
       throw InputError(source_, token.place,
-                       fmt::format("{} may not stand here: {}", quoted(name), found->second));
+                       fmt::format("{} may not stand here: {}", in_quotes(name), found->second));
     }
     std::string note = suggestion(name, symbols_.allowed);
     if (note.empty()) note = suggestion(name, function_names());
     if (note.empty()) note = "every symbol is an index, the running variable or a parameter";
-    throw InputError(source_, token.place, fmt::format("{} is not declared", quoted(name)), note);
+    throw InputError(source_, token.place, fmt::format("{} is not declared", in_quotes(name)),
+                     note);
   }
 
   [[noreturn]] void refuse_call(const Token& token) const {
     const std::string name(token.text);
     std::string note = suggestion(name, function_names());
-    const auto& allowed = symbols_.allowed;
-    if (std::find(allowed.begin(), allowed.end(), name) != allowed.end()) {
+    if (is_allowed(name)) {
       note = fmt::format("there are no implicit products; write {}*(...)", printable(name));
     }
     if (note.empty()) note = "the functions are " + alternatives(function_names());
-    throw InputError(source_, token.place, fmt::format("{} is not a function", quoted(name)),
+    throw InputError(source_, token.place, fmt::format("{} is not a function", in_quotes(name)),
                      note);
   }
 
@@ -354,7 +354,7 @@ class Parser {
     if (current_.kind != Kind::open) {
       throw InputError(source_, token.place,
                        fmt::format("{} is a function and needs its arguments in brackets",
-                                   quoted(function.name)),
+                                   in_quotes(function.name)),
                        "write " + function.usage);
     }
     const Token open = current_;
@@ -380,7 +380,7 @@ class Parser {
     if (count >= function.least_arguments && count <= function.most_arguments) return;
     const bool several = function.most_arguments > function.least_arguments;
     throw InputError(source_, place,
-                     fmt::format("{} takes {}{} argument{}, not {}", quoted(function.name),
+                     fmt::format("{} takes {}{} argument{}, not {}", in_quotes(function.name),
                                  several ? "at least " : "", function.least_arguments,
                                  function.least_arguments == 1 ? "" : "s", count),
                      "write " + function.usage);
@@ -431,6 +431,7 @@ ExpressionPtr parse_expression(const Source& source, Place where,
                                const std::vector<std::string>& symbols, const Limits& limits) {
   Symbols allowed;
   allowed.allowed = symbols;
+  std::sort(allowed.allowed.begin(), allowed.allowed.end());
   return parse_mapped(source, plain_text(source, where), allowed, limits);
 }
 

@@ -37,7 +37,7 @@ struct Function {
 
 /// The names that may stand as symbols in one expression, and why others may not.
 struct Symbols {
-  std::vector<std::string> allowed;
+  std::vector<std::string> allowed;              ///< sorted
   std::map<std::string, std::string> elsewhere;  ///< declared, but not here: name -> reason
 };
 

@@ -54,20 +54,19 @@ constexpr std::array<Habit, 15> kHabits = {{
     {"{", "use round brackets"},
     {"}", "use round brackets"},
     {"_", "a name starts with a letter"},
-    {"\xE2\x88\x92", "write the ASCII sign -"},      // U+2212 minus sign
-    {"\xE2\x80\x93", "write the ASCII sign -"},      // U+2013 en dash
-    {"\xC2\xB7", "write * for a product"},           // U+00B7 middle dot
-    {"\xC3\x97", "write * for a product"},           // U+00D7 multiplication sign
-    {"\xE2\x8B\x85", "write * for a product"},       // U+22C5 dot operator
-    {"\xE2\x89\xA4", "write <="},                    // U+2264
-    {"\xE2\x89\xA5", "write >="},                    // U+2265
+    {"\xE2\x88\x92", "write the ASCII sign -"},  // U+2212 minus sign
+    {"\xE2\x80\x93", "write the ASCII sign -"},  // U+2013 en dash
+    {"\xC2\xB7", "write * for a product"},       // U+00B7 middle dot
+    {"\xC3\x97", "write * for a product"},       // U+00D7 multiplication sign
+    {"\xE2\x8B\x85", "write * for a product"},   // U+22C5 dot operator
+    {"\xE2\x89\xA4", "write <="},                // U+2264
+    {"\xE2\x89\xA5", "write >="},                // U+2265
 }};
 
 }  // namespace
 
 Token Lexer::token(Token::Kind kind, std::size_t length) {
-  Token out{kind, std::string_view(text_.text).substr(at_, length),
-            text_.span(at_, at_ + length)};
+  Token out{kind, std::string_view(text_.text).substr(at_, length), text_.span(at_, at_ + length)};
   at_ += length;
   return out;
 }
@@ -113,9 +112,9 @@ void Lexer::refuse_character() const {
   for (const Habit& habit : kHabits) {
     if (rest.starts_with(habit.text)) advice = habit.advice;
   }
-  throw InputError(source_, text_.span(at_, at_ + character.length),
-                   fmt::format("unexpected character {}", quoted(rest.substr(0, character.length))),
-                   advice);
+  throw InputError(
+      source_, text_.span(at_, at_ + character.length),
+      fmt::format("unexpected character {}", in_quotes(rest.substr(0, character.length))), advice);
 }
 
 }  // namespace sumwright::claim

@@ -20,7 +20,9 @@ struct Limits {
   std::size_t tree_depth = 4000;      ///< depth of the tree: long sums lean to the left
   std::size_t power_bits = 100000;    ///< estimated size of an expression once powers are expanded
   long magnitude = 1000000;           ///< of `from`, `at_least`, and integers in affine forms
-  std::size_t entries = 1000;         ///< entries of one array or table
+  std::size_t entries = 1000;         ///< entries of one array
+  std::size_t parameters = 100;
+  std::size_t ranges = 16;  ///< of one sum
 };
 
 /// A claim and the warnings met on the way (already rendered, for stderr).
@@ -32,10 +34,12 @@ struct ReadClaim {
 /// Reads and checks a claim file: TOML, keys, symbols, shapes of bounds and assumptions.
 /// Whether the summand is hypergeometric is decided later, by `term`.
 /// Throws InputError.
-[[nodiscard]] ReadClaim read_claim_file(const std::filesystem::path& path, const Limits& limits = {});
+[[nodiscard]] ReadClaim read_claim_file(const std::filesystem::path& path,
+                                        const Limits& limits = {});
 
 /// The same from a text already in memory; `name` is used in messages.
-[[nodiscard]] ReadClaim read_claim_text(std::string name, std::string text, const Limits& limits = {});
+[[nodiscard]] ReadClaim read_claim_text(std::string name, std::string text,
+                                        const Limits& limits = {});
 
 /// Parses one expression that stands at `base` offset of `source` as plain text
 /// (no TOML escapes), with the given names allowed as symbols. Used by the reader of

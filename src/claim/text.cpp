@@ -89,8 +89,8 @@ std::optional<std::size_t> first_invalid_utf8(std::string_view text) {
 bool is_unprintable(char32_t code) {
   return code < 0x20 || (code >= 0x7F && code <= 0x9F) || code == 0xAD || code == 0x61C ||
          (code >= 0x200B && code <= 0x200F) || (code >= 0x2028 && code <= 0x202E) ||
-         (code >= 0x2060 && code <= 0x206F) || code == 0xFEFF || (code >= 0xFFF9 && code <= 0xFFFB) ||
-         (code >= 0xE0000 && code <= 0xE007F);
+         (code >= 0x2060 && code <= 0x206F) || code == 0xFEFF ||
+         (code >= 0xFFF9 && code <= 0xFFFB) || (code >= 0xE0000 && code <= 0xE007F);
 }
 
 std::string printable(std::string_view text) {
@@ -103,7 +103,7 @@ std::string printable(std::string_view text) {
   return out;
 }
 
-std::string quoted(std::string_view text) {
+std::string in_quotes(std::string_view text) {
   std::string out = "'";
   for (std::size_t offset = 0; offset < text.size();) {
     if (out.size() > kQuotedBytes) {
@@ -136,14 +136,14 @@ std::optional<std::string> nearest(std::string_view word,
 
 std::string suggestion(std::string_view word, const std::vector<std::string>& candidates) {
   const auto found = nearest(word, candidates);
-  return found ? fmt::format("did you mean {}?", quoted(*found)) : std::string();
+  return found ? fmt::format("did you mean {}?", in_quotes(*found)) : std::string();
 }
 
 std::string alternatives(const std::vector<std::string>& names) {
   std::string out;
   for (std::size_t i = 0; i < names.size(); ++i) {
     if (i > 0) out += i + 1 == names.size() ? " or " : ", ";
-    out += quoted(names[i]);
+    out += in_quotes(names[i]);
   }
   return out;
 }

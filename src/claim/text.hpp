@@ -32,7 +32,7 @@ struct Character {
 [[nodiscard]] std::string printable(std::string_view text);
 
 /// `text` in single quotes, printable, and cut to a length that suits a message.
-[[nodiscard]] std::string quoted(std::string_view text);
+[[nodiscard]] std::string in_quotes(std::string_view text);
 
 /// The candidate nearest to `word` by edit distance (insert, delete, replace, swap
 /// neighbours), if it is near enough to be worth suggesting. The first of equals wins.

@@ -117,7 +117,8 @@ class StringReader {
     char32_t code = 0;
     for (const char digit : hex) {
       constexpr std::string_view values = "0123456789abcdef";
-      const char lower = digit >= 'A' && digit <= 'F' ? static_cast<char>(digit - 'A' + 'a') : digit;
+      const char lower =
+          digit >= 'A' && digit <= 'F' ? static_cast<char>(digit - 'A' + 'a') : digit;
       const std::size_t value = values.find(lower);
       if (value == std::string_view::npos) return false;
       code = code * 16 + static_cast<char32_t>(value);

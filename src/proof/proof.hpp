@@ -100,14 +100,19 @@ struct Conversion {
 
 // ---------------------------------------------------------------- similarity: instances of a base
 
-/// One atom rewritten: from = factor * to. `steps` applications of its law.
+/// One atom rewritten: from = factor * to, by `steps` applications of its law. A `literal` step has no
+/// `to`: the atom has a value that needs no law beyond its definition (arguments without symbols, an
+/// interval product of literal length), and from = factor.
+/// Steps are in an order in which a rewritten atom never meets a later step's `from`.
 struct AtomStep {
   enum class Side { left, right };
   Side side = Side::left;
   Atom from;
   Atom to;
   unsigned steps = 0;  ///< 0: the two differ only in the way the argument is written
-  Factored factor;     ///< a product of the linear factors of the law, in order of the law
+  unsigned multiplicity = 1;  ///< how many of the copies of `from` are rewritten by this step
+  bool literal = false;
+  Factored factor;     ///< product of the linear factors of the law; constant may be a fraction
   std::vector<std::string> conditions;
   std::optional<Nonzero> nonzero;  ///< for laws that need a nonzero base or factor
 };

@@ -182,14 +182,9 @@ Proof.
   assert (E : ip a i j =
     (rising_terms (a + inj i) d1 * falling_terms (a + inj j - 1) d2 * ip (a + inj du) i' j')%K).
   { rewrite ip_translate, I, J.
-    rewrite (ip_split a i (j - Z.of_nat d2) j) by lia.
-    replace j with (j - Z.of_nat d2 + Z.of_nat d2) at 2 by lia.
-    rewrite (ip_split_length a (j - Z.of_nat d2)).
+    rewrite (ip_split a i (j - Z.of_nat d2) j), (ip_low d2 a j j), (ip_empty a j j) by lia.
     rewrite (ip_split a i (i + Z.of_nat d1) (j - Z.of_nat d2)) by lia.
-    rewrite (ip_up d1 a i i), (ip_empty a i i) by lia.
-    rewrite (ip_empty a (j - Z.of_nat d2) (j - Z.of_nat d2)) by lia.
-    replace (j - Z.of_nat d2 + Z.of_nat d2) with j by lia.
-    rewrite (ip_low d2 a j j), (ip_empty a j j) by lia. ring. }
+    rewrite (ip_up d1 a i i), (ip_empty a i i) by lia. ring. }
   pose proof (ip_neq0 a i j N) as Z. rewrite E in Z. rewrite E.
   symmetry. field. repeat split; intros W; apply Z; rewrite W; ring.
 Qed.

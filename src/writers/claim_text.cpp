@@ -1,0 +1,107 @@
+// From the claim as read to its plain-text statement. Expressions stay as the author wrote them.
+#include "writers/claim_text.hpp"
+
+#include <fmt/format.h>
+
+namespace sumwright::writers {
+
+std::string bound_text(const claim::Bound& bound) {
+  switch (bound.kind) {
+    case claim::Bound::Kind::minus_infinity:
+      return "-inf";
+    case claim::Bound::Kind::plus_infinity:
+      return "inf";
+    case claim::Bound::Kind::finite:
+      break;
+  }
+  return to_text(*bound.value);
+}
+
+std::string sum_text(const claim::Sum& sum) {
+  std::string out = to_text(*sum.summand);
+  for (std::size_t i = sum.over.size(); i-- > 0;) {
+    const claim::Range& range = sum.over[i];
+    out = fmt::format("sum({} = {}..{}, {})", range.index, bound_text(range.low),
+                      bound_text(range.high), out);
+  }
+  return out;
+}
+
+std::string comparison_text(claim::Comparison comparison) {
+  switch (comparison) {
+    case claim::Comparison::less_equal:
+      return "<=";
+    case claim::Comparison::less:
+      return "<";
+    case claim::Comparison::greater_equal:
+      return ">=";
+    case claim::Comparison::greater:
+      return ">";
+    case claim::Comparison::not_equal:
+      break;
+  }
+  return "!=";
+}
+
+std::string exclusion_text(const std::string& name, const claim::Exclusion& exclusion) {
+  switch (exclusion.kind) {
+    case claim::Exclusion::Kind::constant:
+      return name + " != " + to_text(*exclusion.written);
+    case claim::Exclusion::Kind::integers:
+      return name + " is not an integer";
+    case claim::Exclusion::Kind::positive_integers:
+      return name + " is not a positive integer";
+    case claim::Exclusion::Kind::negative_integers:
+      return name + " is not a negative integer";
+    case claim::Exclusion::Kind::nonnegative_integers:
+      return name + " is not a nonnegative integer";
+    case claim::Exclusion::Kind::nonpositive_integers:
+      break;
+  }
+  return name + " is not a nonpositive integer";
+}
+
+std::vector<std::string> hypothesis_texts(const claim::Claim& claim) {
+  std::vector<std::string> out;
+  for (const claim::Parameter& parameter : claim.parameters) {
+    for (const claim::Exclusion& exclusion : parameter.excluded) {
+      out.push_back(exclusion_text(parameter.name, exclusion));
+    }
+  }
+  for (const claim::Parameter& parameter : claim.parameters) {
+    if (parameter.at_least) {
+      out.push_back(parameter.name + " >= " + parameter.at_least->get_str());
+    }
+  }
+  for (const claim::Assumption& assumption : claim.assumptions) {
+    out.push_back(fmt::format("{} {} {}", to_text(*assumption.left),
+                              comparison_text(assumption.comparison), to_text(*assumption.right)));
+  }
+  out.push_back(claim.running + " >= " + claim.from.get_str());
+  return out;
+}
+
+std::string claim_kind(const claim::Claim& claim) {
+  if (claim.is_equality()) return "equality";
+  return claim.is_question() ? "question" : "recurrence";
+}
+
+std::string statement_text(const proof::Proof& proof) {
+  const claim::Claim& claim = *proof.claim;
+  const std::string sum = sum_text(claim.sum);
+  const std::string every =
+      fmt::format("for every integer {} >= {}", claim.running, claim.from.get_str());
+  if (claim.closed) return fmt::format("{} = {} {}", sum, to_text(*claim.closed), every);
+  if (claim.other_sum) return fmt::format("{} = {} {}", sum, sum_text(*claim.other_sum), every);
+  std::string left;
+  for (std::size_t i = 0; i < proof.recurrence_text.size(); ++i) {
+    left += fmt::format("{}({})*S({}{})", i == 0 ? "" : " + ", proof.recurrence_text[i],
+                        claim.running, i == 0 ? "" : fmt::format(" + {}", i));
+  }
+  if (left.empty()) return fmt::format("a recurrence for S({}) = {} {}", claim.running, sum, every);
+  return fmt::format("{} = {} {}, where S({}) = {}", left,
+                     proof.right_side_text.empty() ? "0" : proof.right_side_text, every,
+                     claim.running, sum);
+}
+
+}  // namespace sumwright::writers

@@ -1,0 +1,32 @@
+// The claim itself in words and plain text, for obligations.txt and record.json.
+#pragma once
+
+#include <string>
+#include <vector>
+
+#include "proof/proof.hpp"
+
+namespace sumwright::writers {
+
+/// `sum(k = 0..n, binomial(n, k)^2)`; nested when there are several indices.
+[[nodiscard]] std::string sum_text(const claim::Sum& sum);
+
+/// `0`, `floor(n/2)`, `-inf`, `inf`.
+[[nodiscard]] std::string bound_text(const claim::Bound& bound);
+
+/// `<=`, `<`, `>=`, `>`, `!=`.
+[[nodiscard]] std::string comparison_text(claim::Comparison comparison);
+
+/// What one exclusion says of the parameter: `x != -1/2`, `x is not a negative integer`.
+[[nodiscard]] std::string exclusion_text(const std::string& name, const claim::Exclusion& exclusion);
+
+/// The hypotheses of the theorem, in its order: exclusions, lower bounds, assumptions, `n >= from`.
+[[nodiscard]] std::vector<std::string> hypothesis_texts(const claim::Claim& claim);
+
+/// The statement that was to be proved, in one sentence.
+[[nodiscard]] std::string statement_text(const proof::Proof& proof);
+
+/// The kind of claim: `equality`, `recurrence`, `question`.
+[[nodiscard]] std::string claim_kind(const claim::Claim& claim);
+
+}  // namespace sumwright::writers

@@ -1,0 +1,224 @@
+// The argument's sections of obligations.txt: term, base term, equality, ranges, balances, values.
+//
+// Each value of the Proof becomes one entry; keys are numbered by position, shifts from 0.
+#include <fmt/format.h>
+
+#include "writers/obligations_sections.hpp"
+
+namespace sumwright::writers {
+
+namespace {
+
+[[nodiscard]] std::string region_text(const proof::Region& region) {
+  return region.text.empty() ? "everywhere" : region.text;
+}
+
+// `shown`: the left side as printed before, which need not be repeated.
+void write_instance(ObligationsDocument& out, const TextPrinter& print, const std::string& key,
+                    const proof::Instance& instance, const std::string& shown = {}) {
+  out.statement(key + " on", region_text(instance.region));
+  const std::string left = print.product(instance.left);
+  if (left != shown) out.definition(key + " left", left);
+  out.definition(key + " right", print.product(instance.right));
+  std::size_t count = 0;
+  for (const proof::Unit& unit : instance.left_units) {
+    out.statement(fmt::format("{} left unit {}", key, ++count), print.unit(unit));
+  }
+  count = 0;
+  for (const proof::Unit& unit : instance.right_units) {
+    out.statement(fmt::format("{} right unit {}", key, ++count), print.unit(unit));
+  }
+  count = 0;
+  for (const proof::AtomStep& step : instance.steps) {
+    const bool left = step.side == proof::AtomStep::Side::left;
+    out.statement(fmt::format("{} step {}", key, ++count),
+                  fmt::format("{}: {}", left ? "left" : "right", print.step(step)));
+  }
+  if (instance.cancelled) write_nonzero(out, print, key + " cancelled", *instance.cancelled);
+}
+
+[[nodiscard]] std::string vanishing_text(const TextPrinter& print,
+                                         const proof::Vanishing& vanishing) {
+  std::string out;
+  for (const proof::Atom& atom : vanishing.atoms) {
+    out += (out.empty() ? "" : ", ") + print.atom(atom) + " = 0";
+  }
+  return out + " [" + vanishing.condition + "]";
+}
+
+void write_zero_range(ObligationsDocument& out, const TextPrinter& print, const std::string& key,
+                      const std::optional<proof::Vanishing>& vanishing) {
+  if (vanishing) out.statement(key, vanishing_text(print, *vanishing));
+}
+
+void write_group(ObligationsDocument& out, const TextPrinter& print, const std::string& key,
+                 const proof::BalanceGroup& group) {
+  out.definition(key + " base", print.product(group.base.product));
+  for (std::size_t m = 0; m < group.members.size() && m < group.polynomials.size(); ++m) {
+    out.statement(fmt::format("{} member {}", key, m + 1),
+                  fmt::format("term {}", group.members[m] + 1));
+    out.definition(fmt::format("{} share {}", key, m + 1), print.factored(group.polynomials[m]));
+  }
+}
+
+}  // namespace
+
+void write_nonzero(ObligationsDocument& out, const TextPrinter& print, const std::string& key,
+                   const proof::Nonzero& nonzero) {
+  out.definition(key, print.factored(nonzero.polynomial));
+  for (std::size_t i = 0; i < nonzero.factors.size(); ++i) {
+    out.statement(fmt::format("{} factor {}", key, i + 1),
+                  print.nonzero_factor(nonzero.factors[i]));
+  }
+  if (!nonzero.condition.empty()) out.statement(key + " condition", nonzero.condition);
+}
+
+void write_conversion(ObligationsDocument& out, const TextPrinter& print,
+                      const proof::Conversion& conversion) {
+  out.definition("written", to_text(*conversion.expression));
+  for (std::size_t j = 0; j < conversion.products.size(); ++j) {
+    out.definition(fmt::format("product {}", j + 1), print.product(conversion.products[j]));
+  }
+  out.statement("on", region_text(conversion.region));
+  out.blank();
+  for (std::size_t j = 0; j < conversion.leaves.size(); ++j) {
+    const proof::Leaf& leaf = conversion.leaves[j];
+    const std::string key = fmt::format("rule {}", j + 1);
+    out.statement(key, word(leaf.rule));
+    out.statement(key + " gives", fmt::format("{} = {}{}", to_text(*leaf.expression),
+                                              print.product(leaf.value),
+                                              bracketed_ids(leaf.conditions)));
+  }
+  for (std::size_t j = 0; j < conversion.denominators.size(); ++j) {
+    const proof::Denominator& denominator = conversion.denominators[j];
+    const std::string key = fmt::format("denominator {}", j + 1);
+    out.statement(key, fmt::format("{} = {}, its reciprocal {}{}",
+                                   to_text(*denominator.expression),
+                                   print.product(denominator.as_product),
+                                   print.product(denominator.reciprocal),
+                                   bracketed_ids(denominator.conditions)));
+    for (std::size_t u = 0; u < denominator.units.size(); ++u) {
+      out.statement(fmt::format("{} unit {}", key, u + 1), print.unit(denominator.units[u]));
+    }
+  }
+  for (std::size_t j = 0; j < conversion.units.size(); ++j) {
+    for (std::size_t u = 0; u < conversion.units[j].size(); ++u) {
+      out.statement(fmt::format("product {} cancelled {}", j + 1, u + 1),
+                    print.unit(conversion.units[j][u]));
+    }
+  }
+  out.statement("defined by", id_list(conversion.definedness));
+}
+
+void write_base(ObligationsDocument& out, const TextPrinter& print,
+                const proof::Telescoping& telescoping) {
+  out.heading("base term");
+  out.remark("With i the shift and k the index: F(n + i, k) = p_i * B, G(n, k) = down * c * B, "
+             "G(n, k + 1) = up * c(k + 1) * B.");
+  out.blank();
+  out.definition("B", print.product(telescoping.base.product));
+  out.statement("region", region_text(telescoping.region));
+  out.definition("low", print.affine(telescoping.low));
+  out.definition("high", print.affine(telescoping.high));
+  out.statement("conditions", id_list(telescoping.conditions));
+  out.blank();
+  write_nonzero(out, print, "weight", telescoping.weight);
+  for (std::size_t i = 0; i < telescoping.coefficients.size(); ++i) {
+    out.definition(fmt::format("a_{}", i), print.factored(telescoping.coefficients[i]));
+  }
+  for (std::size_t i = 0; i < telescoping.p.size(); ++i) {
+    out.definition(fmt::format("p_{}", i), print.factored(telescoping.p[i]));
+  }
+  out.definition("c", print.polynomial(telescoping.certificate));
+  out.definition("down", print.factored(telescoping.down));
+  out.definition("up", print.factored(telescoping.up));
+  for (std::size_t i = 0; i < telescoping.shifts.size(); ++i) {
+    for (std::size_t j = 0; j < telescoping.shifts[i].size(); ++j) {
+      out.blank();
+      write_instance(out, print, fmt::format("shift {} {}", i, j + 1), telescoping.shifts[i][j]);
+    }
+  }
+  if (telescoping.index_shift) {
+    out.blank();
+    write_instance(out, print, "index shift", *telescoping.index_shift);
+  }
+}
+
+void write_equality(ObligationsDocument& out, const TextPrinter& print, const proof::Proof& proof) {
+  const proof::Telescoping& telescoping = *proof.telescoping;
+  std::string left;
+  for (std::size_t i = 0; i < telescoping.p.size(); ++i) {
+    left += fmt::format("{}a_{}*p_{}", i == 0 ? "" : " + ", i, i);
+  }
+  out.heading("equality");
+  out.remark("Of polynomials, for all values of the symbols. The normal form is that of the left "
+             "side: primitive over the integers, leading coefficient positive, terms in descending "
+             "lexicographic order, the symbols in the order of their list; left side = scale * "
+             "normal form.");
+  out.blank();
+  out.definition("left", "weight*(" + left + ")");
+  out.definition("right", "up*c(k + 1) - down*c(k)");
+  const Size size = size_of(telescoping.normal_form);
+  out.statement("terms", std::to_string(size.terms));
+  out.statement("degree", std::to_string(size.degree));
+  std::size_t count = 0;
+  for (std::size_t i = 0; i < proof.symbols.size(); ++i) {
+    if (proof.symbols[i].name.empty()) continue;
+    out.statement(fmt::format("degree in symbol {}", ++count),
+                  std::to_string(degree_in(telescoping.normal_form, i)));
+  }
+  out.statement("bits", std::to_string(size.bits));
+  out.definition("scale", telescoping.normal_scale.get_str());
+  out.definition("normal form", print.polynomial(telescoping.normal_form));
+}
+
+void write_ranges(ObligationsDocument& out, const TextPrinter& print, const proof::Proof& proof) {
+  out.heading("ranges");
+  out.remark("The author's sum at n + i is the sum of F(n + i, k) over low..high, plus the given "
+             "numbers of terms just below low and just above high.");
+  out.blank();
+  for (const proof::RangeStep& step : proof.ranges) {
+    const std::string key = fmt::format("range {}", step.shift);
+    out.statement(key, fmt::format("{} below, {} above", step.low_points, step.high_points));
+    write_zero_range(out, print, key + " zero below", step.below);
+    write_zero_range(out, print, key + " zero above", step.above);
+  }
+}
+
+void write_balance(ObligationsDocument& out, const TextPrinter& print, const std::string& prefix,
+                   const proof::Balance& balance) {
+  out.statement(prefix + "terms add up to 0", region_text(balance.region));
+  for (std::size_t t = 0; t < balance.terms.size(); ++t) {
+    const proof::BalanceTerm& term = balance.terms[t];
+    const std::string key = fmt::format("{}term {}", prefix, t + 1);
+    out.statement(key, term.text);
+    const std::string value = print.product(term.product);
+    out.definition(key + " value", value);
+    if (term.zero) {
+      const std::string by = term.zero_atom ? print.atom(*term.zero_atom) + " = 0, " : "";
+      out.statement(key + " vanishes", by + *term.zero);
+    }
+    if (term.instance) write_instance(out, print, key, *term.instance, value);
+  }
+  for (std::size_t g = 0; g < balance.groups.size(); ++g) {
+    write_group(out, print, fmt::format("{}class {}", prefix, g + 1), balance.groups[g]);
+  }
+}
+
+void write_initial_values(ObligationsDocument& out, const TextPrinter& print,
+                          const proof::Proof& proof) {
+  out.heading("initial values");
+  for (std::size_t v = 0; v < proof.initial.size(); ++v) {
+    const proof::InitialValue& initial = proof.initial[v];
+    const std::string key = fmt::format("value {}", v + 1);
+    if (v > 0) out.blank();
+    out.statement(key, fmt::format("at {} = {}, index {}..{}", proof.symbols[0].name, initial.at,
+                                   initial.low, initial.high));
+    if (initial.value) out.definition(key + " both", initial.value->get_str());
+    write_zero_range(out, print, key + " zero below", initial.below);
+    write_zero_range(out, print, key + " zero above", initial.above);
+    write_balance(out, print, key + " ", initial.balance);
+  }
+}
+
+}  // namespace sumwright::writers
