@@ -18,7 +18,7 @@ mpq_class rational_power(const mpq_class& base, long exponent) {
   const auto e = static_cast<unsigned long>(exponent < 0 ? -exponent : exponent);
   const double bits = static_cast<double>(mpz_sizeinbase(base.get_num_mpz_t(), 2) +
                                           mpz_sizeinbase(base.get_den_mpz_t(), 2));
-  if (base != 1 && base != -1 && bits * static_cast<double>(e) > 1.0e9) {
+  if (base != 1 && base != -1 && bits * static_cast<double>(e) > 1.0e8) {
     throw TimeUp("size limit reached: power of a constant");
   }
   if (base == 1 || base == -1) return e % 2 == 0 ? mpq_class(1) : base;
@@ -27,6 +27,15 @@ mpq_class rational_power(const mpq_class& base, long exponent) {
   mpz_pow_ui(out.get_den_mpz_t(), base.get_den_mpz_t(), e);
   if (exponent < 0) out = 1 / out;
   return out;
+}
+
+// Exponents stay far below overflow, so that sums and products of two of them are safe.
+long checked(long exponent) {
+  constexpr long kMaxExponent = 1L << 30;
+  if (exponent > kMaxExponent || exponent < -kMaxExponent) {
+    throw TimeUp("size limit reached: exponent of a factor");
+  }
+  return exponent;
 }
 
 // Inserts a canonical factor (primitive, leading coefficient > 0, not constant).
@@ -39,7 +48,7 @@ void insert(Factored& into, const Polynomial& base, long exponent) {
     list.insert(at, {base, exponent});
     return;
   }
-  at->second += exponent;
+  at->second = checked(at->second + exponent);
   if (at->second == 0) list.erase(at);
 }
 
@@ -69,7 +78,7 @@ class FactorList {
 }  // namespace
 
 void Factored::multiply(const Polynomial& base, long exponent) {
-  if (exponent == 0 || is_zero()) return;
+  if (checked(exponent) == 0 || is_zero()) return;
   if (base.is_zero()) throw std::domain_error("factor 0 of a factored value");
   const Polynomial primitive = base.primitive_part();
   mpq_class unit = base.content();
@@ -79,7 +88,7 @@ void Factored::multiply(const Polynomial& base, long exponent) {
 }
 
 void Factored::multiply(const Factored& other, long exponent) {
-  if (exponent == 0) return;
+  if (checked(exponent) == 0) return;
   constant *= rational_power(other.constant, exponent);
   if (is_zero()) {
     factors.clear();
@@ -87,7 +96,7 @@ void Factored::multiply(const Factored& other, long exponent) {
   }
   // A copy first: `other` may be this value.
   const auto list = other.factors;
-  for (const auto& [base, e] : list) insert(*this, base, e * exponent);
+  for (const auto& [base, e] : list) insert(*this, base, checked(e * exponent));
 }
 
 Factored Factored::inverse() const {

@@ -200,8 +200,7 @@ Polynomial gcd(const Polynomial& a, const Polynomial& b) {
     if (b.is_zero()) return a.primitive_part();
     return Polynomial(a.ring(), 1);
   }
-  guard_factorisation(a);
-  guard_factorisation(b);
+  guard_gcd(a, b);
   Polynomial out(a.ring());
   if (!fmpz_mpoly_gcd(out.raw(), a.raw(), b.raw(), a.ring()->context())) {
     throw std::runtime_error("greatest common divisor failed");

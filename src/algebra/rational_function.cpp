@@ -11,8 +11,7 @@ namespace {
 
 // Divides both by their greatest common divisor over Z, contents included.
 void cancel(Polynomial& a, Polynomial& b) {
-  guard_factorisation(a);
-  guard_factorisation(b);
+  guard_gcd(a, b);
   const auto* context = a.ring()->context();
   Polynomial common(a.ring());
   Polynomial u(a.ring());
@@ -42,6 +41,22 @@ RationalFunction::RationalFunction(const RingPtr& ring, const Factored& value)
   reduce();
 }
 
+RationalFunction RationalFunction::from_coprime(const Polynomial& numerator,
+                                                const Polynomial& denominator) {
+  if (denominator.is_zero()) throw std::domain_error("denominator 0");
+  if (numerator.is_zero()) return RationalFunction(numerator);
+  RationalFunction out(numerator);
+  out.denominator_ = denominator;
+  out.make_denominator_positive();
+  return out;
+}
+
+void RationalFunction::make_denominator_positive() {
+  if (denominator_.leading_coefficient() > 0) return;
+  numerator_ = -std::move(numerator_);
+  denominator_ = -std::move(denominator_);
+}
+
 void RationalFunction::reduce() {
   if (denominator_.is_zero()) throw std::domain_error("denominator 0");
   if (numerator_.is_zero()) {
@@ -49,10 +64,7 @@ void RationalFunction::reduce() {
     return;
   }
   if (!denominator_.is_one()) cancel(numerator_, denominator_);
-  if (denominator_.leading_coefficient() < 0) {
-    numerator_ = -std::move(numerator_);
-    denominator_ = -std::move(denominator_);
-  }
+  make_denominator_positive();
 }
 
 RationalFunction operator+(const RationalFunction& a, const RationalFunction& b) {

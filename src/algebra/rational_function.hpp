@@ -17,6 +17,11 @@ class RationalFunction {
   explicit RationalFunction(const RingPtr& ring, const mpq_class& value);
   explicit RationalFunction(const RingPtr& ring, const Factored& value);
 
+  /// The fraction of two polynomials known to be coprime over Z (contents too); not checked, except
+  /// that the sign is normalised.
+  [[nodiscard]] static RationalFunction from_coprime(const Polynomial& numerator,
+                                                     const Polynomial& denominator);
+
   [[nodiscard]] const Polynomial& numerator() const { return numerator_; }
   [[nodiscard]] const Polynomial& denominator() const { return denominator_; }
   [[nodiscard]] const RingPtr& ring() const { return numerator_.ring(); }
@@ -40,6 +45,7 @@ class RationalFunction {
 
  private:
   void reduce();
+  void make_denominator_positive();
   Polynomial numerator_;
   Polynomial denominator_;
 };

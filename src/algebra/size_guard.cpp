@@ -14,7 +14,8 @@ namespace {
 constexpr double kMaxBytes = 1.0e9;     // of one result
 constexpr double kMaxWork = 4.0e10;     // word products in one call
 constexpr double kMaxExponent = 1.0e6;  // of one variable
-constexpr std::size_t kMaxTermsToFactor = 30000;
+constexpr std::size_t kMaxTermsToFactor = 20000;
+constexpr std::size_t kMaxTermsOfGcd = 500000;
 
 double bits(const Polynomial& a) {
   return static_cast<double>(std::labs(fmpz_mpoly_max_bits(a.raw())));
@@ -81,6 +82,13 @@ void guard_substitution(const Polynomial& a, std::size_t variable, const Polynom
   const double growth = d * (bits(value) + std::log2(static_cast<double>(value.terms()) + 1));
   const double choices = static_cast<double>(a.terms()) * multisets(value.terms(), d);
   refuse_large(std::min(monomials, choices), bits(a) + growth);
+}
+
+void guard_gcd(const Polynomial& a, const Polynomial& b) {
+  if (std::min(a.terms(), b.terms()) > kMaxTermsToFactor ||
+      std::max(a.terms(), b.terms()) > kMaxTermsOfGcd) {
+    throw TimeUp("size limit reached: greatest common divisor");
+  }
 }
 
 void guard_factorisation(const Polynomial& a) {

@@ -9,7 +9,7 @@ namespace sumwright::algebra {
 void guard_product(const Polynomial& a, const Polynomial& b);
 void guard_power(const Polynomial& base, unsigned long exponent);
 void guard_substitution(const Polynomial& a, std::size_t variable, const Polynomial& value);
-/// For factorisation and greatest common divisors.
+void guard_gcd(const Polynomial& a, const Polynomial& b);
 void guard_factorisation(const Polynomial& a);
 
 }  // namespace sumwright::algebra

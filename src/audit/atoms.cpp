@@ -87,12 +87,6 @@ Value value_of(const proof::Product& product, const Point& at) {
   return out;
 }
 
-bool holds(const proof::Region& region, const Point& at) {
-  for (const proof::Affine& form : region.nonnegative)
-    if (value_of(form, at) < 0) return false;
-  return true;
-}
-
 bool identical(const proof::Polynomial& left, const proof::Polynomial& right) {
   if (left.terms.size() != right.terms.size()) return false;
   for (std::size_t i = 0; i < left.terms.size(); ++i)

@@ -15,9 +15,6 @@ namespace sumwright::audit {
 [[nodiscard]] Value value_of(const proof::Atom& atom, const Point& at);
 [[nodiscard]] Value value_of(const proof::Product& product, const Point& at);
 
-/// Whether all forms of the region are >= 0.
-[[nodiscard]] bool holds(const proof::Region& region, const Point& at);
-
 /// Same data (not only same value).
 [[nodiscard]] bool identical(const proof::Polynomial& left, const proof::Polynomial& right);
 [[nodiscard]] bool identical(const proof::Atom& left, const proof::Atom& right);

@@ -13,6 +13,9 @@
 namespace sumwright::audit {
 
 struct AuditOptions {
+  /// The claim as read from the author's file, when Proof::claim has been completed with a recurrence
+  /// that was found, or cleared of denominators: the two are then compared. Null: not compared.
+  const claim::Claim* original = nullptr;
   std::size_t expand_up_to = 3000;   ///< expand the equality when its estimated size is below this; else points
   long sum_span = 12;                ///< n = from .. from + span - 1 for direct summation
   std::size_t parameter_samples = 4;
@@ -21,7 +24,7 @@ struct AuditOptions {
 
 /// One check made: what, how many points or terms, and whether it agreed.
 struct Finding {
-  std::string check;    ///< "equality expanded", "term identity at points", "sums added up", ...
+  std::string check;    ///< "polynomial equality", "term identity at points", "sums added up", ...
   std::size_t cases = 0;
   bool agrees = true;
   std::string detail;   ///< the first disagreement, with its point and both values

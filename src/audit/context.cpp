@@ -153,9 +153,9 @@ void Context::make_places() {
   for (std::size_t sample = 0; sample < samples.size(); ++sample) {
     std::set<long> values;
     const long first = proof.threshold;
-    const long few = sample == 0 ? 5 : 3;
+    const long few = sample == 0 ? 8 : 4;
     for (long i = 0; i < few; ++i) values.insert(first + i);
-    if (sample < 2) values.insert(first + 9);
+    if (sample < 2) values.insert(first + 13);
     for (long n = first; indexed && n <= first + kExceptionalSpan; ++n) {
       const Point point = author.point(sample, n);
       const auto zero = [&](const proof::Factored& one) { return value_of(one, point).is_zero(); };

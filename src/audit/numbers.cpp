@@ -4,6 +4,8 @@
 // before the work is done, so that one point can never take long.
 #include "audit/numbers.hpp"
 
+#include <cln/integer.h>
+
 #include <algorithm>
 #include <sstream>
 #include <utility>
@@ -21,12 +23,13 @@ constexpr std::size_t kShownDigits = 60;
 numeric to_numeric(const mpz_class& value) {
   if (value.fits_slong_p()) return numeric(value.get_si());
   cln::cl_I out = 0;
+  const cln::cl_I word_size = cln::cl_I(1UL << 32U);
   const mpz_class magnitude = abs(value);
   std::vector<unsigned int> words((mpz_sizeinbase(magnitude.get_mpz_t(), 2) + 31) / 32);
   std::size_t count = 0;
   mpz_export(words.data(), &count, 1, sizeof(unsigned int), 0, 0, magnitude.get_mpz_t());
   for (std::size_t i = 0; i < count; ++i)
-    out = cln::ash(out, 32) + cln::cl_I(static_cast<unsigned long>(words[i]));
+    out = out * word_size + cln::cl_I(static_cast<unsigned long>(words[i]));
   return numeric(sgn(value) < 0 ? -out : out);
 }
 

@@ -6,6 +6,7 @@
 #include "audit/atoms.hpp"
 #include "audit/checks.hpp"
 #include "audit/terms.hpp"
+#include "audit/text_reader.hpp"
 
 namespace sumwright::audit {
 
@@ -24,7 +25,8 @@ void check_units(Check& check, const std::vector<proof::Unit>& units, const Poin
 void check_steps(Check& check, const proof::Instance& instance, const Point& point) {
   for (const proof::AtomStep& step : instance.steps)
     check.expect_same(value_of(step.from, point),
-                      times(value_of(step.factor, point), value_of(step.to, point)),
+                      times(value_of(step.factor, point),
+                            step.literal ? Value::of(1) : value_of(step.to, point)),
                       "a step of instance " + instance.id, point);
 }
 
@@ -32,11 +34,12 @@ void check_steps(Check& check, const proof::Instance& instance, const Point& poi
 
 void check_instance(const Context& context, Check& check, const proof::Instance& instance,
                     const std::vector<Place>& places, const std::string& use) {
+  const Domain domain(instance.region, context.names);
   for (const Place& place : places)
     check.attempt([&] {
       context.tick();
       const Point point = context.at(place);
-      if (!holds(instance.region, point))
+      if (!domain.contains(point))
         return check.fail("the region " + instance.region.text + " of instance " + instance.id +
                           " (" + use + ") leaves out " + text_of(point));
       check.expect_same(value_of(instance.left, point), value_of(instance.right, point),
@@ -56,11 +59,12 @@ namespace {
 void check_identity(Context& context, std::vector<Finding>& findings) {
   Check check("term identity at points");
   const proof::Telescoping& telescoping = *context.proof.telescoping;
+  const Domain domain(telescoping.region, context.names);
   for (const Place& place : context.index_places())
     check.attempt([&] {
       context.tick();
       const Point point = context.at(place);
-      if (!holds(telescoping.region, point))
+      if (!domain.contains(point))
         return check.fail("the region " + telescoping.region.text + " leaves out " + text_of(point));
       Value left = Value::of(0);
       for (std::size_t i = 0; i < telescoping.coefficients.size(); ++i)

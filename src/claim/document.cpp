@@ -5,6 +5,25 @@
 #include "claim/document.hpp"
 
 #include <fmt/format.h>
+
+#include <stdexcept>
+
+namespace sumwright::claim {
+
+// Thrown where toml++ finds that it has lost its way.
+struct TomlFault : std::logic_error {
+  using std::logic_error::logic_error;
+};
+
+[[noreturn]] static void toml_fault(const char* condition) { throw TomlFault(condition); }
+
+}  // namespace sumwright::claim
+
+// Some damaged files reach assertions of toml++ 3.3. They must end neither in abort() nor, in
+// release builds, in undefined behaviour, so assertions throw in every build. No other file
+// may include toml++, which would define its inline functions a second time, differently.
+#undef NDEBUG
+#define TOML_ASSERT(expr) (static_cast<bool>(expr) ? void() : sumwright::claim::toml_fault(#expr))
 #include <toml++/toml.h>
 
 #include <algorithm>
@@ -134,6 +153,29 @@ class Converter {
   LineIndex lines_;
 };
 
+[[nodiscard]] bool loses_its_way(std::string_view text) {
+  try {
+    (void)toml::parse(text);
+  } catch (const TomlFault&) {
+    return true;
+  } catch (const toml::parse_error&) {
+    return false;
+  }
+  return false;
+}
+
+// toml++ reads from left to right: the shortest beginning of the text that makes it lose its
+// way ends at the fault.
+[[nodiscard]] std::size_t fault_offset(std::string_view text) {
+  std::size_t good = 0;
+  std::size_t bad = text.size();
+  while (bad - good > 1) {
+    const std::size_t middle = good + (bad - good) / 2;
+    (loses_its_way(text.substr(0, middle)) ? bad : good) = middle;
+  }
+  return good;
+}
+
 }  // namespace
 
 const Entry* Value::find(std::string_view key) const {
@@ -154,6 +196,9 @@ Value parse_document(const Source& source) {
   } catch (const toml::parse_error& error) {
     throw InputError(source, {converter.offset(error.source().begin), 1},
                      fmt::format("not valid TOML: {}", error.description()));
+  } catch (const TomlFault&) {
+    throw InputError(source, {fault_offset(source.text), 1},
+                     "not valid TOML: this is neither a key nor a value");
   }
 }
 

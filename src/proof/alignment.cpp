@@ -6,7 +6,7 @@
 
 #include <algorithm>
 
-namespace sumwright::proof {
+namespace sumwright::proof::building {
 namespace {
 
 /// Cancels up to `wanted` pairs, smallest gap first.
@@ -105,4 +105,4 @@ std::optional<Alignment> align(const FactorialConstants& given, const FactorialC
   return out;
 }
 
-}  // namespace sumwright::proof
+}  // namespace sumwright::proof::building

@@ -4,7 +4,7 @@
 #include <optional>
 #include <vector>
 
-namespace sumwright::proof {
+namespace sumwright::proof::building {
 
 /// Constants c of fact(lambda + c) and rfact(lambda + c), with multiplicity, sorted ascending.
 struct FactorialConstants {
@@ -28,4 +28,4 @@ struct Alignment {
 [[nodiscard]] std::optional<Alignment> align(const FactorialConstants& part,
                                              const FactorialConstants& base);
 
-}  // namespace sumwright::proof
+}  // namespace sumwright::proof::building

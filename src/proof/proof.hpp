@@ -192,7 +192,7 @@ struct Telescoping {
   /// Normal form of the equality: left - right expanded is 0; for the record, the left side,
   /// primitive over Z with positive leading coefficient, and its sizes.
   Polynomial normal_form;
-  mpz_class normal_scale = 1;               ///< left side = normal_scale * normal_form (may be negative)
+  mpq_class normal_scale = 1;               ///< left side = normal_scale * normal_form
 };
 
 /// Why F(n+i, k) vanishes beyond an end: per product of F an rfact whose argument is negative there.
@@ -213,14 +213,21 @@ struct RangeStep {
 
 // ---------------------------------------------------------------- conclusion
 
-/// The sum at one n, term by term, for n = value (the index runs over literal low..high after
-/// leaving out vanishing terms), compared with the right side: a balance in the parameters only.
-struct InitialValue {
-  long at = 0;
+/// S at one literal n: the index runs over literal low..high after leaving out vanishing terms.
+struct LiteralSum {
+  long at = 0;                     ///< the n of S(n)
   long low = 0;
   long high = -1;                  ///< high < low: no nonzero terms
   std::optional<Vanishing> below;  ///< set when the author's end is not literally `low`
   std::optional<Vanishing> above;
+};
+
+/// One n checked term by term: S(at) against the closed form (equalities: one sum), or
+/// sum_i a_i(at) S(at+i) against b(at) (recurrences: sums for i = 0..J). A balance in the parameters only.
+/// BalanceTerm::shift says to which of `sums` an explicit term belongs, BalanceTerm::point is the index value.
+struct InitialValue {
+  long at = 0;
+  std::vector<LiteralSum> sums;
   std::optional<mpq_class> value;  ///< both sides as a number, when free of parameters
   Balance balance;                 ///< S(at) - right side = 0 (for recurrences: sum a_i S(at+i) - b(at))
 };
@@ -237,7 +244,10 @@ struct Counterexample {
 };
 
 struct Proof {
+  /// The claim with the evidence in use. For a question or a recurrence claim, evidence.recurrence and
+  /// right_side are the parse trees of the recurrence as stated in the theorem (denominators cleared).
   std::shared_ptr<const claim::Claim> claim;
+  bool question = false;  ///< the author asked for a recurrence; it was found
   std::vector<Symbol> symbols;
 
   Verdict verdict = Verdict::undecided;

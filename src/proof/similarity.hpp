@@ -14,7 +14,7 @@
 #include "term/conversion.hpp"
 #include "term/product.hpp"
 
-namespace sumwright::proof {
+namespace sumwright::proof::building {
 
 /// A condition that an argument needs on its region: form >= 0, or polynomial != 0.
 struct Need {
@@ -78,4 +78,4 @@ struct IndexShift {
 [[nodiscard]] std::vector<std::vector<std::size_t>> similarity_classes(
     const algebra::RingPtr& ring, const std::vector<term::Product>& products);
 
-}  // namespace sumwright::proof
+}  // namespace sumwright::proof::building

@@ -2,6 +2,8 @@
 // i = 0..order, taken off F. Everything stays factored; nothing is expanded here.
 #include "search/base_term.hpp"
 
+#include <stdexcept>
+
 namespace sumwright::search {
 
 using algebra::Factored;
@@ -15,6 +17,13 @@ Factored refined(const Factored& value) {
     out.multiply(algebra::factor(base), exponent);
   }
   return out;
+}
+
+ShiftQuotients refined(const ShiftQuotients& summand) {
+  if (summand.by_index.is_zero() || summand.by_running.is_zero()) {
+    throw std::invalid_argument("a shift quotient of the summand is 0");
+  }
+  return {refined(summand.by_running), refined(summand.by_index)};
 }
 
 std::vector<Factored> running_quotients(const ShiftQuotients& summand, std::size_t order) {

@@ -23,6 +23,9 @@ struct BaseTerm {
 /// Splits every factor into irreducible ones (they may come as written).
 [[nodiscard]] algebra::Factored refined(const algebra::Factored& value);
 
+/// Both quotients refined; throws std::invalid_argument when one is 0.
+[[nodiscard]] ShiftQuotients refined(const ShiftQuotients& summand);
+
 /// F(n+i,k) / F(n,k) for i = 0 .. order, in lowest terms as factored values.
 [[nodiscard]] std::vector<algebra::Factored> running_quotients(const ShiftQuotients& summand,
                                                                std::size_t order);

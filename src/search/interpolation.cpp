@@ -96,7 +96,7 @@ std::optional<ModularFraction> recover_fraction(const Field& field, const WordVe
       best = gain;
       out = ModularFraction{r1, t1};
     }
-    if (r1.empty()) break;
+    if (r1.size() <= best) break;  // no later quotient can be larger
     const WordVector quotient = divide(field, r0, r1);
     subtract_product(field, t0, quotient, t1);
     std::swap(r0, r1);

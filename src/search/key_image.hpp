@@ -11,7 +11,7 @@
 
 #include "algebra/limits.hpp"
 #include "search/field.hpp"
-#include "search/key_equation.hpp"
+#include "search/key_system.hpp"
 
 namespace sumwright::search {
 
@@ -26,12 +26,10 @@ struct SolutionPattern {
   [[nodiscard]] std::optional<std::size_t> unit_column() const;
 };
 
-/// Images of one key equation modulo one prime.
-/// With `given` coefficients the columns are first summed up to one: sum_i given[i] columns[i].
+/// Images of one key equation modulo one prime, with k0 = start. Keeps a reference to the system.
 class KeyImage {
  public:
-  KeyImage(const KeyEquation& equation, const std::vector<algebra::Polynomial>& given,
-           const Field& field, Word start);
+  KeyImage(const KeySystem& system, const Field& field, Word start);
 
   /// Solves with all equations at a point (one value per ring variable; k's is not used); nothing
   /// when `up` has a zero in the range.
@@ -46,41 +44,37 @@ class KeyImage {
  private:
   struct Term {
     Word coefficient;
-    std::vector<unsigned long> exponents;
+    const std::vector<unsigned long>* exponents;  // in the system
   };
   using Terms = std::vector<Term>;
-  struct Product {
-    Word constant = 1;
-    std::vector<std::pair<std::size_t, long>> factors;  // index into factors_, exponent
-  };
 
-  [[nodiscard]] Product compile(const algebra::Factored& value);
-  [[nodiscard]] Terms compile(const algebra::Polynomial& value) const;
-  void fill_values(const WordVector& point, std::size_t count);
-  [[nodiscard]] WordVector value_of(const Terms& terms, const WordVector& point) const;
-  void multiply_in(WordVector& into, const Product& product) const;
+  [[nodiscard]] Terms reduce(const std::vector<algebra::Monomial>& terms) const;
+  [[nodiscard]] Word reduce(const mpz_class& value) const;
+  [[nodiscard]] WordVector in_index(const Terms& terms, const WordVector& point) const;
+  void tabulate(const WordVector& point, std::size_t count);
+  void tabulate_base(const WordVector& in_k, WordVector& table) const;
+  [[nodiscard]] WordVector values_of(const KeySystem::Product& product, std::size_t count) const;
+  [[nodiscard]] std::vector<WordVector> right_sides(const WordVector& point, std::size_t count,
+                                                    const algebra::Deadline& deadline) const;
   [[nodiscard]] bool run_recursion(const WordVector& point, std::size_t rows,
                                    const algebra::Deadline& deadline);
   [[nodiscard]] SolutionPattern eliminate(std::size_t rows, const algebra::Deadline& deadline);
   [[nodiscard]] WordVector back_substitute(const SolutionPattern& pattern) const;
-  [[nodiscard]] WordVector coefficients_of(const WordVector& values) const;
+  void remove_homogeneous(WordVector& y) const;
+  [[nodiscard]] WordVector coefficients_of(const Word* values) const;
   void prepare_differences();
   void prepare_interpolation();
   [[nodiscard]] std::size_t full_rows() const;
   [[nodiscard]] std::size_t few_rows() const;
 
-  const KeyEquation& equation_;
+  const KeySystem& system_;
   Field field_;
   Word start_;
-  std::vector<algebra::Polynomial> bases_;  // distinct factors
-  std::vector<Terms> factors_;              // the same, modulo the prime
-  std::vector<WordVector> tables_;          // values of the factors at start_, start_ + 1, ...
-  Product up_;
-  Product down_;
-  std::vector<Product> columns_;
+  std::vector<Terms> bases_;  // of the factor powers, modulo the prime
   std::vector<Terms> given_;
+  std::vector<WordVector> tables_;     // factor powers at k0, k0 + 1, ...; one entry if free of k
   WordVector differences_;             // weights of the (degree+1)-th difference
-  std::vector<WordVector> to_powers_;  // values at start_ + j -> coefficients of k^i
+  std::vector<WordVector> to_powers_;  // values at k0 + j -> coefficients of k^i
   std::vector<WordVector> sequences_;  // per unknown, values of y
   std::vector<WordVector> matrix_;     // reduced rows
   std::vector<std::size_t> pivots_;    // pivot column of each reduced row

@@ -9,8 +9,8 @@
 namespace sumwright::search {
 namespace {
 
-constexpr std::size_t kMaxPoints = 6000;
-constexpr std::size_t kMaxWords = 50000000;  // of samples kept at one level
+constexpr std::size_t kMaxPoints = 4000;
+constexpr std::size_t kMaxWords = 20000000;  // of samples kept at one level
 
 void trim(WordVector& a) {
   while (!a.empty() && a.back() == 0) a.pop_back();
@@ -89,9 +89,6 @@ bool ModularReconstruction::sample(std::size_t level, WordVector& point, std::si
     deadline_->check();
     point[here.variable] = next;
     auto vector = run(level - 1, point);
-    if (vector && here.entries == 0) {  // the level below has just learnt its layout
-      return false;
-    }
     if (vector && vector->size() == here.entries) {
       into.vectors.push_back(std::move(*vector));
       into.at.push_back(next);
@@ -133,6 +130,7 @@ std::optional<WordVector> ModularReconstruction::denominator(Level& level, const
     }
     const auto fraction = recover_fraction(*field_, level.master, std::move(interpolant));
     if (!fraction) return std::nullopt;
+    if (group == 1) level.extra_degree = fraction->denominator.size() - 1;
     if (fraction->denominator.size() == 1) continue;
     total = multiply(*field_, total, fraction->denominator);
     for (std::size_t j = 0; j < count; ++j) {
@@ -155,6 +153,7 @@ std::optional<WordVector> ModularReconstruction::numerators(std::size_t index,
   if (level.known) out.reserve(level.out_entries);
   WordVector values(count);
   for (std::size_t e = 0; e < level.entries; ++e) {
+    if (e % 16 == 15) deadline_->check();
     for (std::size_t j = 0; j < count; ++j) {
       values[j] = field_->mul(samples.vectors[j][e], at_samples[j]);
     }
@@ -206,7 +205,7 @@ void ModularReconstruction::learn(std::size_t index, const std::vector<WordVecto
   }
   layout_ = std::move(layout);
   level.out_entries = layout_.size();
-  level.points = std::max(largest_first + denominator_size, largest + 1);
+  level.points = std::max(largest_first + denominator_size, largest + level.extra_degree + 1);
   start_level(index + 1, layout_.size(), first_group, unit);
 }
 

@@ -54,7 +54,8 @@ class ModularReconstruction {
     std::size_t points = 4;          // samples taken
     std::vector<std::size_t> sizes;  // coefficients per entry
     std::size_t out_entries = 0;
-    WordVector weights;  // random combination
+    std::size_t extra_degree = 0;  // of the denominator beyond the first group's
+    WordVector weights;            // random combination
     // Of the last sampling:
     WordVector at;
     WordVector master;

@@ -92,7 +92,6 @@ void ClearedRecurrence::times(Fraction& left, Fraction right) {
 void ClearedRecurrence::to_power(Fraction& fraction, const mpz_class& exponent,
                                  claim::Place place) {
   raise(fraction.numerator, exponent, place);
-  if (exponent == 0) fraction.divisors.clear();
   for (auto& [text, divisor] : fraction.divisors) divisor.power *= exponent;
 }
 

@@ -14,37 +14,9 @@
 
 #include "algebra/limits.hpp"
 #include "claim/claim.hpp"
-#include "term/evaluation.hpp"
+#include "term/outcome.hpp"
 
 namespace sumwright::term::exact {
-
-/// Numbers with more bits than this are refused with std::length_error.
-inline constexpr std::size_t kMaxBits = 400'000;
-
-/// A number, or one of two ways of having none. `undefined` (a factorial, rising or falling
-/// outside of its domain) gives way to a factor 0 of the same product; `division_by_zero` never.
-struct Outcome {
-  enum class State : unsigned char { number, undefined, division_by_zero };
-  struct Reason {
-    std::string text;
-    claim::Place place;
-  };
-  State state = State::number;
-  mpq_class number;
-  std::shared_ptr<const Reason> reason;  ///< null for a number
-
-  [[nodiscard]] bool is_number() const { return state == State::number; }
-  [[nodiscard]] Value value() const;
-};
-
-/// a := a * b, a + b, a - b. std::length_error past kMaxBits.
-void multiply(Outcome& a, const Outcome& b);
-void add(Outcome& a, const Outcome& b);
-void subtract(Outcome& a, const Outcome& b);
-/// a := 1/a; at 0, no value: the place is that of the divisor.
-void invert(Outcome& a, claim::Place place);
-/// a := a^e; 0^0 is 1, 0 to a negative power has no value.
-void raise(Outcome& a, const mpz_class& exponent, claim::Place place);
 
 /// Names to slots; `slot` of a name that is not there throws std::invalid_argument.
 class Symbols {
@@ -65,12 +37,6 @@ using Slots = std::vector<mpq_class>;
 /// For each function of an expression, on which side of its special points the arguments lie.
 /// Between points of equal chambers the shift quotients of the functions are regular.
 using Chambers = std::vector<bool>;
-
-/// Products a(a+1)...(a+m-1) and their like for the last `a`, by m.
-struct PrefixProducts {
-  mpq_class start;
-  std::vector<mpq_class> products;
-};
 
 /// Working memory of programs; one per thread.
 class Machine {
@@ -131,8 +97,6 @@ class Program {
             Chambers* chambers);
   void of_two(const Instruction& instruction, Machine& machine, Outcome& first,
               const Outcome& second, Chambers* chambers);
-  void product(const Instruction& instruction, Machine& machine, Outcome& first,
-               const mpz_class& length);
 
   std::vector<Instruction> code_;
   std::vector<mpq_class> constants_;

@@ -14,7 +14,6 @@ namespace sumwright::term {
 
 using algebra::Factored;
 using algebra::Polynomial;
-using algebra::RationalFunction;
 using algebra::RingPtr;
 
 namespace {
@@ -249,13 +248,11 @@ Polynomial interval_factor(const Atom& atom, const Affine& t) {
   return atom.base + Polynomial(ring, atom.scale) * t.polynomial(ring);
 }
 
-std::optional<RationalFunction> ratio(const RingPtr& ring, const Product& a, const Product& b) {
+std::optional<Factored> ratio(const RingPtr& ring, const Product& a, const Product& b) {
   Signature s;
   add_product(ring, s, a, 1);
   add_product(ring, s, b, -1);
-  const std::optional<Factored> value = rational_value(ring, s);
-  if (!value) return std::nullopt;
-  return RationalFunction(ring, *value);
+  return rational_value(ring, s);
 }
 
 Factored shift_quotient(const RingPtr& ring, const Product& product, std::size_t symbol) {

@@ -62,9 +62,10 @@ struct Product {
 /// a + t as a polynomial with its scale: (base + scale * t) / scale.
 [[nodiscard]] algebra::Polynomial interval_factor(const Atom& atom, const Affine& t);
 
-/// a / b as a rational function when the two are similar (their quotient is rational), else nothing.
-[[nodiscard]] std::optional<algebra::RationalFunction> ratio(const algebra::RingPtr& ring,
-                                                             const Product& a, const Product& b);
+/// a / b as a rational function in factored form when the two are similar (their quotient is rational),
+/// else nothing. Neither may be 0.
+[[nodiscard]] std::optional<algebra::Factored> ratio(const algebra::RingPtr& ring, const Product& a,
+                                                     const Product& b);
 
 /// The quotient product(symbol + 1) / product, a rational function in factored form.
 [[nodiscard]] algebra::Factored shift_quotient(const algebra::RingPtr& ring, const Product& product,

@@ -8,6 +8,7 @@
 #include <stdexcept>
 #include <utility>
 
+#include "term/candidates.hpp"
 #include "term/clearing.hpp"
 #include "term/evaluation.hpp"
 #include "term/evaluator.hpp"
@@ -133,9 +134,8 @@ class Samples {
       : claim_(claim), count_(count), hypotheses_(claim) {
     if (!hypotheses_.name_running()) fixed_ = sample_slots(claim_, hypotheses_, count_, nullptr);
   }
-  [[nodiscard]] bool fixed() const { return !hypotheses_.name_running(); }
   [[nodiscard]] std::vector<Slots> at(const mpz_class& n) {
-    if (!fixed()) return sample_slots(claim_, hypotheses_, count_, &n);
+    if (hypotheses_.name_running()) return sample_slots(claim_, hypotheses_, count_, &n);
     std::vector<Slots> samples = fixed_;
     for (Slots& slots : samples) slots[0] = n;
     return samples;
@@ -148,12 +148,21 @@ class Samples {
   std::vector<Slots> fixed_;
 };
 
+[[nodiscard]] bool is_infinite(const claim::Sum& sum) {
+  return std::any_of(sum.over.begin(), sum.over.end(), [](const claim::Range& range) {
+    return !range.low.value || !range.high.value;
+  });
+}
+
 [[nodiscard]] std::set<mpz_class> points(const Claim& claim, long span,
                                          const std::vector<mpz_class>& also) {
   std::set<mpz_class> all;
   for (long i = 0; i < span; ++i) all.insert(claim.from + i);
   for (const mpz_class& n : also) {
     if (n >= claim.from) all.insert(n);
+  }
+  if (span > 0) {
+    for (const mpz_class& n : special_running_values(claim)) all.insert(n);
   }
   return all;
 }
@@ -174,62 +183,44 @@ class CompiledCertificate {
   struct Compared {
     Outcome left;
     Outcome right;
-    // F is not 0 at any of the points, and they lie where all its shift quotients are regular:
-    // there the identity of rational functions is an identity of numbers.
-    bool regular = true;
   };
 
-  // Nothing where a side has no value, or F is 0 at all points.
+  // Both sides at a point where F is not 0 and its shift quotients are regular on the way to
+  // all points involved: there the identity of rational functions is one of numbers. Nothing
+  // at other points: a true certificate may fail there.
   [[nodiscard]] std::optional<Compared> at(const Slots& point, const mpz_class& k) {
     machine_.check();
     Slots slots = point;
     slots.resize(symbols_.size());
+    chambers_.reset();
+    slots[index_] = k + 1;
+    Outcome right = certificate_.run(slots, machine_);
+    if (!right.is_number() || !times_term(right, slots)) return std::nullopt;
     slots[index_] = k;
     Outcome right_end = certificate_.run(slots, machine_);
-    if (!right_end.is_number()) return std::nullopt;
-    terms_.clear();
-    Compared compared;
-    Chambers first;
-    const Outcome term = summand_.run(slots, machine_, &first);
-    multiply(right_end, term);
-    note(term, first, first, compared);
-    slots[index_] = k + 1;
-    compared.right = certificate_.run(slots, machine_);
-    multiply(compared.right, shifted(slots, first, compared));
-    subtract(compared.right, right_end);
-    slots[index_] = k;
-    if (!compared.right.is_number() || !add_left(slots, term, first, compared)) {
-      return std::nullopt;
+    if (!right_end.is_number() || !times_term(right_end, slots)) return std::nullopt;
+    subtract(right, right_end);
+    Outcome left;
+    Slots moved = slots;
+    for (Program& coefficient : coefficients_) {
+      Outcome part = coefficient.run(slots, machine_);
+      if (!part.is_number() || !times_term(part, moved)) return std::nullopt;
+      add(left, part);
+      moved[0] += 1;
     }
-    const bool any = std::any_of(terms_.begin(), terms_.end(), [](bool zero) { return !zero; });
-    if (!any) return std::nullopt;
-    return compared;
+    return Compared{std::move(left), std::move(right)};
   }
 
  private:
-  void note(const Outcome& term, const Chambers& chambers, const Chambers& first,
-            Compared& compared) {
-    terms_.push_back(term.is_number() && term.number == 0);
-    compared.regular =
-        compared.regular && term.is_number() && term.number != 0 && chambers == first;
-  }
-
-  [[nodiscard]] Outcome shifted(const Slots& slots, const Chambers& first, Compared& compared) {
+  // factor := factor * F; false where F is 0, has no value, or lies in another chamber.
+  bool times_term(Outcome& factor, const Slots& slots) {
     Chambers chambers;
-    Outcome term = summand_.run(slots, machine_, &chambers);
-    note(term, chambers, first, compared);
-    return term;
-  }
-
-  bool add_left(Slots& slots, const Outcome& term, const Chambers& first, Compared& compared) {
-    for (std::size_t i = 0; i < coefficients_.size() && compared.left.is_number(); ++i) {
-      Slots moved = slots;
-      moved[0] += mpq_class(mpz_class(i));
-      Outcome part = i == 0 ? term : shifted(moved, first, compared);
-      multiply(part, coefficients_[i].run(slots, machine_));
-      add(compared.left, part);
-    }
-    return compared.left.is_number();
+    const Outcome term = summand_.run(slots, machine_, &chambers);
+    if (!term.is_number() || term.number == 0) return false;
+    if (!chambers_) chambers_ = chambers;
+    if (*chambers_ != chambers) return false;
+    multiply(factor, term);
+    return true;
   }
 
   Symbols symbols_;
@@ -238,7 +229,7 @@ class CompiledCertificate {
   Program summand_;
   Program certificate_;
   std::vector<Program> coefficients_;
-  std::vector<bool> terms_;  // whether F is 0, by point
+  std::optional<Chambers> chambers_;  // of the point's first term
 };
 
 // The index values to try at one n: the claim's range and a margin, or around 0..n.
@@ -290,15 +281,13 @@ Sides evaluate_sides(const claim::Claim& claim, const Assignment& at) {
 std::optional<Difference> refute(const claim::Claim& claim, long span, std::size_t samples,
                                  const std::vector<mpz_class>& also,
                                  const algebra::Deadline& deadline) {
-  for (const claim::Range& range : claim.sum.over) {
-    if (!range.low.value || !range.high.value) return std::nullopt;
-  }
+  if (exact::is_infinite(claim.sum)) return std::nullopt;
+  if (claim.other_sum && exact::is_infinite(*claim.other_sum)) return std::nullopt;
   exact::CompiledClaim compiled(claim, deadline);
   exact::Samples assignments(claim, samples);
   std::vector<exact::KnownSums> known;
   for (const mpz_class& n : exact::points(claim, span, also)) {
     const std::vector<exact::Slots> at = assignments.at(n);
-    if (!assignments.fixed()) known.clear();
     known.resize(at.size());
     for (std::size_t i = 0; i < at.size(); ++i) {
       known[i].erase(known[i].begin(), known[i].lower_bound(n));
@@ -306,7 +295,8 @@ std::optional<Difference> refute(const claim::Claim& claim, long span, std::size
         const auto [left, right] = compiled.sides(at[i], known[i]);
         if (!exact::differ(left.outcome, right.outcome)) continue;
         const auto& indices = left.outcome.is_number() ? right.indices : left.indices;
-        return Difference{exact::point(claim, at[i], indices), value_of(left), value_of(right)};
+        return Difference{exact::point(claim, at[i], indices), left.outcome.value(),
+                          right.outcome.value()};
       } catch (const std::length_error&) {
         continue;  // too large to evaluate
       }
@@ -324,27 +314,24 @@ std::optional<Difference> refute_certificate(const claim::Claim& claim,
   exact::IndexWindow window(claim);
   exact::Samples assignments(claim, exact::kCertificateSamples);
   const std::string& index = claim.sum.over[0].index;
-  std::optional<Difference> irregular;
   std::size_t tried = 0;
   for (long i = 0; i < exact::kCertificateSpan; ++i) {
     for (const exact::Slots& slots : assignments.at(claim.from + i)) {
       const auto [low, high] = window.at(slots);
       for (mpz_class k = low; k <= high; ++k) {
-        if (++tried > exact::kCertificatePoints) return irregular;
+        if (++tried > exact::kCertificatePoints) return std::nullopt;
         try {
           const auto compared = compiled.at(slots, k);
           if (!compared || compared->left.number == compared->right.number) continue;
-          Difference difference{exact::point(claim, slots, {{index, k}}), compared->left.value(),
-                                compared->right.value()};
-          if (compared->regular) return difference;
-          if (!irregular) irregular = std::move(difference);
+          return Difference{exact::point(claim, slots, {{index, k}}), compared->left.value(),
+                            compared->right.value()};
         } catch (const std::length_error&) {
           continue;  // too large to evaluate
         }
       }
     }
   }
-  return irregular;
+  return std::nullopt;
 }
 
 }  // namespace sumwright::term

@@ -81,9 +81,9 @@ std::vector<std::string> hypothesis_texts(const claim::Claim& claim) {
   return out;
 }
 
-std::string claim_kind(const claim::Claim& claim) {
-  if (claim.is_equality()) return "equality";
-  return claim.is_question() ? "question" : "recurrence";
+std::string claim_kind(const proof::Proof& proof) {
+  if (proof.claim->is_equality()) return "equality";
+  return proof.question || proof.claim->is_question() ? "question" : "recurrence";
 }
 
 std::string statement_text(const proof::Proof& proof) {

@@ -27,6 +27,6 @@ namespace sumwright::writers {
 [[nodiscard]] std::string statement_text(const proof::Proof& proof);
 
 /// The kind of claim: `equality`, `recurrence`, `question`.
-[[nodiscard]] std::string claim_kind(const claim::Claim& claim);
+[[nodiscard]] std::string claim_kind(const proof::Proof& proof);
 
 }  // namespace sumwright::writers

@@ -33,7 +33,7 @@ void write_front(ObligationsDocument& out, const proof::Proof& proof) {
   out.statement("verdict", established ? word(proof.verdict) : "NOT ESTABLISHED, " + word(proof.verdict));
   out.statement("subject", word(proof.subject));
   out.statement("title", proof.claim->title);
-  out.statement("claim kind", claim_kind(*proof.claim));
+  out.statement("claim kind", claim_kind(proof));
   out.statement("statement", statement_text(proof));
   if (!proof.reason.empty()) out.statement("reason", proof.reason);
   if (!proof.would_settle.empty()) out.statement("would settle", proof.would_settle);

@@ -30,9 +30,9 @@ void write_instance(ObligationsDocument& out, const TextPrinter& print, const st
   }
   count = 0;
   for (const proof::AtomStep& step : instance.steps) {
-    const bool left = step.side == proof::AtomStep::Side::left;
+    const bool on_left = step.side == proof::AtomStep::Side::left;
     out.statement(fmt::format("{} step {}", key, ++count),
-                  fmt::format("{}: {}", left ? "left" : "right", print.step(step)));
+                  fmt::format("{}: {}", on_left ? "left" : "right", print.step(step)));
   }
   if (instance.cancelled) write_nonzero(out, print, key + " cancelled", *instance.cancelled);
 }
@@ -212,11 +212,15 @@ void write_initial_values(ObligationsDocument& out, const TextPrinter& print,
     const proof::InitialValue& initial = proof.initial[v];
     const std::string key = fmt::format("value {}", v + 1);
     if (v > 0) out.blank();
-    out.statement(key, fmt::format("at {} = {}, index {}..{}", proof.symbols[0].name, initial.at,
-                                   initial.low, initial.high));
+    out.statement(key, fmt::format("{} = {}", proof.symbols[0].name, initial.at));
     if (initial.value) out.definition(key + " both", initial.value->get_str());
-    write_zero_range(out, print, key + " zero below", initial.below);
-    write_zero_range(out, print, key + " zero above", initial.above);
+    for (std::size_t s = 0; s < initial.sums.size(); ++s) {
+      const proof::LiteralSum& sum = initial.sums[s];
+      const std::string sum_key = fmt::format("{} sum {}", key, s + 1);
+      out.statement(sum_key, fmt::format("S({}), index {}..{}", sum.at, sum.low, sum.high));
+      write_zero_range(out, print, sum_key + " zero below", sum.below);
+      write_zero_range(out, print, sum_key + " zero above", sum.above);
+    }
     write_balance(out, print, key + " ", initial.balance);
   }
 }

@@ -102,15 +102,16 @@ void append(Rows& out, const Rows& more) { out.insert(out.end(), more.begin(), m
           {"degree", ':', ValueKind::integer, true},
           {"degree in symbol #", ':', ValueKind::integer, true},
           {"bits", ':', ValueKind::integer, true},
-          {"scale", '=', ValueKind::integer, true},
+          {"scale", '=', ValueKind::factored, true},
           {"normal form", '=', ValueKind::polynomial, true}};
 }
 
 [[nodiscard]] Rows initial_keys() {
   Rows out = {{"value #", ':', ValueKind::text, true},
               {"value # both", '=', ValueKind::text, false},
-              {"value # zero below", ':', ValueKind::text, false},
-              {"value # zero above", ':', ValueKind::text, false}};
+              {"value # sum #", ':', ValueKind::text, false},
+              {"value # sum # zero below", ':', ValueKind::text, false},
+              {"value # sum # zero above", ':', ValueKind::text, false}};
   append(out, balance_keys("value # "));
   return out;
 }

@@ -52,7 +52,7 @@ struct ObligationsFile {
   proof::Factored up;
   proof::Polynomial certificate_polynomial;  ///< c
   proof::Polynomial normal_form;
-  mpz_class normal_scale;
+  mpq_class normal_scale;
   std::size_t terms = 0;  ///< sizes as stated in the file
   long degree = -1;
   std::vector<long> degrees;  ///< per symbol

@@ -70,7 +70,7 @@ std::size_t ValueReader::symbol() {
     if (!name.empty() && symbols_[i].name == name) return i;
   }
   refuse(name.empty() ? "expected a symbol"
-                      : claim::quoted(name) + " is not in the list of symbols",
+                      : claim::in_quotes(name) + " is not in the list of symbols",
          start);
 }
 

@@ -12,7 +12,7 @@ Fixpoint zfactorial_nat (n : nat) : Z :=
   | S m => Z.of_nat n * zfactorial_nat m
   end.
 
-Definition zfactorial (m : Z) : Z := zfactorial_nat (Z.to_nat m).
+Definition zfactorial (m : Z) : Z := if m <? 0 then 0 else zfactorial_nat (Z.to_nat m).
 
 Fixpoint zfalling_nat (a : Z) (d : nat) : Z :=
   match d with
@@ -84,6 +84,15 @@ Lemma fact_rfact m m' : 0 <= m -> m' = m -> (factorial m * rfactorial m' = inj 1
 Proof.
   intros H ->. rewrite rfactorial_nonneg, inj_1 by lia. apply inv_r, factorial_neq0, H.
 Qed.
+
+(** A unit m! / m! put into one side of an equation, where a pair has cancelled. *)
+Lemma left_fact_unit m (x y : K) :
+  0 <= m -> (x * (factorial m * rfactorial m) = y -> x = y)%K.
+Proof. intros H <-. rewrite fact_rfact by (exact H || reflexivity). ring. Qed.
+
+Lemma right_fact_unit m (x y : K) :
+  0 <= m -> (x = y * (factorial m * rfactorial m) -> x = y)%K.
+Proof. intros H ->. rewrite fact_rfact by (exact H || reflexivity). ring. Qed.
 
 Lemma rfactorial_0 : rfactorial 0 = inj 1 :> K.
 Proof.
@@ -257,7 +266,7 @@ Proof. intros H. apply gbinomial_neg, H. Qed.
 
 Lemma factorial_value m z : 0 <= m -> zfactorial m = z -> factorial m = inj z :> K.
 Proof.
-  intros H <-. unfold zfactorial. rewrite <- (Z2Nat.id m H) at 1.
+  intros H <-. unfold zfactorial. destruct (Z.ltb_spec m 0); [lia|]. rewrite <- (Z2Nat.id m H) at 1.
   generalize (Z.to_nat m) as n. induction n as [|n IH]; [apply factorial_0|].
   cbn [zfactorial_nat]. rewrite (factorial_succ (Z.of_nat n)), IH, inj_mul by lia. reflexivity.
 Qed.
@@ -282,8 +291,9 @@ Qed.
 
 End Factorials.
 
-Lemma zfactorial_neq0 (m : Z) : zfactorial m <> 0.
+Lemma zfactorial_neq0 (m : Z) : 0 <= m -> zfactorial m <> 0.
 Proof.
-  unfold zfactorial. induction (Z.to_nat m) as [|n IH]; cbn [zfactorial_nat]; [lia|].
+  intros H. unfold zfactorial. destruct (Z.ltb_spec m 0); [lia|].
+  induction (Z.to_nat m) as [|n IH]; cbn [zfactorial_nat]; [lia|].
   intros E. apply Z.mul_eq_0 in E. lia.
 Qed.

@@ -97,6 +97,19 @@ Proof.
     + apply inv_neq0, X.
 Qed.
 
+(** A unit x^m x^(-m) put into one side of an equation. *)
+Lemma left_zpow_unit x m m' (s t : K) :
+  (x <> 0)%K -> m' = - m -> (s * (zpow x m * zpow x m') = t -> s = t)%K.
+Proof.
+  intros X M <-. rewrite <- (zpow_add x m m' 0), zpow_0_r; [ring | left; exact X | lia].
+Qed.
+
+Lemma right_zpow_unit x m m' (s t : K) :
+  (x <> 0)%K -> m' = - m -> (s = t * (zpow x m * zpow x m') -> s = t)%K.
+Proof.
+  intros X M ->. rewrite <- (zpow_add x m m' 0), zpow_0_r; [ring | left; exact X | lia].
+Qed.
+
 (** A power with a composite base, spelled v. *)
 Lemma zpow_mul_base v x y m :
   v = (x * y)%K -> ((x <> 0)%K /\ (y <> 0)%K) \/ 0 <= m -> zpow v m = (zpow x m * zpow y m)%K.

@@ -46,11 +46,12 @@ Qed.
 
 Lemma inj_morph :
   ring_morph (@kzero K) kone kadd kmul ksub kopp eq
-             0%Z 1%Z Z.add Z.mul Z.sub Z.opp Zeq_bool inj.
+             0%Z 1%Z Z.add Z.mul Z.sub Z.opp Z.eqb inj.
 Proof.
   destruct (InitialRing.gen_phiZ_morph (Eqsth K) (Eq_ext kadd kmul kopp) k_ring)
-    as [m0 m1 ma ms mm mo me].
+    as [m0 m1 ma ms mm mo _].
   constructor; intros; rewrite ?inj_is_gen_phiZ; auto.
+  f_equal. apply Z.eqb_eq. assumption.
 Qed.
 
 Add Ring K_ring : k_ring (morphism inj_morph, constants [inj_cst]).
@@ -118,8 +119,8 @@ Proof.
   exfalso. apply (inj_neq0 _ H). rewrite inj_sub, E. ring.
 Qed.
 
-Lemma inj_complete (a b : Z) : inj a = inj b :> K -> Zeq_bool a b = true.
-Proof. intros E. apply inj_inj in E. subst. apply Zeq_is_eq_bool. reflexivity. Qed.
+Lemma inj_complete (a b : Z) : inj a = inj b :> K -> Z.eqb a b = true.
+Proof. intros E. apply inj_inj in E. subst. apply Z.eqb_refl. Qed.
 
 Lemma pow_add (x : K) (a b : nat) : pow x (a + b) = (pow x a * pow x b)%K.
 Proof.
@@ -239,6 +240,48 @@ Proof.
   field. split; assumption.
 Qed.
 
+(** Reciprocals of linear forms: v is free of the integer variables, m is all the rest. *)
+Definition rlin (v : K) (m : Z) : K := (/ (v + inj m))%K.
+
+Lemma rlin_of w v (m : Z) : (w = v + inj m -> / w = rlin v m)%K.
+Proof. intros ->. reflexivity. Qed.
+
+(** 1/w for w = c (v + m). *)
+Lemma rlin_scaled w c v (m : Z) :
+  (c <> 0 -> v + inj m <> 0 -> w = c * (v + inj m) -> / w = / c * rlin v m)%K.
+Proof. intros C N ->. apply inv_mul; assumption. Qed.
+
+Lemma rlin_to v v' (m m' : Z) : v' = v -> m' = m -> rlin v' m' = rlin v m.
+Proof. intros -> ->. reflexivity. Qed.
+
+Lemma rlin_unit v (m : Z) : ((v + inj m <> 0) -> (v + inj m) * rlin v m = 1)%K.
+Proof. apply inv_r. Qed.
+
+(** A unit (v + m) / (v + m) put into one side of an equation: how a side that lacks
+    a reciprocal gets it. *)
+Lemma left_unit v (m : Z) x y :
+  (v + inj m <> 0 -> x * ((v + inj m) * rlin v m) = y -> x = y)%K.
+Proof. intros N <-. rewrite (rlin_unit v m N). ring. Qed.
+
+Lemma right_unit v (m : Z) x y :
+  (v + inj m <> 0 -> x = y * ((v + inj m) * rlin v m) -> x = y)%K.
+Proof. intros N ->. rewrite (rlin_unit v m N). ring. Qed.
+
+(** The same for any denominator u. *)
+Lemma left_unit_inv u x y : (u <> 0 -> x * (u * / u) = y -> x = y)%K.
+Proof. intros N <-. rewrite (inv_r K u N). ring. Qed.
+
+Lemma right_unit_inv u x y : (u <> 0 -> x = y * (u * / u) -> x = y)%K.
+Proof. intros N ->. rewrite (inv_r K u N). ring. Qed.
+
+(** Exclusions of the claim at work: x differs from every integer, from those > 0, ... *)
+Lemma neq0_integers x (v : K) (t : Z) : (forall z : Z, x <> inj z) -> (v = x - inj t -> v <> 0)%K.
+Proof. intros N E. exact (neq0_sub x (inj t) v (N t) E). Qed.
+
+Lemma neq0_integers_such (P : Z -> Prop) x (v : K) (t : Z) :
+  (forall z : Z, P z -> x <> inj z) -> P t -> (v = x - inj t -> v <> 0)%K.
+Proof. intros N T E. exact (neq0_sub x (inj t) v (N t T) E). Qed.
+
 Lemma pow_one (n : nat) : pow (1 : K)%K n = (1 : K)%K.
 Proof. induction n as [|n IH]; simpl; [reflexivity|]. rewrite IH. ring. Qed.
 
@@ -252,7 +295,8 @@ Proof.
   - rewrite IH, Nat.mul_succ_r, (pow_add K). reflexivity.
 Qed.
 
-(** (a + s) (a + s + 1) ... and (a) (a - 1) ...: explicit products for a literal d. *)
+(** a (a + 1) ..., a (a - 1) ... and (u + v j) (u + v (j + 1)) ..., d factors of each:
+    explicit products for a literal d. *)
 Fixpoint rising_terms (a : K) (d : nat) : K :=
   match d with
   | O => 1
@@ -265,10 +309,18 @@ Fixpoint falling_terms (a : K) (d : nat) : K :=
   | S e => falling_terms a e * (a - inj (Z.of_nat e))
   end%K.
 
+Fixpoint ap_terms (u v j : Z) (d : nat) : K :=
+  match d with
+  | O => inj 1
+  | S e => (ap_terms u v j e * inj (u + v * (j + Z.of_nat e)))%K
+  end.
+
 End Fields.
 
+Arguments rlin {K} v%K m%Z.
 Arguments rising_terms {K} a%K d%nat.
 Arguments falling_terms {K} a%K d%nat.
+Arguments ap_terms {K} (u v j)%Z d%nat.
 
 (** [inj_norm]: every [inj] of a compound integer term becomes a polynomial in
     [inj] of its atoms.  One proof term for each such subterm, by reflection. *)
@@ -348,7 +400,13 @@ Ltac inj_norm :=
   repeat match goal with |- context [@inj ?K ?t] => progress inj_norm_term K t end.
 
 (** Equality of polynomials in K whose atoms are integers, parameters and K-valued terms. *)
-Ltac pq := cbn [rising_terms falling_terms]; inj_norm; ring.
+Ltac pq := cbn [rising_terms falling_terms ap_terms]; inj_norm; ring.
+
+(** The same where constant denominators occur, 1/2 say. *)
+Ltac pqf := cbn [rising_terms falling_terms ap_terms]; inj_norm; field.
+
+(** Indices that contain a division by a literal, a minimum or a maximum. *)
+Ltac index := first [lia | Z.div_mod_to_equations; lia].
 
 (** From [E : c0 * r0 + ... = s1 - s0] to the same equation with a common factor b:
     the goal is [c0 * (r0 * b) + ... = s1 * b - s0 * b]. *)

@@ -31,4 +31,5 @@
 Require Export List.
 Export ListNotations.
 From Sumwright Require Export
-  Statement Scalars Products Powers Factorials Sums Induction Positivity Values.
+  Statement Scalars Products Powers Factorials Progressions Sums Induction Positivity
+  Values Continuation.

@@ -2,7 +2,7 @@
     argument of a product is left in explicit products.  [field] or [ring] ends it. *)
 
 Require Import ZArith Lia List Ring Field.
-From Sumwright Require Import Statement Scalars Products Powers Factorials Sums Induction.
+From Sumwright Require Import Statement Scalars Products Powers Factorials Progressions Sums Induction.
 Local Open Scope Z_scope.
 
 Section Values.
@@ -50,7 +50,7 @@ Lemma binomial_at n k d z :
   k = Z.of_nat d -> z * zfactorial k = zfalling_nat n d -> binomial n k = inj z :> K.
 Proof.
   intros E V. rewrite (binomial_terms_at n k d (zfactorial k) E eq_refl).
-  rewrite <- zfalling_value, <- V, inj_mul. field. apply inj_neq0, zfactorial_neq0.
+  rewrite <- zfalling_value, <- V, inj_mul. field. apply inj_neq0, zfactorial_neq0. lia.
 Qed.
 
 Lemma rising_at v m d : m = Z.of_nat d -> rising v m = rising_terms v d.
@@ -71,6 +71,13 @@ Proof. intros E. rewrite gip_ip by lia. apply ip_value, E. Qed.
 Lemma gip_at_inverse a (i j : Z) d :
   i = j + Z.of_nat d -> gip a i j = (/ rising_terms (a + inj j) d)%K.
 Proof. intros E. rewrite gip_rip by lia. unfold rip. rewrite (ip_value K a j i d E). reflexivity. Qed.
+
+Lemma ap_at_forward (u v i j : Z) d : j = i + Z.of_nat d -> ap u v i j = ap_terms u v i d :> K.
+Proof. apply ap_at. Qed.
+
+Lemma ap_at_backward (u v i j : Z) d :
+  i = j + Z.of_nat d -> ap u v i j = (/ ap_terms u v j d)%K :> K.
+Proof. apply ap_at_inverse. Qed.
 
 Lemma rip_at a (i j : Z) d : j = i + Z.of_nat d -> rip a i j = (/ rising_terms (a + inj i) d)%K.
 Proof. intros E. unfold rip. rewrite (ip_value K a i j d E). reflexivity. Qed.
@@ -167,9 +174,17 @@ Ltac value_step :=
       | _ => let d := eval vm_compute in (Z.to_nat (i - j)) in
              rewrite (gip_at_inverse K a i j d) by compute_eq
       end
+  | |- context [@ap ?K ?u ?v ?i ?j] =>
+      closed_Z i; closed_Z j;
+      lazymatch nonneg_Z (j - i) with
+      | true => let d := eval vm_compute in (Z.to_nat (j - i)) in
+                rewrite (ap_at_forward K u v i j d) by compute_eq
+      | _ => let d := eval vm_compute in (Z.to_nat (i - j)) in
+             rewrite (ap_at_backward K u v i j d) by compute_eq
+      end
   | |- context [@rip ?K ?a ?i ?j] =>
       closed_Z i; closed_Z j;
       let d := eval vm_compute in (Z.to_nat (j - i)) in rewrite (rip_at K a i j d) by compute_eq
   end.
 
-Ltac values := repeat value_step; cbn [rising_terms falling_terms]; inj_norm.
+Ltac values := repeat value_step; cbn [rising_terms falling_terms ap_terms]; inj_norm.

@@ -32,24 +32,25 @@ Proof. apply (neq0_by K _ (-1)); [pq | lia]. Qed.
 Lemma nonzero_2 : inj 2 <> 0%K.
 Proof. apply inj_neq0. lia. Qed.
 
-Lemma nonzero_denominator (k : Z) : 0 <= k -> (inj 2 * inj k + inj 1)%K <> 0%K.
+Lemma nonzero_denominator (k : Z) : 0 <= k -> (inj 0 + inj (2 * k + 1))%K <> 0%K.
 Proof. intros Hk. apply (neq0_by K _ (2 * k + 1)); [pq | lia]. Qed.
 
 (** ** The term, the base term and the certificate *)
 
 Definition term (n k : Z) : K :=
   (zpow (- inj 1) k * factorial n * rfactorial k * rfactorial (n - k) *
-   / (inj 2 * inj k + inj 1))%K.
+   rlin (inj 0) (2 * k + 1))%K.
 
 Lemma summand_term (n k : Z) : 0 <= n -> summand n k = term n k.
 Proof.
   intros Hn. unfold summand, term. rewrite (div_inv K _ (inj 2 * inj k + inj 1)%K).
+  rewrite (rlin_of K (inj 2 * inj k + inj 1)%K (inj 0) (2 * k + 1)) by pq.
   rewrite (binomial_to K n k (n - k)) by lia. ring.
 Qed.
 
 Definition base (n k : Z) : K :=
   (zpow (- inj 1) k * factorial n * rfactorial k * rfactorial (n + 1 - k) *
-   / (inj 2 * inj k + inj 1))%K.
+   rlin (inj 0) (2 * k + 1))%K.
 
 Definition a0 (n : K) : K := (- inj 2 * n - inj 2)%K.
 Definition a1 (n : K) : K := (inj 2 * n + inj 3)%K.
@@ -82,16 +83,9 @@ Proof.
   rewrite (rfact_to K 1 (k + 1) k (inj k + inj 1)%K) by first [lia | pq].
   rewrite (rfact_to K 1 (n + 1 - k) (n + 1 - (k + 1)) (inj n + inj 1 - inj k)%K)
     by first [lia | pq].
-  transitivity (inj 1 * inj (k + 1) * (inj n + inj 1 - inj k) * zpow (- inj 1) k * factorial n *
-     rfactorial (k + 1) * rfactorial (n + 1 - k) *
-     ((inj 2 * inj (k + 1) + inj 1) * / (inj 2 * inj (k + 1) + inj 1)))%K;
-    [ring|].
-  rewrite (inv_r K (inj 2 * inj (k + 1) + inj 1)%K) by (apply nonzero_denominator; lia).
-  transitivity ((inj k + inj 1) * (inj n + inj 1 - inj k) * zpow (- inj 1) k * factorial n *
-     rfactorial (k + 1) * rfactorial (n + 1 - k) *
-     ((inj 2 * inj k + inj 1) * / (inj 2 * inj k + inj 1)))%K; [|ring].
-  rewrite (inv_r K (inj 2 * inj k + inj 1)%K) by (apply nonzero_denominator; lia).
-  rewrite (inj_add K k 1). ring.
+  apply (left_unit K (inj 0) (2 * k + 1)); [apply nonzero_denominator; lia|].
+  apply (right_unit K (inj 0) (2 * (k + 1) + 1)); [apply nonzero_denominator; lia|].
+  inj_norm. ring.
 Qed.
 
 (** ** The polynomial equality *)
@@ -194,7 +188,9 @@ Qed.
 
 Lemma defined (n : Z) : 0 <= n ->
   (forall k : Z, 0 <= k <= n -> (inj 2 * inj k + inj 1)%K <> 0%K) /\ 0 <= n.
-Proof. intros Hn. split; [intros k Hk; apply nonzero_denominator|]; lia. Qed.
+Proof.
+  intros Hn. split; [intros k Hk; apply (neq0_by K _ (2 * k + 1)); [pq|]|]; lia.
+Qed.
 
 End Claim.
 

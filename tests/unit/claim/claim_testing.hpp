@@ -12,11 +12,11 @@
 
 #include "claim/reader.hpp"
 
-namespace sumwright::claim::testing {
+namespace sumwright::claim::test {
 
 /// A claim with every key of format 1. Line numbers matter to the tests.
 inline std::string full_claim() {
-  return R"(format  = 1
+  return R"toml(format  = 1
 title   = "Squares along one row"
 running = "n"
 from    = 0
@@ -43,7 +43,7 @@ authors = ["A. Author", "B. Author"]
 source  = "A Journal 1 (2020), 1-2"
 identifier = "doi:10.0/0"
 licence = "CC0-1.0"
-)";
+)toml";
 }
 
 /// `text` with the first `from` replaced; fails the test when there is none.
@@ -112,4 +112,4 @@ inline std::size_t test_effort(std::size_t cases) {
   return count < 1 ? 1 : static_cast<std::size_t>(count);
 }
 
-}  // namespace sumwright::claim::testing
+}  // namespace sumwright::claim::test

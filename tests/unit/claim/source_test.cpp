@@ -33,7 +33,9 @@ TEST(SourcePosition, CountsLinesAndCharacters) {
 }
 
 TEST(SourcePosition, SkipsTheByteOrderMark) {
-  const Source source{"f", "\xEF\xBB\xBF" "ab\r\nc"};
+  const Source source{"f",
+                      "\xEF\xBB\xBF"
+                      "ab\r\nc"};
   expect_position(source, 0, 1, 1);
   expect_position(source, 3, 1, 1);
   expect_position(source, 4, 1, 2);
@@ -43,7 +45,9 @@ TEST(SourcePosition, SkipsTheByteOrderMark) {
 TEST(SourcePosition, EmptyText) { expect_position({"f", ""}, 5, 1, 1); }
 
 TEST(SourceLine, HasNoLineBreakAndNoByteOrderMark) {
-  const Source source{"f", "\xEF\xBB\xBF" "ab\r\nc\n\n"};
+  const Source source{"f",
+                      "\xEF\xBB\xBF"
+                      "ab\r\nc\n\n"};
   EXPECT_EQ(source.line(0), "ab");
   EXPECT_EQ(source.line(5), "ab");
   EXPECT_EQ(source.line(7), "c");

@@ -129,8 +129,7 @@ proof::BalanceTerm similar_term(proof::BalanceTerm term, std::size_t group, Fact
 proof::InitialValue value_one() {
   proof::InitialValue out;
   out.at = 0;
-  out.low = 0;
-  out.high = 0;
+  out.sums = {{0, 0, 0, {}, {}}};
   out.value = 1;
   out.balance.id = "initial_0";
   const Product one = product(times(1), {});

@@ -1,0 +1,434 @@
+// The ladder: terms, refutation, evidence, argument, Proof.
+// Invariant: `established` is set in one place, after a complete attempt; everything else is refuted with
+// a point, or undecided with a reason.
+
+#include "proof/build.hpp"
+
+#include <fmt/format.h>
+
+#include "claim/reader.hpp"
+#include "proof/argument.hpp"
+#include "proof/evidence.hpp"
+#include "term/evaluation.hpp"
+#include "term/text.hpp"
+
+namespace sumwright::proof {
+
+using namespace building;
+using Poly = algebra::Polynomial;
+using algebra::RationalFunction;
+
+namespace {
+
+constexpr long first_values = 12;
+
+Counterexample from_difference(const term::Difference& d, const std::string& what) {
+  const auto show = [](const term::Value& v) {
+    return v.number ? v.number->get_str() : "no value: " + v.why_not;
+  };
+  return {d.at, show(d.left), show(d.right), what};
+}
+
+class Builder {
+ public:
+  Builder(std::shared_ptr<const claim::Claim> claim, const BuildOptions& options)
+      : claim_(std::move(claim)), options_(options) {}
+
+  Proof run() {
+    proof_.claim = claim_;
+    if (!claim_->from.fits_slong_p()) return undecided("`from` is too large", "");
+    proof_.from = claim_->from.get_si();
+    if (!claim_->is_question() && refuted_by_values({})) return proof_;
+    if (claim_->sum.over.size() > 1)
+      return undecided("sums over several indices are not decided yet", "section 4");
+    if (claim_->other_sum)
+      return undecided("an equality of two sums needs a common recurrence of both sides",
+                       "sum = sum (rule R8, common left multiple)");
+    if (!make_terms()) return proof_;
+    if (claim_->is_question()) return answer_question();
+    if (claim_->is_equality()) return prove_equality();
+    return prove_recurrence();
+  }
+
+ private:
+  void stage(const std::string& name) const {
+    options_.deadline.check();
+    if (options_.progress) options_.progress(name);
+  }
+
+  Proof undecided(const std::string& reason, const std::string& settle) {
+    proof_.verdict = Verdict::undecided;
+    proof_.reason = reason;
+    proof_.would_settle = settle;
+    return proof_;
+  }
+
+  /// Values of the claim itself at small n and at the places where the argument met something special.
+  bool refuted_by_values(const std::vector<mpz_class>& also) {
+    stage("values");
+    const bool equality = claim_->is_equality();
+    std::optional<term::Difference> d;
+    try {
+      d = term::refute(*claim_, first_values, 6, also, options_.deadline);
+    } catch (const std::length_error&) {
+      return false;  // values too large to compute decide nothing
+    }
+    if (!d) return false;
+    proof_.verdict = Verdict::refuted;
+    proof_.subject = Subject::claim;
+    proof_.counterexample =
+        from_difference(*d, equality ? "the claimed equality" : "the claimed recurrence");
+    proof_.reason = "the two sides of the claim differ at a point";
+    if (!d->left.number || !d->right.number)
+      proof_.reason = "a side of the claim has no value at a point";
+    return true;
+  }
+
+  bool make_terms() {
+    stage("terms");
+    term::Setting setting = term::make_setting(claim_);
+    proof_.symbols = setting.symbols;
+    std::optional<AuthorRange> range;
+    term::Facts region = setting.from(proof_.from);
+    if (setting.has_index) {
+      const claim::Range& r = claim_->sum.over[0];
+      for (const claim::Bound* b : {&r.low, &r.high})
+        if (b->kind != claim::Bound::Kind::finite) {
+          undecided("a range without a finite end needs a proved finite one",
+                    "R11: infinite ranges, at " + place_text(b->place));
+          return false;
+        }
+      const std::optional<term::End> low = term::make_end(setting, r.low, false);
+      const std::optional<term::End> high = term::make_end(setting, r.high, true);
+      if (!low || !high) {
+        undecided("an end of the range nests floor in a way that is not linear",
+                  "R9: residues, at " + place_text(r.place));
+        return false;
+      }
+      for (const term::End* end : {&*low, &*high})
+        if (end->inside.size() == 1)
+          for (const term::Affine& form : end->inside[0]) region.add(form);
+      range = AuthorRange{*low, *high};
+    }
+    term::Conversion summand = term::convert(setting, region, claim_->sum.summand);
+    std::optional<term::Conversion> closed;
+    if (claim_->closed) closed = term::convert(setting, setting.from(proof_.from), claim_->closed);
+    terms_ = std::make_unique<Terms>(Terms{std::move(setting), range, region, proof_.from,
+                                           std::move(summand), std::move(closed)});
+    return conversions_settled();
+  }
+
+  bool conversions_settled() {
+    const term::Requirement* open = terms_->summand.open();
+    const char* what = "summand";
+    if (open == nullptr && terms_->closed) {
+      open = terms_->closed->open();
+      what = "closed form";
+    }
+    if (open == nullptr) {
+      if (terms_->summand.products.empty()) {
+        undecided("the summand is identically zero", "nothing to sum");
+        return false;
+      }
+      return true;
+    }
+    assemble_conversion(*terms_, proof_);
+    const std::string condition = open->nonnegative
+                                      ? term::text(terms_->setting, *open->nonnegative) + " >= 0"
+                                      : open->nonzero->to_string() + " != 0";
+    undecided(fmt::format("the {} needs {} at {}", what, condition, place_text(open->place)),
+              "R3 or R4, or a hypothesis of the author");
+    return false;
+  }
+
+  [[nodiscard]] std::string place_text(claim::Place place) const {
+    const claim::Source::Position p = claim_->source->position(place.offset);
+    return fmt::format("{}:{}:{}", claim_->source->name, p.line, p.column);
+  }
+
+  // ------------------------------------------------------------ the three kinds of claim
+
+  Proof prove_equality() {
+    if (!claim_->evidence.recurrence.empty()) return with_brought_evidence(true);
+    return search_and_prove(true);
+  }
+
+  Proof prove_recurrence() { return with_brought_evidence(false); }
+
+  Proof with_brought_evidence(bool equality) {
+    stage("evidence");
+    BroughtEvidence brought = read_evidence(*terms_, *claim_);
+    proof_.evidence_brought = true;
+    if (brought.draft.right_side)
+      if (const term::Requirement* open = brought.draft.right_side->open())
+        return undecided("the right side needs a condition at " + place_text(open->place),
+                         "a hypothesis of the author");
+    while (equality && brought.draft.coefficients.size() > 1 &&
+           brought.draft.coefficients.back().is_zero())
+      brought.draft.coefficients.pop_back();
+    if (terms_->range && !brought.has_certificate) {
+      stage("certificate");
+      brought.draft.certificate = search::find_certificate(
+          terms_->setting.ring, shift_quotients(*terms_), brought.draft.coefficients,
+          options_.deadline);
+      if (!brought.draft.certificate) {
+        if (equality) return search_and_prove(true);
+        return undecided("the claimed recurrence is not a telescoper of the summand",
+                         "sum = sum: deducing it from the recurrence that `find` gives");
+      }
+    }
+    if (!equality) state_recurrence(brought);
+    const Attempt tried = attempt(*terms_, brought.draft, equality, options_.deadline);
+    return report(tried, equality);
+  }
+
+  Proof answer_question() {
+    proof_.question = true;
+    return search_and_prove(false);
+  }
+
+  Proof search_and_prove(bool equality) {
+    const search::ShiftQuotients quotients = terms_->range
+                                                 ? shift_quotients(*terms_)
+                                                 : pointwise_quotients();
+    std::optional<Attempt> first;
+    if (!terms_->range) return pointwise(equality);
+    for (EvidenceDraft& evidence : fallback_last(quotients, equality)) {
+      const Attempt tried = try_found(evidence, equality);
+      if (tried.outcome == Attempt::Outcome::complete) return report(tried, equality);
+      if (!first) first = tried;
+    }
+    if (!first)
+      return undecided(fmt::format("no recurrence of order up to {} was found", options_.max_order),
+                       "a larger --max-order, or another representation of the sum");
+    return report(*first, equality);
+  }
+
+  [[nodiscard]] search::ShiftQuotients pointwise_quotients() const {
+    return {term::shift_quotient(terms_->setting.ring, terms_->summand.products[0], term::running),
+            {}};
+  }
+
+  /// Candidates, best first: the telescoper of least order; for summands free of n the difference
+  /// S(n+1) - S(n), whose certificate is 0 and whose leading coefficient never vanishes; the next order.
+  std::vector<EvidenceDraft> fallback_last(const search::ShiftQuotients& quotients, bool equality) {
+    stage("search");
+    const algebra::RingPtr& ring = terms_->setting.ring;
+    std::vector<EvidenceDraft> out;
+    search::SearchOptions options;
+    options.max_order = options_.max_order;
+    options.deadline = options_.deadline;
+    if (options_.progress)
+      options.progress = [this](unsigned order) {
+        options_.progress(fmt::format("search, order {}", order));
+      };
+    const auto found = search::find_telescoper(ring, quotients, options);
+    if (found) out.push_back({found->coefficients, found->certificate, std::nullopt, false});
+    const bool free_of_n = quotients.by_running.factors.empty() && quotients.by_running.constant == 1;
+    if (free_of_n)
+      out.push_back({{Poly(ring, mpz_class(-1)), Poly(ring, mpz_class(1))},
+                     RationalFunction(ring, mpq_class(0)), std::nullopt, false});
+    (void)equality;
+    return out;
+  }
+
+  Attempt try_found(const EvidenceDraft& evidence, bool equality) {
+    stage("argument");
+    if (equality) return attempt(*terms_, evidence, true, options_.deadline);
+    return question_attempt(evidence);
+  }
+
+  /// A found recurrence becomes the claim: its right side is what the ends give.
+  Attempt question_attempt(EvidenceDraft evidence) {
+    // A first pass tells the right side; it fails at the ends when that is not 0.
+    Attempt probe = attempt(*terms_, evidence, false, options_.deadline);
+    if (probe.outcome == Attempt::Outcome::complete && probe.draft.right_side_text == "0") {
+      state_found(evidence, "0", nullptr);
+      return probe;
+    }
+    if (probe.outcome == Attempt::Outcome::ends_fail ||
+        probe.outcome == Attempt::Outcome::complete)
+      return with_right_side(evidence, probe);
+    return probe;
+  }
+
+  Attempt with_right_side(EvidenceDraft evidence, const Attempt& probe) {
+    const algebra::RingPtr& ring = terms_->setting.ring;
+    if (probe.draft.telescoping && !probe.draft.telescoping->weight.factors.empty()) {
+      // Clear the weight into the coefficients, so that the right side has no denominator to lose.
+      const Poly weight = probe.draft.telescoping->weight.numerator(ring);
+      for (Poly& a : evidence.coefficients) a *= weight;
+      evidence.certificate = *evidence.certificate * RationalFunction(weight);
+      const Attempt again = attempt(*terms_, evidence, false, options_.deadline);
+      if (again.draft.right_side_text == "0") return again;
+      return conclude_question(evidence, again.draft.right_side_text);
+    }
+    return conclude_question(evidence, probe.draft.right_side_text);
+  }
+
+  Attempt conclude_question(EvidenceDraft evidence, const std::string& right_side) {
+    const claim::ExpressionPtr b = parse(right_side);
+    evidence.right_side = term::convert(terms_->setting, terms_->setting.from(proof_.from), b);
+    if (evidence.right_side->open() != nullptr) {
+      Attempt stuck;
+      stuck.why = "the right side " + right_side + " has no value on the whole range";
+      stuck.rule = "R5: a recurrence from a later n on";
+      return stuck;
+    }
+    state_found(evidence, right_side, b);
+    return attempt(*terms_, evidence, false, options_.deadline);
+  }
+
+  [[nodiscard]] claim::ExpressionPtr parse(const std::string& text) const {
+    std::vector<std::string> names{claim_->running};
+    for (const claim::Parameter& p : claim_->parameters) names.push_back(p.name);
+    const claim::Source source{"recurrence", text};
+    return claim::parse_expression(source, {0, text.size()}, names);
+  }
+
+  /// The recurrence as the theorem states it.
+  void state_found(const EvidenceDraft& evidence, const std::string& right_side,
+                   const claim::ExpressionPtr& b) {
+    auto stated = std::make_shared<claim::Claim>(*claim_);
+    stated->evidence.recurrence.clear();
+    for (const Poly& a : evidence.coefficients)
+      stated->evidence.recurrence.push_back(parse(term::claim_text(algebra::factor(a))));
+    stated->evidence.right_side = b ? b : parse(right_side);
+    proof_.claim = stated;
+  }
+
+  /// A claimed recurrence with denominators is stated with them cleared.
+  void state_recurrence(BroughtEvidence& brought) {
+    bool divides = false;
+    for (const claim::ExpressionPtr& e : claim_->evidence.recurrence)
+      divides = divides || has_division(*e);
+    if (!divides) return;
+    auto stated = std::make_shared<claim::Claim>(*claim_);
+    stated->evidence.recurrence.clear();
+    for (const Poly& a : brought.draft.coefficients)
+      stated->evidence.recurrence.push_back(parse(term::claim_text(algebra::factor(a))));
+    if (claim_->evidence.right_side && !brought.cleared.is_one()) {
+      const std::string text = fmt::format("({})*({})", brought.cleared.to_string(),
+                                           claim::to_text(*claim_->evidence.right_side));
+      stated->evidence.right_side = parse(text);
+      brought.draft.right_side = term::convert(
+          terms_->setting, terms_->setting.from(proof_.from), stated->evidence.right_side);
+      if (brought.draft.right_side->products.empty()) brought.draft.right_side.reset();
+    }
+    proof_.claim = stated;
+  }
+
+  static bool has_division(const claim::Expression& e) {
+    if (e.operation == claim::Operation::divide) return true;
+    if (e.operation == claim::Operation::power &&
+        e.children[1]->operation == claim::Operation::negate)
+      return true;
+    for (const claim::ExpressionPtr& c : e.children)
+      if (has_division(*c)) return true;
+    return false;
+  }
+
+  /// Without an index the sum is the summand: order 0, or the order-1 recurrence of a question.
+  Proof pointwise(bool equality) {
+    const algebra::RingPtr& ring = terms_->setting.ring;
+    EvidenceDraft evidence;
+    evidence.coefficients = {Poly(ring, mpz_class(1))};
+    if (!equality) {
+      if (terms_->summand.products.size() != 1)
+        return undecided("a question needs one hypergeometric term", "");
+      const algebra::Factored q = pointwise_quotients().by_running;
+      evidence.coefficients = {-q.numerator(ring), q.denominator(ring)};
+      state_found(evidence, "0", nullptr);
+    }
+    return report(attempt(*terms_, evidence, equality, options_.deadline), equality);
+  }
+
+  // ------------------------------------------------------------ verdicts
+
+  Proof report(const Attempt& tried, bool equality) {
+    describe_evidence(tried.draft);
+    switch (tried.outcome) {
+      case Attempt::Outcome::complete:
+        assemble(*terms_, tried.draft, equality, proof_);
+        return established();
+      case Attempt::Outcome::identity_fails:
+        diagnose_identity(*terms_, *claim_, tried.draft.evidence,
+                          tried.draft.telescoping->residue, options_.deadline, proof_);
+        return proof_;
+      case Attempt::Outcome::ends_fail: return ends_fail(tried, equality);
+      case Attempt::Outcome::closed_fails:
+      case Attempt::Outcome::initial_fails: return false_somewhere(tried);
+      case Attempt::Outcome::stuck: break;
+    }
+    if (!claim_->is_question() && refuted_by_values(special_values(tried))) return proof_;
+    assemble_conversion(*terms_, proof_);
+    return undecided(tried.why, tried.rule);
+  }
+
+  Proof established() {
+    for (const Condition& c : proof_.conditions)
+      if (c.settled == Settled::open)
+        return undecided(fmt::format("the condition {} ({}) is open", c.id, c.text), "");
+    proof_.verdict = Verdict::established;
+    return proof_;
+  }
+
+  void describe_evidence(const ArgumentDraft& draft) {
+    proof_.recurrence_text.clear();
+    for (const Poly& a : draft.evidence.coefficients)
+      proof_.recurrence_text.push_back(term::claim_text(algebra::factor(a)));
+    proof_.right_side_text = draft.right_side_text;
+    if (draft.evidence.certificate)
+      proof_.certificate_text = draft.evidence.certificate->is_zero()
+                                    ? "0"
+                                    : term::claim_text(draft.evidence.certificate->factored());
+  }
+
+  /// The identity is right, but sum a_i S(n+i) is not b.
+  Proof ends_fail(const Attempt& tried, bool equality) {
+    const claim::Claim recurrence = as_recurrence_claim(*claim_);
+    const auto point = term::refute(recurrence, first_values, 6, {}, options_.deadline);
+    if (!point)
+      return undecided("the ends of the sum do not give the claimed right side",
+                       "R8: terms that are similar but written differently");
+    proof_.verdict = Verdict::refuted;
+    proof_.subject = equality ? Subject::evidence : Subject::claim;
+    proof_.counterexample = from_difference(*point, "the recurrence of the sum");
+    proof_.reason = fmt::format("the certificate is right as an identity, but the right side of the "
+                                "recurrence is not; the ends give {}",
+                                tried.draft.right_side_text);
+    return proof_;
+  }
+
+  Proof false_somewhere(const Attempt& tried) {
+    std::vector<mpz_class> also;
+    for (long n = 0; n < 60; ++n) also.emplace_back(proof_.from + n);
+    for (long n = tried.at - 2; n <= tried.at + 2; ++n)
+      if (n >= proof_.from) also.emplace_back(n);
+    if (refuted_by_values(also)) return proof_;
+    return undecided(tried.outcome == Attempt::Outcome::initial_fails
+                         ? fmt::format("the values at {} do not agree as written", tried.at)
+                         : "the closed form does not satisfy the recurrence as written",
+                     "R8: terms that are similar but written differently");
+  }
+
+  [[nodiscard]] std::vector<mpz_class> special_values(const Attempt& tried) const {
+    std::vector<mpz_class> out;
+    for (long n = 0; n < 40; ++n) out.emplace_back(proof_.from + n);
+    if (tried.at >= proof_.from) out.emplace_back(tried.at);
+    return out;
+  }
+
+  std::shared_ptr<const claim::Claim> claim_;
+  const BuildOptions& options_;
+  std::unique_ptr<Terms> terms_;
+  Proof proof_;
+};
+
+}  // namespace
+
+Proof build(std::shared_ptr<const claim::Claim> claim, const BuildOptions& options) {
+  return Builder(std::move(claim), options).run();
+}
+
+}  // namespace sumwright::proof

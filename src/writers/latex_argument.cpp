@@ -1,0 +1,248 @@
+// The core of the proof: certificate, base term, the polynomial equality, summation over the range.
+#include <fmt/format.h>
+
+#include "writers/latex_document.hpp"
+#include "writers/latex_text.hpp"
+#include "writers/print_text.hpp"
+
+namespace sumwright::writers {
+
+namespace {
+
+constexpr double kExplicit = 6 * kRoom;  // the equality is written out up to six lines
+
+// A product of two factored polynomials, side by side.
+[[nodiscard]] Formula side_by_side(Formula first, Formula second) {
+  const std::string tex = inline_tex(first);
+  if (tex == "1") return second;
+  if (inline_tex(second) == "1") return first;
+  if (tex == "-1") first = piece("-", 0.8);
+  if (starts_with_minus(second)) second = bracketed(second);
+  const char start = second.front().tex[0];
+  const bool digit = start >= '0' && start <= '9';
+  if (digit && inline_tex(first) != "-") prepend_tex(second, "\\cdot ", 0.8);
+  second.front().product = true;
+  if (inline_tex(first) == "-") {
+    prepend_tex(second, "-", 0.8);
+    return second;
+  }
+  append(first, second, 1);
+  return first;
+}
+
+// `factor` times a function such as B(n,k).
+[[nodiscard]] Formula times(Formula factor, const Formula& function) {
+  const std::string tex = inline_tex(factor);
+  if (tex == "1") return function;
+  if (tex == "-1") factor = piece("-", 0.8);
+  append_tex(factor, "\\," + inline_tex(function), width_of(function) + 0.2);
+  return factor;
+}
+
+}  // namespace
+
+bool LatexDocument::weight_is_one() const {
+  return proof_.telescoping->weight.polynomial.factors.empty() &&
+         proof_.telescoping->weight.polynomial.constant == 1;
+}
+
+void LatexDocument::coefficient_list() {
+  std::vector<DisplayRow> rows;
+  const auto& coefficients = proof_.telescoping->coefficients;
+  for (std::size_t i = 0; i < coefficients.size(); ++i) {
+    rows.push_back({piece(fmt::format("{}_{{{}}}({})", names_.letter('a'), i, running(0)), 2.8),
+                    values_.factored(coefficients[i])});
+  }
+  say(display_list(rows, "."));
+}
+
+void LatexDocument::certificate() {
+  if (!proof_.telescoping) return;
+  head("The certificate");
+  const std::string f = inline_tex(at('F', 0));
+  say(fmt::format("Let ${}$ be the summand{} and put\n", f,
+                  claim_.is_equality() ? ", let $" + inline_tex(of_running('S', 0)) + "$ be the sum," : ""));
+  coefficient_list();
+  const std::string method =
+      proof_.evidence_brought ? "The following was given with the claim and has been checked. "
+      : proof_.order == 0 ? "The following was found by Gosper's algorithm for indefinite sums. "
+                          : "The following was found by Zeilberger's method of creative telescoping. ";
+  Formula left;
+  for (std::size_t i = 0; i < proof_.telescoping->coefficients.size(); ++i) {
+    const Formula function = at('F', static_cast<long>(i));
+    const Formula coefficient = piece(fmt::format("{}_{{{}}}({})", names_.letter('a'), i, running(0)), 2.8);
+    append_term(left, times(coefficient, function));
+  }
+  Formula right = at('G', 0, 1);
+  append(right, piece("-" + inline_tex(at('G', 0)), width_of(at('G', 0)) + 1.25));
+  say(method + "With $" + inline_tex(at('G', 0)) + "=" + inline_tex(at('R', 0)) + "\\," + f +
+      "$ and the rational function\n");
+  const ExpressionFormula printed = expressions_.parsed(
+      proof_.certificate_text.empty() ? "0" : proof_.certificate_text, symbol_names());
+  say(display(at('R', 0), printed.formula, label("certificate"), ""));
+  say("we have, after division by $" + f + "$, an identity of rational functions:\n");
+  say(display(left, right, label("rational"), "."));
+  say("At single integer points its terms may have zero denominators. It is therefore not used there; "
+      "what is used is the polynomial equality " + reference("equality") + ", from which "
+      "denominators have been removed as follows.\n");
+}
+
+void LatexDocument::base_term() {
+  if (!proof_.telescoping) return;
+  const proof::Telescoping& t = *proof_.telescoping;
+  head("The base term");
+  say("Put\n" + display(at('B', 0), values_.product(t.base.product), label("base"), ""));
+  std::vector<DisplayRow> rows;
+  const Formula c = at('c', 0);
+  const Formula base = at('B', 0);
+  say("and let\n" + display(c, values_.polynomial(t.certificate), label("numerator"), "."));
+  for (std::size_t i = 0; i < t.p.size(); ++i) {
+    rows.push_back({at('F', static_cast<long>(i)), times(values_.factored(t.p[i], false), base)});
+  }
+  rows.push_back({at('G', 0), times(times(values_.factored(t.down, false), c), base)});
+  rows.push_back({at('G', 0, 1), times(times(values_.factored(t.up, false), at('c', 0, 1)), base)});
+  if (!weight_is_one()) {
+    say(fmt::format("From here on, both sides of {} are multiplied by\n", reference("rational")));
+    say(display(of_running('d', 0), values_.factored(t.weight.polynomial), "", ","));
+    say("and the factor is taken into $" + inline_tex(at('G', 0)) + "$. " + nonzero_reason(t.weight));
+  }
+  const std::string& m = names_.length();
+  say(fmt::format("By ${0}!={0}\\,({0}-1)!$ for ${0}\\ge 1$, and the convention on $1/{0}!$, each of the "
+                  "following is an equality of numbers at all integers with {1}:\n",
+                  m, expressions_.mixed(t.region.text.empty() ? "no restriction" : t.region.text)));
+  say(display_list(rows, "."));
+}
+
+void LatexDocument::equality() {
+  if (!proof_.telescoping) return;
+  const proof::Telescoping& t = *proof_.telescoping;
+  head("One polynomial equality");
+  Formula left;
+  for (std::size_t i = 0; i < t.p.size(); ++i) {
+    append_term(left, side_by_side(values_.factored(t.coefficients[i], false),
+                                   values_.factored(t.p[i], false)));
+  }
+  if (width_of(left) > kExplicit) {
+    left.clear();
+    for (std::size_t i = 0; i < t.p.size(); ++i) {
+      append_term(left, piece(fmt::format("{}_{{{}}}\\,{}_{{{}}}", names_.letter('a'), i,
+                                          names_.letter('p'), i), 2.4));
+    }
+    say(fmt::format("Write ${0}_{{i}}$ for the factor of ${1}$ in the list above, ${0}_{{i}}\\,{1}$ being the "
+                    "term with ${2}+i$. ", names_.letter('p'), inline_tex(at('B', 0)), running(0)));
+  }
+  if (!weight_is_one()) {
+    left = side_by_side(values_.factored(t.weight.polynomial, false), bracketed(left));
+  }
+  Formula right;
+  if (t.certificate.terms.empty()) {
+    right = piece("0", 0.52);
+  } else {
+    right = times(values_.factored(t.up, false), at('c', 0, 1));
+    Formula down = times(values_.factored(t.down, false), at('c', 0));
+    if (starts_with_minus(down)) down = bracketed(down);
+    prepend_tex(down, "-", 1.25);
+    append(right, down);
+  }
+  say(fmt::format("After division by ${}$ what remains of {} is\n", inline_tex(at('B', 0)),
+                  reference("rational")));
+  say(display(left, right, label("equality"), "."));
+  const Size size = size_of(t.normal_form);
+  std::vector<std::string> degrees;
+  for (std::size_t i = 0; i < proof_.symbols.size(); ++i) {
+    const long degree = degree_in(t.normal_form, i);
+    if (degree < 1) continue;
+    degrees.push_back(fmt::format("${}$ in ${}$", degree, names_.symbol(proof_.symbols[i].name).tex));
+  }
+  if (size.terms == 0) {
+    say("Both sides are the zero polynomial. ");
+  } else {
+    Formula expanded = values_.polynomial(t.normal_form);
+    if (t.normal_scale != 1) {
+      proof::Factored scale;
+      scale.constant = t.normal_scale;
+      expanded = side_by_side(values_.factored(scale), bracketed(expanded));
+    }
+    say("Both sides, multiplied out, are\n" + display(expanded, {}, "", ""));
+    say(fmt::format("({} {}{}{}). ", size.terms, size.terms == 1 ? "term" : "terms",
+                    degrees.empty() ? "" : ", of degree ", enumeration(degrees)));
+  }
+  if (values_.abbreviated() > 0) {
+    say(fmt::format("Dots stand for terms that are not printed: all polynomials are in full in the "
+                    "file \\texttt{{obligations.txt}}, whose SHA-256 is given at the end. "));
+  }
+  Formula sum;
+  for (std::size_t i = 0; i < t.coefficients.size(); ++i) {
+    append_term(sum, times(piece(fmt::format("{}_{{{}}}({})", names_.letter('a'), i, running(0)), 2.8),
+                           at('F', static_cast<long>(i))));
+  }
+  if (!weight_is_one()) sum = side_by_side(of_running('d', 0), bracketed(sum));
+  Formula difference = at('G', 0, 1);
+  append(difference, piece("-" + inline_tex(at('G', 0)), width_of(at('G', 0)) + 1.25));
+  say(fmt::format("This is an equality of polynomials, so no point is an exception to it. Multiplied by "
+                  "${}$ it gives\n", inline_tex(at('B', 0))));
+  say(display(sum, difference, label("telescoping"), ""));
+  say("for all integers with " +
+      expressions_.mixed(t.region.text.empty() ? "no restriction" : t.region.text) + ".\n");
+}
+
+std::string LatexDocument::vanishing_clause(const proof::Vanishing& vanishing) {
+  std::vector<std::string> atoms;
+  for (const proof::Atom& atom : vanishing.atoms) {
+    atoms.push_back("${1/" + inline_tex(values_.atom(atom)) + "}=0$");
+  }
+  return "because " + enumeration(atoms) + " there (" + latex_text(vanishing.condition) + ")";
+}
+
+std::string LatexDocument::range_sentence(const proof::RangeStep& step) {
+  const proof::Telescoping& t = *proof_.telescoping;
+  const auto shift = static_cast<long>(step.shift);
+  const std::string k = names_.symbol(proof_.symbols[1].name).tex;
+  const auto bound = [&](const proof::Affine& affine, long by) {
+    proof::Affine moved = affine;
+    moved.constant += by;
+    return inline_tex(values_.affine(moved));
+  };
+  const std::string f = names_.letter('F');
+  std::string text = fmt::format("${} = \\sum_{{{}={}}}^{{{}}} {}", inline_tex(of_running('S', shift)),
+                                 k, bound(t.low, 0), bound(t.high, 0), inline_tex(at('F', shift)));
+  const auto add_points = [&](unsigned points, bool upper) {
+    for (unsigned j = 1; j <= points && points <= 3; ++j) {
+      const long by = upper ? static_cast<long>(j) : -static_cast<long>(j);
+      text += fmt::format(" + {}({},{})", f, running(shift), bound(upper ? t.high : t.low, by));
+    }
+    if (points <= 3) return;
+    const long last = upper ? static_cast<long>(points) : -static_cast<long>(points);
+    text += fmt::format(" + {0}({1},{2}) + \\cdots + {0}({1},{3})", f, running(shift),
+                        bound(upper ? t.high : t.low, upper ? 1 : -1),
+                        bound(upper ? t.high : t.low, last));
+  };
+  add_points(step.low_points, false);
+  add_points(step.high_points, true);
+  text += "$";
+  if (step.below) text += "; below this range the summand is $0$, " + vanishing_clause(*step.below);
+  if (step.above) text += "; above this range the summand is $0$, " + vanishing_clause(*step.above);
+  return text;
+}
+
+void LatexDocument::summation() {
+  if (!proof_.telescoping || proof_.ranges.empty()) return;
+  const proof::Telescoping& t = *proof_.telescoping;
+  const std::string k = names_.symbol(proof_.symbols[1].name).tex;
+  proof::Affine beyond = t.high;
+  ++beyond.constant;
+  head("Summation");
+  say(fmt::format("Let ${}\\ge {}$ and sum {} over ${}\\le {}\\le {}$. The right side telescopes to "
+                  "${}({},{})-{}({},{})$. On the left,\n\\begin{{itemize}}\n",
+                  running(0), proof_.threshold, reference("telescoping"),
+                  inline_tex(values_.affine(t.low)), k, inline_tex(values_.affine(t.high)),
+                  names_.letter('G'), running(0), inline_tex(values_.affine(beyond)),
+                  names_.letter('G'), running(0), inline_tex(values_.affine(t.low))));
+  for (std::size_t i = 0; i < proof_.ranges.size(); ++i) {
+    const bool last = i + 1 == proof_.ranges.size();
+    say("\\item " + range_sentence(proof_.ranges[i]) + (last ? "." : ",") + "\n");
+  }
+  say("\\end{itemize}\n");
+}
+
+}  // namespace sumwright::writers

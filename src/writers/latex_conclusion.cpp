@@ -1,0 +1,217 @@
+// The end of the proof: boundary terms, closed form, leading coefficient, initial values, induction.
+#include <fmt/format.h>
+
+#include "writers/latex_document.hpp"
+#include "writers/latex_text.hpp"
+
+namespace sumwright::writers {
+
+namespace {
+
+constexpr std::size_t kListed = 12;  // initial values and terms shown one by one
+
+[[nodiscard]] std::string base_name(const LatexNames& names, std::size_t group) {
+  return fmt::format("{}_{{{}}}", names.letter('E'), group + 1);
+}
+
+}  // namespace
+
+std::string LatexDocument::zero_reason(const proof::BalanceTerm& term) {
+  if (!term.zero_atom) return "a polynomial factor is $0$";
+  return "${1/" + inline_tex(values_.atom(*term.zero_atom)) + "}=0$ (" + latex_text(*term.zero) + ")";
+}
+
+void LatexDocument::balance_zeros(const proof::Balance& balance) {
+  std::string items;
+  for (const proof::BalanceTerm& term : balance.terms) {
+    if (!term.zero) continue;
+    items += fmt::format("\\item ${}=0$, because {}.\n", inline_tex(expressions_.math(term.text)),
+                         zero_reason(term));
+  }
+  if (items.empty()) return;
+  say("These terms vanish:\n\\begin{itemize}\n" + items + "\\end{itemize}\n");
+}
+
+void LatexDocument::balance_group(const proof::Balance& balance, const proof::BalanceGroup& group) {
+  const auto position = static_cast<std::size_t>(&group - balance.groups.data());
+  const bool trivial = group.base.product.atoms.empty();
+  const Formula base = piece(base_name(names_, position), 1.2);
+  if (!trivial) {
+    say("With\n" + display(base, values_.product(group.base.product), "", ""));
+    say(balance.groups.size() == 1 ? "the terms that remain are\n" : "the similar terms are\n");
+  } else {
+    say("The terms without factorials and powers are\n");
+  }
+  std::vector<DisplayRow> rows;
+  Formula sum;
+  for (std::size_t m = 0; m < group.members.size(); ++m) {
+    Formula share = values_.factored(group.polynomials[m], trivial);
+    append_term(sum, LatexValues::is_sum(group.polynomials[m]) ? bracketed(values_.factored(group.polynomials[m])) : share);
+    if (!trivial) {
+      const std::string tex = inline_tex(share);
+      if (tex == "1") share = piece("", 0);
+      if (tex == "-1") share = piece("-", 0.8);
+      append_tex(share, "\\," + inline_tex(base), 1.4);
+    }
+    rows.push_back({expressions_.math(balance.terms[group.members[m]].text), share});
+  }
+  say(display_list(rows, ","));
+  if (group.members.size() > 1 && width_of(sum) < 3 * kRoom) {
+    say("and\n" + display(sum, piece("0", 0.52), "", "."));
+  } else {
+    say("and their coefficients add up to $0$.\n");
+  }
+}
+
+void LatexDocument::balance(const proof::Balance& balance) {
+  balance_zeros(balance);
+  if (balance.groups.size() > 1) {
+    say(fmt::format("The other terms fall into {} classes of similar terms, each of which adds up to $0$ "
+                    "by itself. ", balance.groups.size()));
+  }
+  for (const proof::BalanceGroup& group : balance.groups) balance_group(balance, group);
+}
+
+void LatexDocument::ends() {
+  if (!proof_.ends) return;
+  const bool one = !proof_.telescoping || weight_is_one();
+  head("The ends of the range");
+  say(fmt::format("It remains to collect the values of ${}$ at the ends and the single terms above, and to "
+                  "compare them with the right side of {}{}. ", names_.letter('G'), reference("claim"),
+                  one ? "" : " times $" + inline_tex(of_running('d', 0)) + "$"));
+  say("Written on one side, they add up to $0$, as follows. ");
+  balance(*proof_.ends);
+}
+
+void LatexDocument::closed_form() {
+  if (!proof_.closed_recurrence) return;
+  head("The closed form");
+  const std::string s = names_.letter('S');
+  const std::string c = names_.letter('C');
+  say(fmt::format("Write ${}$ for the right side of {}; in factorials and powers,\n",
+                  inline_tex(of_running('C', 0)), reference("claim")));
+  Formula closed;
+  for (const proof::Product& product : proof_.closed ? proof_.closed->products : std::vector<proof::Product>{}) {
+    append_term(closed, values_.product(product));
+  }
+  say(display(of_running('C', 0), closed, "", "."));
+  Formula sum;
+  for (std::size_t i = 0; i < proof_.telescoping->coefficients.size(); ++i) {
+    const auto shift = static_cast<long>(i);
+    append_term(sum, piece(fmt::format("{}_{{{}}}({})\\bigl({}({})-{}({})\\bigr)", names_.letter('a'), i,
+                                       running(0), s, running(shift), c, running(shift)),
+                           8.5 + (i == 0 ? 0 : 3)));
+  }
+  say("We claim that\n" + display(sum, piece("0", 0.52), label("difference"), ""));
+  say(fmt::format("for ${}\\ge {}$. By the summation above, this says that the values of ${}$ at the ends, the "
+                  "single terms and the terms with ${}$ add up to $0$. ",
+                  running(0), proof_.threshold, names_.letter('G'), c));
+  balance(*proof_.closed_recurrence);
+}
+
+std::string LatexDocument::nonzero_reason(const proof::Nonzero& nonzero) {
+  std::vector<std::string> reasons;
+  using Method = proof::NonzeroFactor::Method;
+  for (const proof::NonzeroFactor& factor : nonzero.factors) {
+    if (factor.method == Method::constant) continue;
+    std::string reason = "$" + inline_tex(values_.polynomial(factor.factor)) + "\\ne 0$ ";
+    switch (factor.method) {
+      case Method::linear:
+        reason += "on the range";
+        break;
+      case Method::positive: {
+        std::vector<std::string> moved;
+        for (std::size_t i = 0; i < factor.shift.size() && i < proof_.symbols.size(); ++i) {
+          if (factor.shift[i] == 0 || proof_.symbols[i].name.empty()) continue;
+          const std::string name = names_.symbol(proof_.symbols[i].name).tex;
+          moved.push_back(fmt::format("${}{}{}$", name, factor.shift[i] < 0 ? "" : "-", factor.shift[i] < 0 ? "+" + std::to_string(-factor.shift[i]) : std::to_string(factor.shift[i])));
+        }
+        reason += "because it is a polynomial ";
+        if (!moved.empty()) reason += "in " + enumeration(moved) + " ";
+        reason += factor.negated ? "with no positive coefficient and a negative constant term"
+                                 : "with no negative coefficient and a positive constant term";
+        break;
+      }
+      case Method::excluded:
+        reason += "by what the theorem excludes";
+        break;
+      default:
+        reason += "by assumption";
+    }
+    reasons.push_back(reason);
+  }
+  if (reasons.empty()) return "It is a nonzero constant. ";
+  const std::string id = nonzero.condition.empty() ? "" : " (" + latex_text(nonzero.condition) + ")";
+  return "It is not zero: " + enumeration(reasons) + id + ". ";
+}
+
+void LatexDocument::leading() {
+  if (!proof_.leading) return;
+  head("The leading coefficient");
+  const std::string a = fmt::format("{}_{{{}}}({})", names_.letter('a'), proof_.order, running(0));
+  say(fmt::format("Consider ${}$ for ${}\\ge {}$. {}\n", a, running(0), proof_.threshold,
+                  nonzero_reason(*proof_.leading)));
+}
+
+void LatexDocument::initial_values() {
+  if (proof_.initial.empty()) return;
+  head("Initial values");
+  std::vector<std::string> shown;
+  std::size_t symbolic = 0;
+  for (const proof::InitialValue& value : proof_.initial) {
+    if (!value.value) {
+      ++symbolic;
+    } else if (shown.size() < kListed) {
+      const mpq_class& v = *value.value;
+      const std::string text = v.get_str();
+      shown.push_back(text.size() > 40 ? fmt::format("${}={}$", running(0), value.at)
+                                       : fmt::format("${}$ at ${}={}$", text, running(0), value.at));
+    }
+  }
+  if (claim_.is_equality()) {
+    say("Both sides of " + reference("claim") + " have been computed");
+  } else {
+    say("The recurrence has been verified by direct computation");
+  }
+  if (!shown.empty()) {
+    say(claim_.is_equality() ? " and agree: they are " : ": both sides are ");
+    say(enumeration(shown));
+    if (shown.size() + symbolic < proof_.initial.size()) {
+      say(fmt::format(", and so on, {} values in all", proof_.initial.size()));
+    }
+  }
+  say(".\n");
+  for (const proof::InitialValue& value : proof_.initial) {
+    if (value.value || value.balance.groups.empty()) continue;
+    say(fmt::format("At ${}={}$ the sum has the terms below; with the right side they add up to $0$. ",
+                    running(0), value.at));
+    balance(value.balance);
+  }
+}
+
+void LatexDocument::conclusion() {
+  head("Conclusion");
+  const std::string n = running(0);
+  if (!claim_.is_equality()) {
+    say(fmt::format("Summation, the values at the ends and the range ${}\\ge {}$ give {}.{}\n", n,
+                    proof_.threshold, reference("claim"),
+                    proof_.initial.empty() ? "" : " For smaller values it has been verified directly."));
+    return;
+  }
+  if (proof_.order == 0) {
+    say(fmt::format("Since the coefficient is not zero, {} gives {} for ${}\\ge {}$.{}\n",
+                    reference("difference"), reference("claim"), n, proof_.threshold,
+                    proof_.initial.empty() ? "" : " For smaller values it has been computed directly."));
+    return;
+  }
+  const long values = static_cast<long>(proof_.order);
+  say(fmt::format("The difference of the two sides of {} satisfies {}, whose leading coefficient is not zero "
+                  "for ${}\\ge {}$, and vanishes for ${}$. By induction it vanishes for every ${}\\ge {}$.\n",
+                  reference("claim"), reference("difference"), n, proof_.threshold,
+                  proof_.threshold + values - 1 == proof_.from
+                      ? fmt::format("{}={}", n, proof_.from)
+                      : fmt::format("{}\\le {}\\le {}", proof_.from, n, proof_.threshold + values - 1),
+                  n, proof_.from));
+}
+
+}  // namespace sumwright::writers

@@ -1,0 +1,233 @@
+// From the author's parse tree to a formula, node by node.
+//
+// Nothing is simplified: quotients become fractions, products are juxtaposed, and brackets appear
+// exactly where precedence needs them.
+#include "writers/latex_expression.hpp"
+
+#include <algorithm>
+
+#include "claim/reader.hpp"
+#include "writers/latex_text.hpp"
+#include "writers/latex_values.hpp"
+
+namespace sumwright::writers {
+
+namespace {
+
+using claim::Expression;
+using claim::Operation;
+
+constexpr double kPlus = 1.25;
+constexpr double kScript = 0.75;
+constexpr std::size_t kLongest = 1200;  // characters of an expression set as a formula
+constexpr std::size_t kDeepest = 40;    // braces inside one another; TeX has 255 group levels
+
+[[nodiscard]] bool starts_with_digit(const Formula& formula) {
+  const std::string tex = inline_tex(formula);
+  return !tex.empty() && tex[0] >= '0' && tex[0] <= '9';
+}
+
+[[nodiscard]] std::size_t deepest_brace(const std::string& tex) {
+  std::size_t depth = 0;
+  std::size_t most = 0;
+  for (const char c : tex) {
+    if (c == '{') most = std::max(most, ++depth);
+    if (c == '}' && depth > 0) --depth;
+  }
+  return most;
+}
+
+[[nodiscard]] Formula single(const Formula& formula) {
+  return piece(inline_tex(formula), width_of(formula));
+}
+
+}  // namespace
+
+Formula LatexExpressions::at_least(const Expression& expression, Strength needed) const {
+  const ExpressionFormula printed = print(expression);
+  if (printed.strength >= needed) return printed.formula;
+  return bracketed(printed.formula, printed.tall);
+}
+
+ExpressionFormula LatexExpressions::binary(const Expression& expression) const {
+  const Expression& u = *expression.children[0];
+  const Expression& v = *expression.children[1];
+  ExpressionFormula out;
+  if (expression.operation == Operation::divide) {
+    const Formula above = formula(u);
+    const Formula below = formula(v);
+    out.formula = piece("\\frac{" + inline_tex(above) + "}{" + inline_tex(below) + "}",
+                        std::max(width_of(above), width_of(below)) + 0.3);
+    out.strength = Strength::product;
+    out.tall = true;
+    return out;
+  }
+  const bool product = expression.operation == Operation::multiply;
+  const ExpressionFormula left = print(u);
+  ExpressionFormula right = print(v);
+  out.tall = left.tall || right.tall;
+  out.strength = product ? Strength::product : Strength::sum;
+  out.formula = left.strength >= out.strength ? left.formula : bracketed(left.formula, left.tall);
+  const bool negative = starts_with_minus(right.formula);
+  const Strength needed = product ? Strength::signed_product : Strength::product;
+  const bool fraction = v.operation == Operation::divide;
+  if ((right.strength < needed && !(product && fraction)) || negative) {
+    right.formula = bracketed(right.formula, right.tall);
+  }
+  if (!product) {
+    const bool plus = expression.operation == Operation::add;
+    prepend_tex(right.formula, plus ? "+" : "-", kPlus);
+    append(out.formula, right.formula);
+    return out;
+  }
+  if (starts_with_digit(right.formula)) {
+    prepend_tex(right.formula, "\\cdot ", 0.8);
+  } else if (out.tall || (u.operation == Operation::symbol && u.name.size() > 1)) {
+    prepend_tex(right.formula, "\\,", 0.2);
+  }
+  right.formula.front().product = true;
+  append(out.formula, right.formula, 1);
+  return out;
+}
+
+ExpressionFormula LatexExpressions::power(const Expression& expression) const {
+  const Expression& u = *expression.children[0];
+  ExpressionFormula out;
+  const ExpressionFormula base = print(u);
+  const bool rising = u.operation == Operation::call && (u.name == "rising" || u.name == "falling");
+  out.tall = base.tall;
+  out.formula = base.strength == Strength::primary && !rising ? base.formula
+                                                              : bracketed(base.formula, base.tall);
+  const Piece exponent = script("^", formula(*expression.children[1]));
+  append_tex(out.formula, exponent.tex, exponent.width);
+  out.strength = Strength::power;
+  return out;
+}
+
+ExpressionFormula LatexExpressions::call(const Expression& expression) const {
+  ExpressionFormula out;
+  const Expression& u = *expression.children[0];
+  if (expression.name == "binomial") {
+    const Formula above = formula(u);
+    const Formula below = formula(*expression.children[1]);
+    out.formula = piece("\\binom{" + inline_tex(above) + "}{" + inline_tex(below) + "}",
+                        std::max(width_of(above), width_of(below)) + 1.5);
+    out.tall = true;
+  } else if (expression.name == "factorial") {
+    out.formula = single(at_least(u, Strength::primary));
+    append_tex(out.formula, "!", 0.3);
+    if (u.operation == Operation::call && u.name == "factorial") {
+      out.formula = piece("(" + inline_tex(formula(u)) + ")!", width_of(formula(u)) + 1.1);
+    }
+  } else if (expression.name == "rising" || expression.name == "falling") {
+    const bool nested = u.operation == Operation::call && u.name != "binomial";
+    out.formula = single(nested ? bracketed(formula(u)) : at_least(u, Strength::primary));
+    const Formula length = formula(*expression.children[1]);
+    const std::string line = expression.name == "rising" ? "\\overline" : "\\underline";
+    append_tex(out.formula, "^{" + line + "{" + inline_tex(length) + "}}", kScript * width_of(length) + 0.1);
+    out.strength = Strength::power;
+  } else if (expression.name == "floor") {
+    out.formula = piece("\\lfloor " + inline_tex(formula(u)) + "\\rfloor ", width_of(formula(u)) + 1);
+  } else {
+    Formula inside;
+    for (const claim::ExpressionPtr& child : expression.children) {
+      if (!inside.empty()) append_tex(inside, ",", 0.45);
+      append(inside, formula(*child));
+    }
+    const std::string name = expression.name == "min" || expression.name == "max"
+                                 ? "\\" + expression.name
+                                 : "\\mathrm{" + latex_text(expression.name) + "}";
+    out.formula = single(bracketed(inside));
+    prepend_tex(out.formula, name, 2);
+  }
+  return out;
+}
+
+ExpressionFormula LatexExpressions::print(const Expression& expression) const {
+  ExpressionFormula out;
+  switch (expression.operation) {
+    case Operation::literal:
+      out.formula = integer_formula(expression.value);
+      if (expression.value < 0) out.strength = Strength::signed_product;
+      return out;
+    case Operation::symbol:
+      out.formula = names_.is_symbol(expression.name)
+                        ? Formula{names_.symbol(expression.name)}
+                        : piece("\\mathit{" + latex_text(expression.name, 24) + "}", 10);
+      return out;
+    case Operation::negate: {
+      const ExpressionFormula inner = print(*expression.children[0]);
+      out.tall = inner.tall;
+      out.strength = Strength::signed_product;
+      const bool plain = inner.strength != Strength::sum && !starts_with_minus(inner.formula);
+      out.formula = plain ? inner.formula : bracketed(inner.formula, inner.tall);
+      prepend_tex(out.formula, "-", 0.8);
+      return out;
+    }
+    case Operation::power:
+      return power(expression);
+    case Operation::call:
+      return call(expression);
+    default:
+      return binary(expression);
+  }
+}
+
+Formula LatexExpressions::formula(const Expression& expression, bool as_factor) const {
+  const ExpressionFormula printed = print(expression);
+  if (!as_factor || printed.strength != Strength::sum) return printed.formula;
+  return bracketed(printed.formula, printed.tall);
+}
+
+Formula LatexExpressions::bound(const claim::Bound& bound) const {
+  switch (bound.kind) {
+    case claim::Bound::Kind::minus_infinity:
+      return piece("-\\infty", 1.8);
+    case claim::Bound::Kind::plus_infinity:
+      return piece("\\infty", 1);
+    case claim::Bound::Kind::finite:
+      break;
+  }
+  return formula(*bound.value);
+}
+
+Formula LatexExpressions::sum(const claim::Sum& sum) const {
+  Formula out;
+  for (const claim::Range& range : sum.over) {
+    const Piece index = names_.symbol(range.index);
+    const Formula low = bound(range.low);
+    const Formula high = bound(range.high);
+    const double width =
+        kScript * std::max(index.width + 0.8 + width_of(low), width_of(high)) + 0.5;
+    append(out, piece("\\sum_{" + index.tex + "=" + inline_tex(low) + "}^{" + inline_tex(high) + "} ",
+                      std::max(width, 1.7)));
+  }
+  Formula summand = formula(*sum.summand, !sum.over.empty());
+  append(out, summand, out.empty() ? 0 : 1);
+  for (std::size_t i = 1; i < sum.over.size(); ++i) out[i].depth = 3;
+  if (!sum.over.empty()) out[sum.over.size()].depth = 3;  // a sum sign never ends a line
+  return out;
+}
+
+bool LatexExpressions::fits(const Expression& expression) const {
+  if (to_text(expression).size() > kLongest) return false;
+  const Formula printed = formula(expression);
+  return widest(printed) <= kNumberedRoom - 8 && deepest_brace(inline_tex(printed)) <= kDeepest;
+}
+
+ExpressionFormula LatexExpressions::parsed(const std::string& text,
+                                           const std::vector<std::string>& symbols) const {
+  ExpressionFormula code;
+  code.formula = piece("\\text{" + latex_code(text, 300) + "}", 0.53 * static_cast<double>(text.size()));
+  if (text.size() > kLongest) return code;
+  try {
+    const claim::Source source{"value", text};
+    const claim::ExpressionPtr tree = parse_expression(source, {0, text.size()}, symbols);
+    if (!fits(*tree)) return code;
+    return print(*tree);
+  } catch (const claim::InputError&) {
+    return code;  // still shown, as it stands
+  }
+}
+
+}  // namespace sumwright::writers

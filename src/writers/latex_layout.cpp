@@ -1,0 +1,206 @@
+// From formulas in pieces to displays of amsmath.
+//
+// A formula that fits goes on one line; else lines are filled greedily, groups of pieces are kept
+// together while they fit a line, and only what does not is broken further inside.
+#include "writers/latex_layout.hpp"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+
+namespace sumwright::writers {
+
+namespace {
+
+constexpr double kRelation = 1.4;
+constexpr double kIndent = 2.2;       // continuation lines: \quad, and a sign
+constexpr double kShortLeft = 9.0;    // left sides up to this width align what follows
+constexpr std::size_t kPageBreaks = 10;  // displays of more lines may be broken over pages
+
+class LineFiller {
+ public:
+  LineFiller(double first_room, double room) : room_(room), left_(first_room) {}
+
+  std::vector<std::string> fill(const Formula& formula) {
+    place(formula, 0, formula.size(), 0);
+    lines_.push_back(line_);
+    return lines_;
+  }
+
+ private:
+  // Pieces [from, to), whose inner places are at `depth` or deeper.
+  void place(const Formula& formula, std::size_t from, std::size_t to, int depth) {
+    for (std::size_t begin = from; begin < to;) {
+      std::size_t end = begin + 1;
+      while (end < to && formula[end].depth > depth) ++end;
+      double width = 0;
+      for (std::size_t i = begin; i < end; ++i) width += formula[i].width;
+      if (width <= left_) {
+        add(formula, begin, end, width);
+      } else if (width <= room_ || end - begin == 1) {
+        if (!line_.empty()) new_line(formula[begin].product);
+        add(formula, begin, end, width);
+      } else {
+        if (!line_.empty() && left_ < room_ / 3) new_line(formula[begin].product);
+        place(formula, begin, end, depth + 1);
+      }
+      begin = end;
+    }
+  }
+
+  void add(const Formula& formula, std::size_t begin, std::size_t end, double width) {
+    for (std::size_t i = begin; i < end; ++i) line_ += formula[i].tex;
+    left_ -= width;
+  }
+
+  void new_line(bool product) {
+    lines_.push_back(line_);
+    line_ = product ? "{}\\times " : "{}";
+    left_ = room_ - (product ? 1.3 : 0);
+  }
+
+  double room_;
+  double left_;
+  std::string line_;
+  std::vector<std::string> lines_;
+};
+
+// A sign behind an alignment mark would be spaced as a binary one.
+[[nodiscard]] std::string first_line(const std::string& line) {
+  return line.starts_with('-') ? "{-}" + line.substr(1) : line;
+}
+
+// Rows of an align environment for one equation.
+[[nodiscard]] std::vector<std::string> rows_of(const Formula& left, const Formula& right,
+                                               double room) {
+  std::vector<std::string> rows;
+  const double left_width = width_of(left);
+  if (left_width <= kShortLeft && !right.empty()) {
+    LineFiller filler(room - left_width - kRelation, room - left_width - kRelation - kIndent);
+    const auto lines = filler.fill(right);
+    for (std::size_t i = 0; i < lines.size(); ++i) {
+      rows.push_back(i == 0 ? inline_tex(left) + " ={}& " + first_line(lines[i]) : "&\\quad " + lines[i]);
+    }
+    return rows;
+  }
+  for (const std::string& line : LineFiller(room, room - kIndent).fill(left)) {
+    rows.push_back(rows.empty() ? "&" + first_line(line) : "&\\quad " + line);
+  }
+  if (right.empty()) return rows;
+  const double inner = room - 2 - kRelation;
+  bool first = true;
+  for (const std::string& line : LineFiller(inner, inner - kIndent).fill(right)) {
+    rows.push_back((first ? "&\\qquad = " : "&\\qquad\\quad ") + line);
+    first = false;
+  }
+  return rows;
+}
+
+[[nodiscard]] std::string joined(const std::vector<std::string>& rows, const std::string& label,
+                                 const std::string& end) {
+  const bool numbered = !label.empty();
+  std::string out;
+  for (std::size_t i = 0; i < rows.size(); ++i) {
+    const bool last = i + 1 == rows.size();
+    out += rows[i];
+    if (last) out += end;
+    if (numbered) out += i == 0 ? fmt::format(" \\label{{{}}}", label) : " \\notag";
+    if (!last) out += "\\\\";
+    out += "\n";
+  }
+  const std::string environment = numbered ? "align" : "align*";
+  std::string text = fmt::format("\\begin{{{0}}}\n{1}\\end{{{0}}}\n", environment, out);
+  if (rows.size() > kPageBreaks) text = "{\\allowdisplaybreaks\n" + text + "}\n";
+  return text;
+}
+
+}  // namespace
+
+double width_of(const Formula& formula) {
+  double width = 0;
+  for (const Piece& part : formula) width += part.width;
+  return width;
+}
+
+double widest(const Formula& formula) {
+  double width = 0;
+  for (const Piece& part : formula) width = std::max(width, part.width);
+  return width;
+}
+
+std::string inline_tex(const Formula& formula) {
+  std::string out;
+  for (const Piece& part : formula) out += part.tex;
+  return out;
+}
+
+Formula piece(std::string tex, double width) { return {{std::move(tex), width, 0, false}}; }
+
+void append(Formula& out, const Formula& more, int deeper) {
+  for (const Piece& part : more) {
+    out.push_back(part);
+    out.back().depth += deeper;
+  }
+}
+
+void prepend_tex(Formula& formula, const std::string& tex, double width) {
+  if (formula.empty()) formula = piece("", 0);
+  formula.front().tex = tex + formula.front().tex;
+  formula.front().width += width;
+}
+
+void append_tex(Formula& formula, const std::string& tex, double width) {
+  if (formula.empty()) formula = piece("", 0);
+  formula.back().tex += tex;
+  formula.back().width += width;
+}
+
+Formula bracketed(const Formula& formula, bool tall) {
+  if (tall) {
+    return piece("\\left(" + inline_tex(formula) + "\\right)", width_of(formula) + 1.4);
+  }
+  Formula out;
+  append(out, formula, 1);
+  if (!out.empty()) out.front().depth = 0;
+  prepend_tex(out, "(", 0.4);
+  append_tex(out, ")", 0.4);
+  return out;
+}
+
+double digits_width(const std::string& digits) { return 0.52 * static_cast<double>(digits.size()); }
+
+std::string display(const Formula& left, const Formula& right, const std::string& label,
+                    const std::string& end) {
+  const double room = label.empty() ? kRoom : kNumberedRoom;
+  const double whole = width_of(left) + (right.empty() ? 0 : kRelation + width_of(right));
+  if (whole > room) return joined(rows_of(left, right, room), label, end);
+  const std::string body =
+      inline_tex(left) + (right.empty() ? "" : " = " + inline_tex(right)) + end;
+  if (label.empty()) return "\\[\n" + body + "\n\\]\n";
+  return fmt::format("\\begin{{equation}}\\label{{{}}}\n{}\n\\end{{equation}}\n", label, body);
+}
+
+std::string display_list(const std::vector<DisplayRow>& rows, const std::string& end) {
+  std::vector<std::string> lines;
+  double left = 0;
+  for (const DisplayRow& row : rows) left = std::max(left, width_of(row.left));
+  const bool aligned = left <= kRoom / 2;
+  for (std::size_t r = 0; r < rows.size(); ++r) {
+    std::vector<std::string> own;
+    if (aligned) {
+      const double room = kRoom - left - kRelation;
+      bool first = true;
+      for (const std::string& line : LineFiller(room, room - kIndent).fill(rows[r].right)) {
+        own.push_back(first ? inline_tex(rows[r].left) + " &= " + line : "&\\quad " + line);
+        first = false;
+      }
+    } else {
+      own = rows_of(rows[r].left, rows[r].right, kRoom);
+    }
+    if (r + 1 < rows.size()) own.back() += ",";
+    lines.insert(lines.end(), own.begin(), own.end());
+  }
+  return lines.empty() ? "" : joined(lines, "", end);
+}
+
+}  // namespace sumwright::writers
