@@ -66,7 +66,9 @@ Polynomial::Polynomial(const Polynomial& other) : Polynomial(other.ring_) {
   fmpz_mpoly_set(value_, other.value_, ring_->context());
 }
 
-Polynomial::Polynomial(Polynomial&& other) noexcept : ring_(other.ring_) {
+// The ring is shared, not moved: what is moved from stays a polynomial, 0, of its ring.
+Polynomial::Polynomial(Polynomial&& other) noexcept
+    : ring_(other.ring_) {  // NOLINT(performance-move-constructor-init)
   fmpz_mpoly_init(value_, ring_->context());
   fmpz_mpoly_swap(value_, other.value_, ring_->context());
 }

@@ -62,14 +62,13 @@ Finding Check::finding() const {
   return out;
 }
 
-std::vector<long> spread(long low, long high) {
+std::vector<long> spread(long low, long high, long all) {
   std::set<long> out;
-  constexpr long kAll = 12;
-  if (high - low < kAll) {
+  if (high - low < all) {
     for (long k = low; k <= high; ++k) out.insert(k);
   } else {
-    for (long i = 0; i < 4; ++i) out.insert({low + i, high - i});
-    out.insert({low + (high - low) / 3, low + (high - low) / 2});
+    for (long i = 0; i < all / 3; ++i) out.insert({low + i, high - i});
+    out.insert(low + (high - low) / 2);
   }
   return {out.begin(), out.end()};
 }
@@ -153,7 +152,7 @@ void Context::make_places() {
   for (std::size_t sample = 0; sample < samples.size(); ++sample) {
     std::set<long> values;
     const long first = proof.threshold;
-    const long few = sample == 0 ? 8 : 4;
+    const long few = sample == 0 ? 8 : 3;  // the first sample is the generic one
     for (long i = 0; i < few; ++i) values.insert(first + i);
     if (sample < 2) values.insert(first + 13);
     for (long n = first; indexed && n <= first + kExceptionalSpan; ++n) {
@@ -169,8 +168,8 @@ void Context::make_places() {
       running_places_.push_back({sample, n, 0});
       if (!indexed) continue;
       const Point point = author.point(sample, n);
-      for (const long k :
-           spread(value_of(proof.telescoping->low, point), value_of(proof.telescoping->high, point)))
+      for (const long k : spread(value_of(proof.telescoping->low, point),
+                                 value_of(proof.telescoping->high, point), sample == 0 ? 12 : 6))
         index_places_.push_back({sample, n, k});
     }
   }

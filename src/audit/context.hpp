@@ -76,7 +76,7 @@ class Context {
   std::vector<Place> index_places_;
 };
 
-/// Some of low..high: all when few, else both ends and some between.
-[[nodiscard]] std::vector<long> spread(long low, long high);
+/// Some of low..high: all when there are at most `all`, else both ends and some between.
+[[nodiscard]] std::vector<long> spread(long low, long high, long all = 12);
 
 }  // namespace sumwright::audit

@@ -58,6 +58,8 @@ numeric natural_power(const numeric& base, long exponent) {
   const long bits = std::max<long>(1, base.numer().int_length() + base.denom().int_length());
   const bool stays_small = base.is_zero() || base.is_equal(1) || base.is_equal(-1);
   if (!stays_small && exponent > kPowerBits / bits) throw TooLarge("a large power");
+  if (!base.is_integer())  // no common factors to look for on the way
+    return natural_power(base.numer(), exponent) / natural_power(base.denom(), exponent);
   numeric out = 1;
   numeric square = base;
   for (; exponent > 0; exponent /= 2) {

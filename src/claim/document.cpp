@@ -1,7 +1,8 @@
 // From TOML text to a tree of values with byte places, through toml++.
 //
-// toml++ counts lines and characters; every stage here counts bytes of the file. Depth
-// is bounded by check_toml_nesting before toml++ sees the text.
+// toml++ counts lines and characters; every stage here counts bytes of the file. toml++ 3.3
+// is given an ASCII text of bounded depth only (see check_toml_text): outside ASCII its tests for
+// white space have undefined behaviour, and deep tables exhaust the stack.
 #include "claim/document.hpp"
 
 #include <fmt/format.h>
@@ -57,6 +58,9 @@ class LineIndex {
     }
   }
 
+  /// Behind the byte-order mark.
+  [[nodiscard]] std::size_t start() const { return marks_[0]; }
+
   [[nodiscard]] std::size_t offset(toml::source_position position) const {
     if (position.line == 0) return marks_[0];
     if (position.line > lines_.size()) return text_.size();
@@ -95,6 +99,13 @@ class Converter {
     return lines_.offset(position);
   }
 
+  // The byte of the source that stands for byte `at` of its shadow.
+  [[nodiscard]] std::size_t original(std::size_t at) const {
+    std::size_t byte = lines_.start();
+    for (; at > 0 && byte < source_.text.size(); --at) byte += decode(source_.text, byte).length;
+    return byte;
+  }
+
   [[nodiscard]] Place place(const toml::source_region& region) const {
     const std::size_t begin = offset(region.begin);
     const std::size_t end = offset(region.end);
@@ -128,8 +139,8 @@ class Converter {
   void fill_table(Value& out, const toml::table& table) const {
     for (const auto& [key, node] : table) {
       Entry entry;
-      entry.key = std::string(key.str());
       entry.key_place = place(key.source());
+      entry.key = key_text(key, entry.key_place);
       entry.value = value(node);
       out.entries.push_back(std::move(entry));
     }
@@ -139,9 +150,15 @@ class Converter {
     });
   }
 
+  // A key in quotes is read again, as the library saw only its shadow.
+  [[nodiscard]] std::string key_text(const toml::key& key, Place where) const {
+    auto literal = string_literal(source_.text, where.offset);
+    return literal ? std::move(literal->text) : std::string(key.str());
+  }
+
   [[nodiscard]] MappedText mapped(const std::string& text, Place where) const {
     auto literal = string_literal(source_.text, where.offset);
-    if (literal && literal->text == text) return *std::move(literal);
+    if (literal && ascii_shadow(literal->text) == ascii_shadow(text)) return *std::move(literal);
     MappedText out;  // the two readings differ: point at the whole literal
     out.text = text;
     out.units.assign(text.size(), {where.offset, where.length});
@@ -189,15 +206,16 @@ Value parse_document(const Source& source) {
     throw InputError(source, {*invalid, 1}, "this byte is not valid UTF-8",
                      "a claim file is a UTF-8 text");
   }
-  check_toml_nesting(source);
+  check_toml_text(source);
   const Converter converter(source);
+  const std::string shadow = ascii_shadow(source.text);
   try {
-    return converter.value(toml::parse(std::string_view(source.text)));
+    return converter.value(toml::parse(std::string_view(shadow)));
   } catch (const toml::parse_error& error) {
     throw InputError(source, {converter.offset(error.source().begin), 1},
                      fmt::format("not valid TOML: {}", error.description()));
   } catch (const TomlFault&) {
-    throw InputError(source, {fault_offset(source.text), 1},
+    throw InputError(source, {converter.original(fault_offset(shadow)), 1},
                      "not valid TOML: this is neither a key nor a value");
   }
 }

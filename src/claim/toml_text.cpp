@@ -1,7 +1,8 @@
 // TOML strings byte by byte, so that faults inside a string point into the file.
 //
 // The TOML parser gives values; this gives the place of each byte of a value. Both
-// must agree: the caller compares the texts and trusts places only when they do.
+// must agree: the caller compares the texts and trusts places only when they do. Faults of
+// strings are found here, since here they have places.
 #include "claim/toml_text.hpp"
 
 #include <fmt/format.h>
@@ -16,6 +17,7 @@ namespace {
 
 constexpr std::size_t kDeepestBrackets = 16;
 constexpr std::size_t kDotsPerLine = 16;
+constexpr std::string_view kByteOrderMark = "\xEF\xBB\xBF";
 
 void append_utf8(std::string& out, char32_t code) {
   const auto put = [&out](char32_t byte) {
@@ -45,6 +47,7 @@ class StringReader {
 
   [[nodiscard]] std::optional<MappedText> read() {
     if (at_ >= text_.size() || (text_[at_] != '"' && text_[at_] != '\'')) return std::nullopt;
+    start_ = at_;
     quote_ = text_[at_];
     several_lines_ = text_.substr(at_, 3) == std::string(3, quote_);
     at_ += several_lines_ ? 3 : 1;
@@ -54,11 +57,16 @@ class StringReader {
       if (text_[at_] == quote_ && closes()) return std::move(out_);
       if (!step()) return std::nullopt;
     }
+    (void)fail({start_, 1}, "this string is not closed");
     return std::nullopt;
   }
 
   /// Just behind the closing delimiter, once read.
   [[nodiscard]] std::size_t end() const { return at_; }
+
+  /// Where and why reading failed.
+  [[nodiscard]] Place fault_place() const { return fault_place_; }
+  [[nodiscard]] std::string_view fault() const { return fault_; }
 
  private:
   [[nodiscard]] std::size_t newline_length(std::size_t at) const {
@@ -88,7 +96,7 @@ class StringReader {
 
   [[nodiscard]] bool step() {
     if (const std::size_t newline = newline_length(at_); newline > 0) {
-      if (!several_lines_) return false;
+      if (!several_lines_) return fail({start_, 1}, "this string is not closed on its line");
       put("\n", newline);
       return true;
     }
@@ -97,8 +105,14 @@ class StringReader {
     return true;
   }
 
+  bool fail(Place place, std::string_view message) {
+    fault_place_ = place;
+    fault_ = message;
+    return false;
+  }
+
   [[nodiscard]] bool escape() {
-    if (at_ + 1 >= text_.size()) return false;
+    if (at_ + 1 >= text_.size()) return fail({start_, 1}, "this string is not closed");
     const char letter = text_[at_ + 1];
     constexpr std::string_view letters = "btnfr\"\\";
     constexpr std::string_view meanings = "\b\t\n\f\r\"\\";
@@ -108,20 +122,26 @@ class StringReader {
     }
     if (letter == 'u') return code_point(4);
     if (letter == 'U') return code_point(8);
-    return several_lines_ && line_end();
+    if (several_lines_ && line_end()) return true;
+    return fail({at_, 1 + decode(text_, at_ + 1).length}, "unknown escape in a string");
   }
 
   [[nodiscard]] bool code_point(std::size_t digits) {
     const std::string_view hex = text_.substr(at_ + 2, digits);
-    if (hex.size() < digits) return false;
     char32_t code = 0;
-    for (const char digit : hex) {
+    std::size_t read = 0;
+    for (; read < hex.size(); ++read) {
       constexpr std::string_view values = "0123456789abcdef";
-      const char lower =
-          digit >= 'A' && digit <= 'F' ? static_cast<char>(digit - 'A' + 'a') : digit;
+      const char c = hex[read];
+      const char lower = c >= 'A' && c <= 'F' ? static_cast<char>(c - 'A' + 'a') : c;
       const std::size_t value = values.find(lower);
-      if (value == std::string_view::npos) return false;
+      if (value == std::string_view::npos) break;
       code = code * 16 + static_cast<char32_t>(value);
+    }
+    const Place place = {at_, 2 + read};
+    if (read < digits) return fail(place, "\\u takes four hexadecimal digits, and \\U eight");
+    if (code > 0x10FFFF || (code >= 0xD800 && code <= 0xDFFF)) {
+      return fail(place, "this escape is no Unicode character");
     }
     std::string bytes;
     append_utf8(bytes, code);
@@ -141,8 +161,22 @@ class StringReader {
   std::size_t at_;
   char quote_ = '"';
   bool several_lines_ = false;
+  std::size_t start_ = 0;
   MappedText out_;
+  Place fault_place_;
+  std::string_view fault_;
 };
+
+// Just behind the string that starts at `at`.
+[[nodiscard]] std::size_t string_end(const Source& source, std::size_t at) {
+  StringReader reader(source.text, at);
+  if (reader.read()) return reader.end();
+  std::string_view note;
+  if (reader.fault_place().offset != at) {
+    note = "in \"...\" a backslash starts an escape; in '...' it stands for itself";
+  }
+  throw InputError(source, reader.fault_place(), reader.fault(), note);
+}
 
 }  // namespace
 
@@ -171,16 +205,15 @@ std::optional<MappedText> string_literal(std::string_view text, std::size_t offs
   return StringReader(text, offset).read();
 }
 
-void check_toml_nesting(const Source& source) {
+void check_toml_text(const Source& source) {
   const std::string_view text = source.text;
   std::size_t depth = 0;
   std::size_t dots = 0;
-  for (std::size_t at = 0; at < text.size(); ++at) {
+  const std::size_t start = text.starts_with(kByteOrderMark) ? kByteOrderMark.size() : 0;
+  for (std::size_t at = start; at < text.size(); ++at) {
     const char c = text[at];
     if (c == '"' || c == '\'') {
-      StringReader reader(text, at);
-      if (!reader.read()) return;  // not closed, or a wrong escape: the TOML parser stops there too
-      at = reader.end() - 1;
+      at = string_end(source, at) - 1;
     } else if (c == '#') {
       at = std::min(text.find('\n', at), text.size()) - 1;
     } else if (c == '\n') {
@@ -195,8 +228,25 @@ void check_toml_nesting(const Source& source) {
     } else if (c == '.' && ++dots > kDotsPerLine) {
       throw InputError(source, {at, 1},
                        fmt::format("more than {} dots outside strings in one line", kDotsPerLine));
+    } else if (static_cast<unsigned char>(c) >= 0x80) {
+      const std::size_t length = decode(text, at).length;
+      throw InputError(source, {at, length},
+                       fmt::format("{} may stand only in strings and comments",
+                                   in_quotes(text.substr(at, length))));
     }
   }
+}
+
+std::string ascii_shadow(std::string_view text) {
+  std::string out;
+  out.reserve(text.size());
+  std::size_t at = text.starts_with(kByteOrderMark) ? kByteOrderMark.size() : 0;
+  while (at < text.size()) {
+    const std::size_t length = decode(text, at).length;
+    out += static_cast<unsigned char>(text[at]) < 0x80 ? text[at] : '?';
+    at += length;
+  }
+  return out;
 }
 
 }  // namespace sumwright::claim

@@ -34,8 +34,13 @@ struct MappedText {
 /// Nothing when none starts there or it is not closed.
 [[nodiscard]] std::optional<MappedText> string_literal(std::string_view text, std::size_t offset);
 
-/// Refuses what would exhaust a TOML parser: brackets nested deeper than a claim
-/// needs, and long dotted keys (each dot makes a table). Throws InputError.
-void check_toml_nesting(const Source& source);
+/// Refuses what a TOML parser should not be given: strings that are not closed or have a
+/// wrong escape, characters beyond ASCII outside strings and comments, brackets nested deeper than
+/// a claim needs, and long dotted keys (each dot makes a table). Throws InputError.
+void check_toml_text(const Source& source);
+
+/// The text with `?` for each character beyond ASCII and without a byte-order mark: the same
+/// lines and columns for a parser that need not know Unicode.
+[[nodiscard]] std::string ascii_shadow(std::string_view text);
 
 }  // namespace sumwright::claim

@@ -177,6 +177,15 @@ class Builder {
                          "sum = sum: deducing it from the recurrence that `find` gives");
       }
     }
+    if (terms_->range && brought.has_certificate) {
+      const search::IdentityCheck check =
+          search::verify_identity(terms_->setting.ring, shift_quotients(*terms_),
+                                  brought.draft.coefficients, *brought.draft.certificate);
+      if (!check.holds) {
+        diagnose_identity(*terms_, *claim_, brought.draft, check.residue, options_.deadline, proof_);
+        return proof_;
+      }
+    }
     if (!equality) state_recurrence(brought);
     const Attempt tried = attempt(*terms_, brought.draft, equality, options_.deadline);
     return report(tried, equality);

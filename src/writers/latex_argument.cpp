@@ -233,7 +233,7 @@ void LatexDocument::summation() {
   ++beyond.constant;
   head("Summation");
   say(fmt::format("Let ${}\\ge {}$ and sum {} over ${}\\le {}\\le {}$. The right side telescopes to "
-                  "${}({},{})-{}({},{})$. On the left,\n\\begin{{itemize}}\n",
+                  "${}({},{})-{}({},{})$. On the left,\n\\begin{{itemize}}\\raggedright\n",
                   running(0), proof_.threshold, reference("telescoping"),
                   inline_tex(values_.affine(t.low)), k, inline_tex(values_.affine(t.high)),
                   names_.letter('G'), running(0), inline_tex(values_.affine(beyond)),

@@ -29,7 +29,7 @@ void LatexDocument::balance_zeros(const proof::Balance& balance) {
                          zero_reason(term));
   }
   if (items.empty()) return;
-  say("These terms vanish:\n\\begin{itemize}\n" + items + "\\end{itemize}\n");
+  say("These terms vanish:\n\\begin{itemize}\\raggedright\n" + items + "\\end{itemize}\n");
 }
 
 void LatexDocument::balance_group(const proof::Balance& balance, const proof::BalanceGroup& group) {

@@ -1,6 +1,6 @@
 (** Everything that a generated proof uses.
 
-    [Add Field] does not survive the end of a section, and no tactic can issue it, so
+    [Add Field] does not survive the end of a section, and no tactic can give it, so
     each file begins its section with these lines:
 
 <<

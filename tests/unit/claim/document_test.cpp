@@ -88,10 +88,23 @@ TEST(ParseDocument, EveryKindOfStringIsMapped) {
   }
 }
 
+TEST(ParseDocument, CharactersBeyondAsciiInEveryKindOfString) {
+  const std::string e = "\xC3\xA9\xC2\xA0\xF0\x9F\x98\x80";
+  for (const std::string& literal :
+       {"\"" + e + "\"", "'" + e + "'", "\"\"\"\\\n  " + e + "\"\"\"", "'''\n" + e + "'''"}) {
+    const Value document = parse_document({"f", "\"" + e + "\" = " + literal + " # " + e});
+    ASSERT_EQ(document.entries.size(), 1U);
+    EXPECT_EQ(document.entries[0].key, e);
+    EXPECT_EQ(document.entries[0].value.text.text, e);
+    EXPECT_EQ(document.entries[0].value.text.units.front().length, 1U);
+  }
+}
+
 TEST(ParseDocument, Refuses) {
   expect_refused("a = 1\na = 2", "2:5", "not valid TOML");
   expect_refused("a = ", "1:5", "not valid TOML");
-  expect_refused("a = \"b", "1:7", "not valid TOML");
+  expect_refused("a = \"b", "1:5", "this string is not closed");
+  expect_refused("a = \xC3\xA9", "1:5", "only in strings and comments");
   expect_refused("a = 'x\xFF'", "1:7", "not valid UTF-8");
   expect_refused(
       "\xFF\xFE"

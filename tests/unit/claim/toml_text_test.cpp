@@ -58,33 +58,67 @@ TEST(PlainText, IsTheSpanItself) {
   EXPECT_EQ(plain_text(source, {99, 1}).text, "");
 }
 
-void expect_nesting_refused(const std::string& text, std::string_view message) {
+void expect_refused(const std::string& text, std::string_view message) {
   try {
-    check_toml_nesting({"f", text});
+    check_toml_text({"f", text});
     ADD_FAILURE() << "was accepted: " << text.substr(0, 80);
   } catch (const InputError& error) {
     EXPECT_NE(std::string(error.what()).find(message), std::string::npos) << error.what();
   }
 }
 
-TEST(CheckTomlNesting, RefusesDepth) {
-  expect_nesting_refused("a = " + std::string(17, '['), "f:1:21: error: brackets nested deeper");
-  expect_nesting_refused("a = " + std::string(17, '{'), "f:1:21: error: brackets nested deeper");
+TEST(CheckTomlText, RefusesDepth) {
+  expect_refused("a = " + std::string(17, '['), "f:1:21: error: brackets nested deeper");
+  expect_refused("a = " + std::string(17, '{'), "f:1:21: error: brackets nested deeper");
   std::string dots = "a";
   for (int i = 0; i < 17; ++i) dots += ".a";
-  expect_nesting_refused(dots + " = 1", "f:1:34: error: more than 16 dots");
-  expect_nesting_refused("b = 1 # ''' \"\n" + dots, "f:2:34");
-  expect_nesting_refused("b = '''\n'' ]]'''\n[" + dots, "f:3:35");
+  expect_refused(dots + " = 1", "f:1:34: error: more than 16 dots");
+  expect_refused("b = 1 # ''' \"\n" + dots, "f:2:34");
+  expect_refused("b = '''\n'' ]]'''\n[" + dots, "f:3:35");
 }
 
-TEST(CheckTomlNesting, SkipsStringsAndComments) {
-  check_toml_nesting({"f", "a = '" + std::string(99, '[') + "'\n# " + std::string(99, '.')});
-  check_toml_nesting({"f", "a = \"\"\"\n\\\"" + std::string(99, '[') + "\n\"\"\"\nb = [[[[]]]]"});
-  check_toml_nesting({"f", "# comment at the end"});
-  check_toml_nesting({"f", ""});
+TEST(CheckTomlText, RefusesFaultsOfStrings) {
+  expect_refused("a = \"b\nc", "f:1:5: error: this string is not closed on its line");
+  expect_refused("a = 'b", "f:1:5: error: this string is not closed");
+  expect_refused("a = '''b\n''", "f:1:5: error: this string is not closed");
+  expect_refused("a = \"b\\", "f:1:5: error: this string is not closed");
+  expect_refused("a = \"\\alpha\"", "f:1:6: error: unknown escape");
+  expect_refused("a = \"\\alpha\"", "in '...' it stands for itself");
+  expect_refused("a = \"\\\xC3\xA9\"", "f:1:6: error: unknown escape");
+  expect_refused("a = \"\"\"\\\xC3\xA9\"\"\"", "f:1:8: error: unknown escape");
+  expect_refused("a = \"\\u12x4\"", "f:1:6: error: \\u takes four");
+  expect_refused("a = \"\\ud800\"", "f:1:6: error: this escape is no Unicode character");
+  expect_refused("a = \"\\U00110000\"", "f:1:6: error: this escape is no Unicode character");
+}
+
+TEST(CheckTomlText, RefusesOtherCharactersOutsideStrings) {
+  expect_refused("title = \xC3\xA9", "f:1:9: error: '\xC3\xA9' may stand only in strings");
+  expect_refused(
+      "\xEF\xBB\xBF"
+      "a = 1\n\xC2\xA0"
+      "b = 2",
+      "f:2:1: error: ");
+  expect_refused("a\xEF\xBB\xBF = 1", "f:1:2: error: '\\u{feff}' may stand");
+  check_toml_text({"f",
+                   "\xEF\xBB\xBF"
+                   "a = '\xC3\xA9' # \xC3\xA9"});
+}
+
+TEST(AsciiShadow, KeepsLinesAndColumns) {
+  EXPECT_EQ(ascii_shadow("\xEF\xBB\xBF"
+                         "a\xC3\xA9\r\n\xF0\x9F\x98\x80z"),
+            "a?\r\n?z");
+  EXPECT_EQ(ascii_shadow(""), "");
+}
+
+TEST(CheckTomlText, SkipsStringsAndComments) {
+  check_toml_text({"f", "a = '" + std::string(99, '[') + "'\n# " + std::string(99, '.')});
+  check_toml_text({"f", "a = \"\"\"\n\\\"" + std::string(99, '[') + "\n\"\"\"\nb = [[[[]]]]"});
+  check_toml_text({"f", "# comment at the end"});
+  check_toml_text({"f", ""});
   std::string shallow;
   for (int i = 0; i < 100; ++i) shallow += "[a.b]\n";
-  check_toml_nesting({"f", shallow});
+  check_toml_text({"f", shallow});
 }
 
 }  // namespace
