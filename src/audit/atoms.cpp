@@ -81,10 +81,23 @@ Value value_of(const proof::Atom& atom, const Point& at) {
 }
 
 Value value_of(const proof::Product& product, const Point& at) {
-  Value out = value_of(product.coefficient, at);
-  for (const auto& [atom, exponent] : product.atoms)
-    out = times(out, raised(value_of(atom, at), static_cast<long>(exponent)));
-  return out;
+  // Numerators and denominators apart, so that common factors are looked for once, at the end.
+  Value above = value_of(product.coefficient, at);
+  numeric below = 1;
+  if (above.exists()) {
+    below = above.number.denom();
+    above.number = above.number.numer();
+  }
+  for (const auto& [atom, exponent] : product.atoms) {
+    Value value = value_of(atom, at);
+    if (value.exists()) {
+      below = below * natural_power(value.number.denom(), static_cast<long>(exponent));
+      value.number = value.number.numer();
+    }
+    above = times(above, raised(value, static_cast<long>(exponent)));
+  }
+  if (above.exists()) above.number = above.number / below;
+  return above;
 }
 
 bool identical(const proof::Polynomial& left, const proof::Polynomial& right) {

@@ -45,6 +45,8 @@ AuditReport audit(const proof::Proof& proof, const AuditOptions& options) {
     run_checks(proof, options, report);
   } catch (const TooLarge& reason) {
     report.findings.push_back({"audit", 0, false, std::string("not made: ") + reason.what()});
+  } catch (const NotAnInteger& flaw) {
+    report.findings.push_back({"audit", 0, false, flaw.what()});
   }
   return report;
 }

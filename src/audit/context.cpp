@@ -14,6 +14,7 @@ namespace {
 
 constexpr std::size_t kSpecialSamples = 4;
 constexpr long kExceptionalSpan = 30;
+constexpr std::size_t kMostExceptional = 4;
 constexpr std::size_t kIndex = 1;
 
 std::vector<std::string> names_of(const proof::Proof& proof) {
@@ -51,6 +52,8 @@ void Check::attempt(const std::function<void()>& one_case) {
     one_case();
   } catch (const TooLarge& reason) {
     if (left_out_++ == 0) first_reason_ = reason.what();
+  } catch (const NotAnInteger& flaw) {
+    fail(flaw.what());
   }
 }
 
@@ -147,32 +150,38 @@ void Context::add_special_samples() {
     }
 }
 
-void Context::make_places() {
-  const bool indexed = proof.telescoping.has_value();
-  for (std::size_t sample = 0; sample < samples.size(); ++sample) {
-    std::set<long> values;
-    const long first = proof.threshold;
-    const long few = sample == 0 ? 8 : 3;  // the first sample is the generic one
-    for (long i = 0; i < few; ++i) values.insert(first + i);
-    if (sample < 2) values.insert(first + 13);
-    for (long n = first; indexed && n <= first + kExceptionalSpan; ++n) {
-      const Point point = author.point(sample, n);
-      const auto zero = [&](const proof::Factored& one) { return value_of(one, point).is_zero(); };
-      if (zero(proof.telescoping->weight.polynomial) ||
-          std::any_of(proof.telescoping->coefficients.begin(),
-                      proof.telescoping->coefficients.end(), zero))
-        values.insert(n);
+std::vector<long> Context::chosen_values(std::size_t sample) const {
+  const long first = proof.threshold;
+  std::set<long> out;
+  const long few = sample == 0 ? 8 : 3;  // the first sample is a generic one
+  for (long i = 0; i < few; ++i) out.insert(first + i);
+  if (sample < 2) out.insert(first + 13);
+  if (!proof.telescoping) return {out.begin(), out.end()};
+  std::size_t exceptional = 0;
+  for (long n = first; n <= first + kExceptionalSpan && exceptional < kMostExceptional; ++n) {
+    const Point point = author.point(sample, n);
+    const auto zero = [&](const proof::Factored& one) { return value_of(one, point).is_zero(); };
+    if (zero(proof.telescoping->weight.polynomial) ||
+        std::any_of(proof.telescoping->coefficients.begin(), proof.telescoping->coefficients.end(),
+                    zero)) {
+      out.insert(n);
+      ++exceptional;
     }
-    for (const long n : values) {
+  }
+  return {out.begin(), out.end()};
+}
+
+void Context::make_places() {
+  for (std::size_t sample = 0; sample < samples.size(); ++sample)
+    for (const long n : chosen_values(sample)) {
       if (!admits(sample, n)) continue;
       running_places_.push_back({sample, n, 0});
-      if (!indexed) continue;
+      if (!proof.telescoping) continue;
       const Point point = author.point(sample, n);
       for (const long k : spread(value_of(proof.telescoping->low, point),
                                  value_of(proof.telescoping->high, point), sample == 0 ? 12 : 6))
         index_places_.push_back({sample, n, k});
     }
-  }
 }
 
 }  // namespace sumwright::audit

@@ -70,6 +70,7 @@ class Context {
 
  private:
   void add_special_samples();
+  [[nodiscard]] std::vector<long> chosen_values(std::size_t sample) const;
   void make_places();
 
   std::vector<Place> running_places_;

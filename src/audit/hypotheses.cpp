@@ -153,13 +153,11 @@ Point blank(const claim::Claim& claim, const std::vector<std::string>& names) {
   return out;
 }
 
-/// All candidate points, small ones first.
-std::vector<Point> pool(const claim::Claim& claim, const Point& start, std::size_t most) {
-  std::vector<std::vector<numeric>> lists;
-  for (const claim::Parameter& parameter : claim.parameters) {
-    lists.push_back(candidates(parameter));
-    if (lists.back().empty()) return {};
-  }
+using Lists = std::vector<std::vector<numeric>>;
+
+/// Small values of all parameters first.
+std::vector<Point> small_points(const claim::Claim& claim, const Lists& lists, const Point& start,
+                                std::size_t most) {
   Diagonals diagonals(claim, lists);
   std::vector<Point> found;
   Point point = start;
@@ -168,6 +166,48 @@ std::vector<Point> pool(const claim::Claim& claim, const Point& start, std::size
   return found;
 }
 
+/// Pairwise different later entries of the lists, in several arrangements.
+std::vector<Point> generic_points(const claim::Claim& claim, const Lists& lists,
+                                  const Point& start) {
+  std::vector<Point> found;
+  for (const std::size_t stride : {1, 2, 5})
+    for (std::size_t turn = 0; turn < 8; ++turn) {
+      Point point = start;
+      for (std::size_t i = 0; i < lists.size(); ++i) {
+        const std::size_t skipped = std::min<std::size_t>(3, lists[i].size() - 1);
+        const std::size_t at = skipped + (turn + stride * i) % (lists[i].size() - skipped);
+        point.set(claim.parameters[i].name, lists[i][at]);
+      }
+      if (admits_parameters(claim, point)) found.push_back(point);
+    }
+  return found;
+}
+
+bool same_values(const Point& a, const Point& b) {
+  return std::equal(a.values.begin(), a.values.end(), b.values.begin(), b.values.end(),
+                    [](const numeric& x, const numeric& y) { return x.is_equal(y); });
+}
+
+/// Distinct points in order of arrival, each with an admissible n.
+class Selection {
+ public:
+  Selection(const claim::Claim& claim, long span) : claim_(claim), span_(span) {}
+
+  void take(const std::vector<Point>& from, std::size_t most) {
+    for (const Point& point : from) {
+      if (out.size() >= most) return;
+      const bool known = std::any_of(out.begin(), out.end(),
+                                     [&](const Point& old) { return same_values(old, point); });
+      if (!known && admissible_span(claim_, point, span_) > 0) out.push_back(point);
+    }
+  }
+  std::vector<Point> out;
+
+ private:
+  const claim::Claim& claim_;
+  long span_;
+};
+
 }  // namespace
 
 std::vector<Point> sample_parameters(const claim::Claim& claim,
@@ -175,30 +215,21 @@ std::vector<Point> sample_parameters(const claim::Claim& claim,
                                      long span) {
   const Point start = blank(claim, names);
   if (claim.parameters.empty()) return {start};
-  struct Candidate {
-    Point point;
-    long admissible;
-  };
-  std::vector<Candidate> usable;
-  for (const Point& point : pool(claim, start, 40 + 10 * count)) {
-    const long admissible = admissible_span(claim, point, span);
-    if (admissible > 0) usable.push_back({point, admissible});
+  Lists lists;
+  for (const claim::Parameter& parameter : claim.parameters) {
+    lists.push_back(candidates(parameter));
+    if (lists.back().empty()) return {};
   }
-  std::vector<Point> out;
-  if (usable.empty()) return out;
-  // The generic one: most n are admissible, and the last among equals.
-  std::size_t generic = 0;
-  for (std::size_t i = 0; i < usable.size(); ++i)
-    if (usable[i].admissible >= usable[generic].admissible) generic = i;
-  out.push_back(usable[generic].point);
-  const std::size_t small = std::max<std::size_t>(2, count / 2 + 1);
-  for (std::size_t i = 0; i < usable.size() && out.size() < std::min(small, count); ++i)
-    if (i != generic) out.push_back(usable[i].point);
-  // The rest spread over the remaining candidates.
-  const std::size_t step = std::max<std::size_t>(1, usable.size() / (count + 1));
-  for (std::size_t i = small + step / 2; i < usable.size() && out.size() < count; i += step)
-    if (i != generic) out.push_back(usable[i].point);
-  return out;
+  std::vector<Point> generic = generic_points(claim, lists, start);
+  std::stable_sort(generic.begin(), generic.end(), [&](const Point& a, const Point& b) {
+    return admissible_span(claim, a, span) > admissible_span(claim, b, span);
+  });
+  const std::vector<Point> small = small_points(claim, lists, start, 60 + 10 * count);
+  Selection selection(claim, span);
+  selection.take(generic, std::max<std::size_t>(1, count / 2));
+  selection.take(small, count);
+  selection.take(generic, count);
+  return selection.out;
 }
 
 std::vector<std::string> hypothesis_texts(const claim::Claim& claim) {

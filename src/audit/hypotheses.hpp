@@ -22,8 +22,8 @@ namespace sumwright::audit {
 [[nodiscard]] bool admits(const claim::Claim& claim, const Point& at);
 
 /// Up to `count` admissible points (names in the order given; running variable and index 0), each
-/// with an admissible n among from .. from + span - 1: the most generic one first, then small and
-/// boundary values. Deterministic. With no parameter: one point.
+/// with an admissible n among from .. from + span - 1: half of them generic (different, not small),
+/// the others small and boundary values. Deterministic. With no parameter: one point.
 [[nodiscard]] std::vector<Point> sample_parameters(const claim::Claim& claim,
                                                    const std::vector<std::string>& names,
                                                    std::size_t count, long span);

@@ -39,7 +39,7 @@ numeric to_numeric(const mpq_class& value) {
 }
 
 long to_machine(const numeric& value) {
-  if (!value.is_integer()) throw std::logic_error("audit: not an integer: " + text_of(value));
+  if (!value.is_integer()) throw NotAnInteger("an integer was expected: " + text_of(value));
   if (value.int_length() > 40) throw TooLarge("an integer beyond 2^40");
   return value.to_long();
 }

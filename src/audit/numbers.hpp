@@ -19,10 +19,16 @@ class TooLarge : public std::runtime_error {
   explicit TooLarge(const std::string& what) : std::runtime_error(what) {}
 };
 
+/// A form of integer symbols that is no integer: the data is wrong. Makes the check disagree.
+class NotAnInteger : public std::runtime_error {
+ public:
+  explicit NotAnInteger(const std::string& what) : std::runtime_error(what) {}
+};
+
 [[nodiscard]] numeric to_numeric(const mpz_class& value);
 [[nodiscard]] numeric to_numeric(const mpq_class& value);
 
-/// An integer as a machine number. Throws TooLarge beyond 2^40, std::logic_error for a non-integer.
+/// An integer as a machine number. Throws TooLarge beyond 2^40, NotAnInteger.
 [[nodiscard]] long to_machine(const numeric& value);
 
 /// Decimal text; long numbers are shortened and their number of digits is told.

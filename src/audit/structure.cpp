@@ -60,6 +60,57 @@ void check_counts(const proof::Proof& proof, Check& check) {
     check.expect(proof.ranges[i].shift == i, [] { return std::string("range steps out of order"); });
 }
 
+bool contains(const proof::Affine& form, std::size_t symbol) {
+  return symbol < form.coefficients.size() && form.coefficients[symbol] != 0;
+}
+
+bool contains(const proof::Polynomial& polynomial, std::size_t symbol) {
+  return std::any_of(polynomial.terms.begin(), polynomial.terms.end(), [&](const auto& monomial) {
+    return symbol < monomial.exponents.size() && monomial.exponents[symbol] != 0;
+  });
+}
+
+bool contains(const proof::Product& product, std::size_t symbol) {
+  return std::any_of(product.coefficient.factors.begin(), product.coefficient.factors.end(),
+                     [&](const auto& entry) { return contains(entry.first, symbol); }) ||
+         std::any_of(product.atoms.begin(), product.atoms.end(), [&](const auto& entry) {
+           const proof::Atom& atom = entry.first;
+           return contains(atom.argument, symbol) || contains(atom.base, symbol) ||
+                  contains(atom.low, symbol) || contains(atom.high, symbol);
+         });
+}
+
+/// Where the index has been summed over or given a value, it must not occur any more.
+void check_index_is_gone(const proof::Proof& proof, Check& check) {
+  constexpr std::size_t kIndex = 1;
+  const auto product = [&](const proof::Product& one, const std::string& where) {
+    check.expect(!contains(one, kIndex), [&] { return "the index occurs in " + where; });
+  };
+  const auto balance = [&](const proof::Balance& one) {
+    for (const proof::BalanceTerm& term : one.terms) product(term.product, "balance " + one.id);
+    for (const proof::BalanceGroup& group : one.groups)
+      product(group.base.product, "balance " + one.id);
+  };
+  for (const auto* conversion : {&proof.closed, &proof.right_side})
+    if (*conversion)
+      for (const proof::Product& one : (*conversion)->products) product(one, (*conversion)->id);
+  if (proof.ends) balance(*proof.ends);
+  if (proof.closed_recurrence) balance(*proof.closed_recurrence);
+  for (const proof::InitialValue& initial : proof.initial) balance(initial.balance);
+}
+
+/// The common range depends on the running variable and integer parameters alone.
+void check_common_range(const proof::Proof& proof, Check& check) {
+  if (!proof.telescoping) return;
+  for (const proof::Affine* end : {&proof.telescoping->low, &proof.telescoping->high})
+    for (std::size_t i = 0; i < end->coefficients.size(); ++i)
+      check.expect(end->coefficients[i] == 0 ||
+                       (i < proof.symbols.size() &&
+                        (proof.symbols[i].kind == proof::SymbolKind::running ||
+                         proof.symbols[i].kind == proof::SymbolKind::integer_parameter)),
+                   [] { return std::string("an end of the common range has a symbol too many"); });
+}
+
 /// from .. threshold + J - 1 for equalities, from .. threshold - 1 for recurrences: each once.
 void check_induction(const proof::Proof& proof, Check& check) {
   check.expect(proof.threshold >= proof.from, [&] {
@@ -163,6 +214,8 @@ void check_structure(const Context& context, std::vector<Finding>& findings) {
   Check check("argument without gaps");
   check_parts(context.proof, check);
   check_counts(context.proof, check);
+  check_common_range(context.proof, check);
+  check_index_is_gone(context.proof, check);
   check_induction(context.proof, check);
   check_hypotheses_descend(context, check);
   check_references(context.proof, check);

@@ -39,7 +39,6 @@ class Parser {
   Parser(const Source& source, const MappedText& text, const Symbols& symbols, const Limits& limits,
          std::vector<Remark>* remarks)
       : source_(source),
-        text_(text),
         symbols_(symbols),
         limits_(limits),
         remarks_(remarks),
@@ -387,7 +386,6 @@ class Parser {
   }
 
   const Source& source_;
-  const MappedText& text_;
   const Symbols& symbols_;
   const Limits& limits_;
   std::vector<Remark>* remarks_;

@@ -341,6 +341,7 @@ class ClaimReader {
                          [&name](const Range& range) { return range.index == name; });
     };
     std::vector<std::string> indices;
+    indices.reserve(over.size());
     for (const Range& range : over) indices.push_back(range.index);
     for (const Entry& entry : certificate.value.entries) {
       if (!is_index(entry.key)) {

@@ -10,7 +10,8 @@
 
 namespace sumwright::claim {
 
-/// Limits that keep a stranger's file from exhausting the machine.
+/// Limits that keep a stranger's file from exhausting the machine. A tree that was read is
+/// never deeper than `tree_depth`, so recursive walks and its destruction are safe.
 struct Limits {
   std::size_t file_bytes = 1U << 20U;
   std::size_t nesting = 200;          ///< brackets, signs and powers one inside the other
@@ -41,8 +42,8 @@ struct ReadClaim {
 [[nodiscard]] ReadClaim read_claim_text(std::string name, std::string text,
                                         const Limits& limits = {});
 
-/// Parses one expression that stands at `base` offset of `source` as plain text
-/// (no TOML escapes), with the given names allowed as symbols. Used by the reader of
+/// Parses one expression that stands as plain text (no TOML escapes) at `where` in
+/// `source`, with the given names allowed as symbols. Used by the reader of
 /// obligations and by tests. Throws InputError.
 [[nodiscard]] ExpressionPtr parse_expression(const Source& source, Place where,
                                              const std::vector<std::string>& symbols,

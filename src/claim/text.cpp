@@ -1,4 +1,4 @@
-// Helpers on untrusted text, for messages that are safe to print.
+// Functions on untrusted text, for messages that are safe to print.
 //
 // Invariant: whatever bytes come in, what `printable` gives is valid UTF-8 without
 // control characters, so a file cannot drive the terminal that shows its faults.

@@ -1,4 +1,4 @@
-// Small helpers on untrusted text: UTF-8, display, nearest names.
+// Small functions on untrusted text: UTF-8, display, nearest names.
 #pragma once
 
 #include <cstddef>

@@ -145,9 +145,11 @@ class Assembler {
     out.expression = c.expression;
     out.region.text = place.region;
     for (const term::Leaf& leaf : c.leaves) {
-      Leaf plain{leaf.expression, leaf.rule, term::plain(leaf.value), {}};
-      for (const term::Requirement& r : leaf.requirements)
+      Leaf plain{leaf.expression, leaf.rule, term::plain(leaf.value), {}, {}};
+      for (const term::Requirement& r : leaf.requirements) {
         plain.conditions.push_back(requirement(r, place));
+        if (r.nonzero) plain.nonzero.push_back(nonzero(*r.nonzero, place, r.kind));
+      }
       out.leaves.push_back(std::move(plain));
     }
     for (const term::Denominator& d : c.denominators) {
@@ -297,7 +299,7 @@ class Assembler {
     out.low = term::plain(d.region->low);
     out.high = term::plain(d.region->high);
     out.conditions.push_back(
-        nonnegative(d.region->high - d.region->low + 1, beyond, ConditionKind::range));
+        nonnegative(d.region->high - d.region->low, beyond, ConditionKind::range));
     normal_form(t, out);
     proof_.telescoping = std::move(out);
   }

@@ -45,6 +45,10 @@ class Builder {
       return undecided("an equality of two sums needs a common recurrence of both sides",
                        "sum = sum (rule R8, common left multiple)");
     if (!make_terms()) return proof_;
+    for (const claim::Assumption& a : claim_->assumptions)
+      if (names_running(*a.left) || names_running(*a.right))
+        return undecided("a condition on the running variable itself, at " + place_text(a.place),
+                         "R6: an induction that stays inside the condition");
     if (claim_->is_question()) return answer_question();
     if (claim_->is_equality()) return prove_equality();
     return prove_recurrence();
@@ -325,6 +329,13 @@ class Builder {
       if (brought.draft.right_side->products.empty()) brought.draft.right_side.reset();
     }
     proof_.claim = stated;
+  }
+
+  [[nodiscard]] bool names_running(const claim::Expression& e) const {
+    if (e.operation == claim::Operation::symbol && e.name == claim_->running) return true;
+    for (const claim::ExpressionPtr& c : e.children)
+      if (names_running(*c)) return true;
+    return false;
   }
 
   static bool has_division(const claim::Expression& e) {

@@ -72,6 +72,7 @@ struct Leaf {
   LeafRule rule = LeafRule::factorial;
   Product value;
   std::vector<std::string> conditions;
+  std::vector<Nonzero> nonzero;  ///< powers: the bases that must not vanish
 };
 
 /// An author's denominator: `expression` (the divisor v of u / v, or the base u of u^-c) times

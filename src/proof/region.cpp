@@ -104,7 +104,7 @@ class Chooser {
   std::optional<RegionDraft> attempt(long threshold, const Affine& low, const Affine& high,
                                      std::string& why) const {
     RegionDraft region{threshold, low, high, {}};
-    if (!setting_.from(threshold).implies(high - low + 1)) {
+    if (!setting_.from(threshold).implies(high - low)) {
       why = "the common range may be empty";
       return std::nullopt;
     }

@@ -86,12 +86,13 @@ struct NonzeroFactor {
     linear,      ///< affine in integer symbols; linear integer arithmetic on the region
     positive,    ///< every coefficient is >= 0 and the constant one > 0 after symbol := symbol + shift
     excluded,    ///< scale * (x - value): excluded by entry `exclusion` of rational parameter x
-    assumed      ///< entry `assumption` of `assume`
+    assumed      ///< entry `assumption` of `assume`, u != v: u - v = scale * factor
   };
   Polynomial factor;
   long exponent = 1;
   Method method = Method::linear;
   std::vector<long> shift;     ///< positive: per symbol, its lower bound
+  Polynomial shifted;          ///< positive: +-factor in the variables symbol - shift, coefficients >= 0
   bool negated = false;        ///< positive: the factor is minus a positive polynomial
   std::size_t parameter = 0;   ///< excluded: symbol position of x
   std::size_t exclusion = 0;   ///< excluded: index in Parameter::excluded

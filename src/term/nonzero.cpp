@@ -45,6 +45,7 @@ std::optional<NonzeroFactor> positive(const Setting& setting, const Facts& facts
   }
   if (!constant) return std::nullopt;
   out.negated = sign < 0;
+  out.shifted = plain(sign < 0 ? -shifted : shifted);
   return out;
 }
 
@@ -111,10 +112,14 @@ std::optional<NonzeroFactor> assumed(const Setting& setting, const Polynomial& p
     const auto left = to_rational_function(setting, *assumptions[i].left);
     const auto right = to_rational_function(setting, *assumptions[i].right);
     if (!left || !right) continue;
-    if (!((*left - *right).numerator().primitive_part() == p.primitive_part())) continue;
+    const algebra::RationalFunction difference = *left - *right;
+    if (!difference.is_polynomial()) continue;
+    const auto [scale, exact] = difference.numerator().divide(p);
+    if (!exact || !scale.is_constant()) continue;
     NonzeroFactor out;
     out.method = NonzeroFactor::Method::assumed;
     out.assumption = i;
+    out.scale = scale.constant();
     return out;
   }
   return std::nullopt;

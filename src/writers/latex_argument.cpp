@@ -64,7 +64,7 @@ void LatexDocument::certificate() {
                   claim_.is_equality() ? ", let $" + inline_tex(of_running('S', 0)) + "$ be the sum," : ""));
   coefficient_list();
   const std::string method =
-      proof_.evidence_brought ? "The following was given with the claim and has been checked. "
+      proof_.evidence_brought ? "The recurrence was given with the claim. "
       : proof_.order == 0 ? "The following was found by Gosper's algorithm for indefinite sums. "
                           : "The following was found by Zeilberger's method of creative telescoping. ";
   Formula left;
@@ -76,10 +76,16 @@ void LatexDocument::certificate() {
   Formula right = at('G', 0, 1);
   append(right, piece("-" + inline_tex(at('G', 0)), width_of(at('G', 0)) + 1.25));
   say(method + "With $" + inline_tex(at('G', 0)) + "=" + inline_tex(at('R', 0)) + "\\," + f +
-      "$ and the rational function\n");
-  const ExpressionFormula printed = expressions_.parsed(
+      "$ and ");
+  const auto printed = expressions_.parsed(
       proof_.certificate_text.empty() ? "0" : proof_.certificate_text, symbol_names());
-  say(display(at('R', 0), printed.formula, label("certificate"), ""));
+  if (printed) {
+    say("the rational function\n" + display(at('R', 0), printed->formula, label("certificate"), ""));
+  } else {
+    say("a rational function $" + inline_tex(at('R', 0)) +
+        "$ that is too long to be printed (it stands in \\texttt{obligations.txt} under "
+        "\\texttt{certificate}; its numerator is in essence the polynomial " + reference("numerator") + "),\n");
+  }
   say("we have, after division by $" + f + "$, an identity of rational functions:\n");
   say(display(left, right, label("rational"), "."));
   say("At single integer points its terms may have zero denominators. It is therefore not used there; "
@@ -91,6 +97,7 @@ void LatexDocument::base_term() {
   if (!proof_.telescoping) return;
   const proof::Telescoping& t = *proof_.telescoping;
   head("The base term");
+  pieces();
   say("Put\n" + display(at('B', 0), values_.product(t.base.product), label("base"), ""));
   std::vector<DisplayRow> rows;
   const Formula c = at('c', 0);
@@ -111,6 +118,23 @@ void LatexDocument::base_term() {
                   "following is an equality of numbers at all integers with {1}:\n",
                   m, expressions_.mixed(t.region.text.empty() ? "no restriction" : t.region.text)));
   say(display_list(rows, "."));
+}
+
+// The parts of a summand that is a sum of several terms, by which later parts name them.
+void LatexDocument::pieces() {
+  if (proof_.summand.products.size() < 2) return;
+  std::vector<DisplayRow> rows;
+  Formula sum;
+  for (std::size_t j = 0; j < proof_.summand.products.size(); ++j) {
+    const std::string tex = inline_tex(at('F', 0));
+    const std::string letter = names_.letter('F');
+    const Formula name = piece(letter + "_{" + std::to_string(j + 1) + "}" + tex.substr(letter.size()),
+                               0.5 + width_of(at('F', 0)));
+    append_term(sum, name);
+    rows.push_back({name, values_.product(proof_.summand.products[j])});
+  }
+  say("The summand has several terms,\n" + display(at('F', 0), sum, "", ",") + "where\n" +
+      display_list(rows, "."));
 }
 
 void LatexDocument::equality() {
@@ -194,35 +218,36 @@ std::string LatexDocument::vanishing_clause(const proof::Vanishing& vanishing) {
   return "because " + enumeration(atoms) + " there (" + latex_text(vanishing.condition) + ")";
 }
 
-std::string LatexDocument::range_sentence(const proof::RangeStep& step) {
+// The author's sum at one shift as the common sum and single terms.
+Formula LatexDocument::range_sum(const proof::RangeStep& step) {
   const proof::Telescoping& t = *proof_.telescoping;
   const auto shift = static_cast<long>(step.shift);
-  const std::string k = names_.symbol(proof_.symbols[1].name).tex;
+  const Piece& k = names_.symbol(proof_.symbols[1].name);
   const auto bound = [&](const proof::Affine& affine, long by) {
     proof::Affine moved = affine;
     moved.constant += by;
-    return inline_tex(values_.affine(moved));
+    return values_.affine(moved);
   };
-  const std::string f = names_.letter('F');
-  std::string text = fmt::format("${} = \\sum_{{{}={}}}^{{{}}} {}", inline_tex(of_running('S', shift)),
-                                 k, bound(t.low, 0), bound(t.high, 0), inline_tex(at('F', shift)));
-  const auto add_points = [&](unsigned points, bool upper) {
-    for (unsigned j = 1; j <= points && points <= 3; ++j) {
-      const long by = upper ? static_cast<long>(j) : -static_cast<long>(j);
-      text += fmt::format(" + {}({},{})", f, running(shift), bound(upper ? t.high : t.low, by));
+  Formula out = piece(fmt::format("\\sum_{{{}={}}}^{{{}}} {}", k.tex, inline_tex(bound(t.low, 0)),
+                                  inline_tex(bound(t.high, 0)), inline_tex(at('F', shift))),
+                      4 + width_of(at('F', shift)));
+  const auto add = [&](const proof::Affine& affine, long by) {
+    const Formula point = bound(affine, by);
+    append_term(out, piece(fmt::format("{}({},{})", names_.letter('F'), running(shift), inline_tex(point)),
+                           4 + width_of(point) + width_of(of_running('F', shift)) - 2));
+  };
+  const auto add_points = [&](unsigned points, const proof::Affine& affine, long sign) {
+    for (unsigned j = 1; j <= points; ++j) {
+      if (points <= 3 || j == 1 || j == points) {
+        add(affine, sign * static_cast<long>(j));
+      } else if (j == 2) {
+        append(out, piece("+\\cdots", 2.5));
+      }
     }
-    if (points <= 3) return;
-    const long last = upper ? static_cast<long>(points) : -static_cast<long>(points);
-    text += fmt::format(" + {0}({1},{2}) + \\cdots + {0}({1},{3})", f, running(shift),
-                        bound(upper ? t.high : t.low, upper ? 1 : -1),
-                        bound(upper ? t.high : t.low, last));
   };
-  add_points(step.low_points, false);
-  add_points(step.high_points, true);
-  text += "$";
-  if (step.below) text += "; below this range the summand is $0$, " + vanishing_clause(*step.below);
-  if (step.above) text += "; above this range the summand is $0$, " + vanishing_clause(*step.above);
-  return text;
+  add_points(step.low_points, t.low, -1);
+  add_points(step.high_points, t.high, 1);
+  return out;
 }
 
 void LatexDocument::summation() {
@@ -233,16 +258,28 @@ void LatexDocument::summation() {
   ++beyond.constant;
   head("Summation");
   say(fmt::format("Let ${}\\ge {}$ and sum {} over ${}\\le {}\\le {}$. The right side telescopes to "
-                  "${}({},{})-{}({},{})$. On the left,\n\\begin{{itemize}}\\raggedright\n",
+                  "${}({},{})-{}({},{})$. For the left side,\n",
                   running(0), proof_.threshold, reference("telescoping"),
                   inline_tex(values_.affine(t.low)), k, inline_tex(values_.affine(t.high)),
                   names_.letter('G'), running(0), inline_tex(values_.affine(beyond)),
                   names_.letter('G'), running(0), inline_tex(values_.affine(t.low))));
-  for (std::size_t i = 0; i < proof_.ranges.size(); ++i) {
-    const bool last = i + 1 == proof_.ranges.size();
-    say("\\item " + range_sentence(proof_.ranges[i]) + (last ? "." : ",") + "\n");
+  std::vector<DisplayRow> rows;
+  std::string reasons;
+  for (const proof::RangeStep& step : proof_.ranges) {
+    const auto shift = static_cast<long>(step.shift);
+    rows.push_back({of_running('S', shift), range_sum(step)});
+    const auto reason = [&](const std::optional<proof::Vanishing>& vanishing, const char* where) {
+      if (!vanishing) return;
+      reasons += fmt::format("\\item ${}$ is $0$ {} this range, {}.\n", inline_tex(at('F', shift)), where,
+                             vanishing_clause(*vanishing));
+    };
+    reason(step.below, "below");
+    reason(step.above, "above");
   }
-  say("\\end{itemize}\n");
+  say(display_list(rows, "."));
+  if (reasons.empty()) return;
+  say("The claim's own ends and these differ by terms that vanish:\n\\begin{itemize}\\raggedright\n" + reasons +
+      "\\end{itemize}\n");
 }
 
 }  // namespace sumwright::writers

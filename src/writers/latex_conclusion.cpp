@@ -21,18 +21,58 @@ std::string LatexDocument::zero_reason(const proof::BalanceTerm& term) {
   return "${1/" + inline_tex(values_.atom(*term.zero_atom)) + "}=0$ (" + latex_text(*term.zero) + ")";
 }
 
-void LatexDocument::balance_zeros(const proof::Balance& balance) {
+// The term in the letters of the argument, with its sign: what `product` is the value of.
+Formula LatexDocument::term_label(const proof::BalanceTerm& term, std::optional<long> at) {
+  using Origin = proof::BalanceTerm::Origin;
+  const auto letter = [&](char name, std::size_t pieces) {
+    std::string out = names_.letter(name);
+    if (pieces > 1) out += "_{" + std::to_string(term.piece + 1) + "}";
+    return out;
+  };
+  const auto shift = static_cast<long>(term.shift);
+  const std::string n = at ? std::to_string(*at + shift) : running(shift);
+  const std::string f = letter('F', proof_.summand.products.size());
+  const std::string point = inline_tex(values_.affine(term.point));
+  const std::string f_value = has_index() ? fmt::format("{}({},{})", f, n, point) : fmt::format("{}({})", f, n);
+  const std::string a = fmt::format("{}_{{{}}}{}\\,", names_.letter('a'), term.shift,
+                                    at ? "(" + std::to_string(*at) + ")" : "");
+  const bool weighted = !at && proof_.telescoping && !weight_is_one();
+  const std::string d = weighted ? names_.letter('d') + "(" + running(0) + ")\\," : "";
+  const auto label = [](const std::string& tex) { return piece(tex, 0.42 * static_cast<double>(tex.size())); };
+  switch (term.origin) {
+    case Origin::upper_end: {
+      proof::Affine beyond = term.point;
+      ++beyond.constant;
+      return label(fmt::format("{}({},{})", names_.letter('G'), n, inline_tex(values_.affine(beyond))));
+    }
+    case Origin::lower_end:
+      return label(fmt::format("-{}({},{})", names_.letter('G'), n, point));
+    case Origin::explicit_point:
+      return label(d + a + f_value);
+    case Origin::value:
+      return label((claim_.is_equality() ? "" : a) + f_value);
+    case Origin::right_side:
+      return label(fmt::format("-{}{}({})", d, letter('b', proof_.right_side ? proof_.right_side->products.size() : 1), n));
+    case Origin::closed_form:
+      break;
+  }
+  const std::string c = letter('C', proof_.closed ? proof_.closed->products.size() : 1);
+  return label(fmt::format("-{}{}{}({})", d, at ? "" : a, c, n));
+}
+
+void LatexDocument::balance_zeros(const proof::Balance& balance, std::optional<long> at) {
   std::string items;
   for (const proof::BalanceTerm& term : balance.terms) {
     if (!term.zero) continue;
-    items += fmt::format("\\item ${}=0$, because {}.\n", inline_tex(expressions_.math(term.text)),
+    items += fmt::format("\\item ${}=0$, because {}.\n", inline_tex(term_label(term, at)),
                          zero_reason(term));
   }
   if (items.empty()) return;
   say("These terms vanish:\n\\begin{itemize}\\raggedright\n" + items + "\\end{itemize}\n");
 }
 
-void LatexDocument::balance_group(const proof::Balance& balance, const proof::BalanceGroup& group) {
+void LatexDocument::balance_group(const proof::Balance& balance, const proof::BalanceGroup& group,
+                                  std::optional<long> at) {
   const auto position = static_cast<std::size_t>(&group - balance.groups.data());
   const bool trivial = group.base.product.atoms.empty();
   const Formula base = piece(base_name(names_, position), 1.2);
@@ -46,14 +86,15 @@ void LatexDocument::balance_group(const proof::Balance& balance, const proof::Ba
   Formula sum;
   for (std::size_t m = 0; m < group.members.size(); ++m) {
     Formula share = values_.factored(group.polynomials[m], trivial);
-    append_term(sum, LatexValues::is_sum(group.polynomials[m]) ? bracketed(values_.factored(group.polynomials[m])) : share);
+    const Formula factor = values_.factored(group.polynomials[m], false);
+    append_term(sum, factor);
     if (!trivial) {
       const std::string tex = inline_tex(share);
       if (tex == "1") share = piece("", 0);
       if (tex == "-1") share = piece("-", 0.8);
       append_tex(share, "\\," + inline_tex(base), 1.4);
     }
-    rows.push_back({expressions_.math(balance.terms[group.members[m]].text), share});
+    rows.push_back({term_label(balance.terms[group.members[m]], at), share});
   }
   say(display_list(rows, ","));
   if (group.members.size() > 1 && width_of(sum) < 3 * kRoom) {
@@ -63,13 +104,13 @@ void LatexDocument::balance_group(const proof::Balance& balance, const proof::Ba
   }
 }
 
-void LatexDocument::balance(const proof::Balance& balance) {
-  balance_zeros(balance);
+void LatexDocument::balance(const proof::Balance& balance, std::optional<long> at) {
+  balance_zeros(balance, at);
   if (balance.groups.size() > 1) {
     say(fmt::format("The other terms fall into {} classes of similar terms, each of which adds up to $0$ "
                     "by itself. ", balance.groups.size()));
   }
-  for (const proof::BalanceGroup& group : balance.groups) balance_group(balance, group);
+  for (const proof::BalanceGroup& group : balance.groups) balance_group(balance, group, at);
 }
 
 void LatexDocument::ends() {
@@ -185,7 +226,7 @@ void LatexDocument::initial_values() {
     if (value.value || value.balance.groups.empty()) continue;
     say(fmt::format("At ${}={}$ the sum has the terms below; with the right side they add up to $0$. ",
                     running(0), value.at));
-    balance(value.balance);
+    balance(value.balance, value.at);
   }
 }
 
@@ -193,8 +234,7 @@ void LatexDocument::conclusion() {
   head("Conclusion");
   const std::string n = running(0);
   if (!claim_.is_equality()) {
-    say(fmt::format("Summation, the values at the ends and the range ${}\\ge {}$ give {}.{}\n", n,
-                    proof_.threshold, reference("claim"),
+    say(fmt::format("This proves {} for ${}\\ge {}$.{}\n", reference("claim"), n, proof_.threshold,
                     proof_.initial.empty() ? "" : " For smaller values it has been verified directly."));
     return;
   }

@@ -15,8 +15,8 @@ namespace {
   const auto cell = [](double width, const std::string& text) {
     return fmt::format("\\parbox[t]{{{:.2f}\\textwidth}}{{\\raggedright\\strut {}\\strut}}", width, text);
   };
-  return "\\noindent" + cell(0.07, id) + "\\hspace{.01\\textwidth}%\n" + cell(0.16, kind) +
-         "\\hspace{.01\\textwidth}%\n" + cell(0.46, statement) + "\\hspace{.01\\textwidth}%\n" +
+  return "\\noindent" + cell(0.07, id) + "\\hspace{.01\\textwidth}%\n" + cell(0.19, kind) +
+         "\\hspace{.01\\textwidth}%\n" + cell(0.43, statement) + "\\hspace{.01\\textwidth}%\n" +
          cell(0.27, settled) + "\\par\n";
 }
 

@@ -1,6 +1,7 @@
 // The appendix as a whole: one object per proof, one method per part; used by latex*.cpp only.
 #pragma once
 
+#include <optional>
 #include <string>
 #include <vector>
 
@@ -33,15 +34,19 @@ class LatexDocument {
   void base_term();
   void equality();
   void summation();
-  [[nodiscard]] std::string range_sentence(const proof::RangeStep& step);
+  [[nodiscard]] Formula range_sum(const proof::RangeStep& step);
+  void pieces();
   [[nodiscard]] std::string vanishing_clause(const proof::Vanishing& vanishing);
 
   // latex_conclusion.cpp: ends, closed form, leading coefficient, initial values
   void ends();
   void closed_form();
-  void balance(const proof::Balance& balance);
-  void balance_zeros(const proof::Balance& balance);
-  void balance_group(const proof::Balance& balance, const proof::BalanceGroup& group);
+  /// `at`: the literal n of an initial value.
+  void balance(const proof::Balance& balance, std::optional<long> at = std::nullopt);
+  void balance_zeros(const proof::Balance& balance, std::optional<long> at);
+  void balance_group(const proof::Balance& balance, const proof::BalanceGroup& group,
+                     std::optional<long> at);
+  [[nodiscard]] Formula term_label(const proof::BalanceTerm& term, std::optional<long> at);
   [[nodiscard]] std::string zero_reason(const proof::BalanceTerm& term);
   void leading();
   [[nodiscard]] std::string nonzero_reason(const proof::Nonzero& nonzero);

@@ -19,7 +19,8 @@ using claim::Operation;
 
 constexpr double kPlus = 1.25;
 constexpr double kScript = 0.75;
-constexpr std::size_t kLongest = 1200;  // characters of an expression set as a formula
+constexpr double kWidestFraction = 20;
+constexpr std::size_t kLongest = 3000;  // characters of an expression set as a formula
 constexpr std::size_t kDeepest = 40;    // braces inside one another; TeX has 255 group levels
 
 [[nodiscard]] bool starts_with_digit(const Formula& formula) {
@@ -49,19 +50,40 @@ Formula LatexExpressions::at_least(const Expression& expression, Strength needed
   return bracketed(printed.formula, printed.tall);
 }
 
+// A fraction; in a row with breaks when that would be too wide.
+ExpressionFormula LatexExpressions::quotient(const Expression& expression) const {
+  const Formula above = formula(*expression.children[0]);
+  const Formula below = formula(*expression.children[1]);
+  ExpressionFormula out;
+  out.strength = Strength::product;
+  if (std::max(width_of(above), width_of(below)) <= kWidestFraction) {
+    out.tall = true;
+    out.formula = piece("\\frac{" + inline_tex(above) + "}{" + inline_tex(below) + "}",
+                        std::max(width_of(above), width_of(below)) + 0.3);
+    return out;
+  }
+  Formula factor = formula(*expression.children[0], true);
+  if (width_of(below) <= kWidestFraction) {
+    const bool negative = starts_with_minus(factor);  // of a product: of the whole fraction
+    if (negative) factor.front().tex.erase(0, 1);
+    out.tall = true;
+    out.formula = piece(std::string(negative ? "-" : "") + "\\frac{1}{" + inline_tex(below) + "}\\,",
+                        width_of(below) + 1.4);
+    if (starts_with_digit(factor)) prepend_tex(factor, "\\cdot ", 0.8);
+    append(out.formula, factor, 1);
+    return out;
+  }
+  out.formula = factor;
+  append_tex(out.formula, "\\,\\big/", 0.8);
+  append(out.formula, bracketed(below), 1);
+  return out;
+}
+
 ExpressionFormula LatexExpressions::binary(const Expression& expression) const {
   const Expression& u = *expression.children[0];
   const Expression& v = *expression.children[1];
   ExpressionFormula out;
-  if (expression.operation == Operation::divide) {
-    const Formula above = formula(u);
-    const Formula below = formula(v);
-    out.formula = piece("\\frac{" + inline_tex(above) + "}{" + inline_tex(below) + "}",
-                        std::max(width_of(above), width_of(below)) + 0.3);
-    out.strength = Strength::product;
-    out.tall = true;
-    return out;
-  }
+  if (expression.operation == Operation::divide) return quotient(expression);
   const bool product = expression.operation == Operation::multiply;
   const ExpressionFormula left = print(u);
   ExpressionFormula right = print(v);
@@ -77,6 +99,7 @@ ExpressionFormula LatexExpressions::binary(const Expression& expression) const {
   if (!product) {
     const bool plus = expression.operation == Operation::add;
     prepend_tex(right.formula, plus ? "+" : "-", kPlus);
+    right.formula.front().product = false;
     append(out.formula, right.formula);
     return out;
   }
@@ -215,18 +238,16 @@ bool LatexExpressions::fits(const Expression& expression) const {
   return widest(printed) <= kNumberedRoom - 8 && deepest_brace(inline_tex(printed)) <= kDeepest;
 }
 
-ExpressionFormula LatexExpressions::parsed(const std::string& text,
-                                           const std::vector<std::string>& symbols) const {
-  ExpressionFormula code;
-  code.formula = piece("\\text{" + latex_code(text, 300) + "}", 0.53 * static_cast<double>(text.size()));
-  if (text.size() > kLongest) return code;
+std::optional<ExpressionFormula> LatexExpressions::parsed(
+    const std::string& text, const std::vector<std::string>& symbols) const {
+  if (text.size() > kLongest) return std::nullopt;
   try {
     const claim::Source source{"value", text};
     const claim::ExpressionPtr tree = parse_expression(source, {0, text.size()}, symbols);
-    if (!fits(*tree)) return code;
+    if (!fits(*tree)) return std::nullopt;
     return print(*tree);
   } catch (const claim::InputError&) {
-    return code;  // still shown, as it stands
+    return std::nullopt;
   }
 }
 

@@ -1,6 +1,7 @@
 // The author's expressions, and short mathematical texts of a proof, as formulas.
 #pragma once
 
+#include <optional>
 #include <string>
 #include <vector>
 
@@ -34,9 +35,10 @@ class LatexExpressions {
   /// Whether the expression can be set as a formula at all: not too long, deep or wide.
   [[nodiscard]] bool fits(const claim::Expression& expression) const;
 
-  /// An expression of the claim language in a text; typewriter type when it does not parse.
-  [[nodiscard]] ExpressionFormula parsed(const std::string& text,
-                                         const std::vector<std::string>& symbols) const;
+  /// An expression of the claim language in a text; nothing when it is too large for a page or does
+  /// not parse.
+  [[nodiscard]] std::optional<ExpressionFormula> parsed(
+      const std::string& text, const std::vector<std::string>& symbols) const;
 
   /// Text of a proof such as `n >= 0, 0 <= k <= n + 1` or `a_1 F(n + 1, n + 1)`: names, numbers and
   /// operators become mathematics, other words stay words.
@@ -47,6 +49,7 @@ class LatexExpressions {
 
  private:
   [[nodiscard]] ExpressionFormula binary(const claim::Expression& expression) const;
+  [[nodiscard]] ExpressionFormula quotient(const claim::Expression& expression) const;
   [[nodiscard]] ExpressionFormula power(const claim::Expression& expression) const;
   [[nodiscard]] ExpressionFormula call(const claim::Expression& expression) const;
   [[nodiscard]] Formula at_least(const claim::Expression& expression, Strength needed) const;

@@ -26,6 +26,8 @@ class LineFiller {
     lines_.push_back(line_);
     return lines_;
   }
+  /// Room left on the last line.
+  [[nodiscard]] double left() const { return left_; }
 
  private:
   // Pieces [from, to), whose inner places are at `depth` or deeper.
@@ -83,10 +85,15 @@ class LineFiller {
     }
     return rows;
   }
-  for (const std::string& line : LineFiller(room, room - kIndent).fill(left)) {
+  LineFiller filler(room, room - kIndent);
+  for (const std::string& line : filler.fill(left)) {
     rows.push_back(rows.empty() ? "&" + first_line(line) : "&\\quad " + line);
   }
   if (right.empty()) return rows;
+  if (width_of(right) + kRelation <= std::min(filler.left(), room / 4)) {
+    rows.back() += " = " + inline_tex(right);
+    return rows;
+  }
   const double inner = room - 2 - kRelation;
   bool first = true;
   for (const std::string& line : LineFiller(inner, inner - kIndent).fill(right)) {

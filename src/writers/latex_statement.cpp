@@ -122,9 +122,14 @@ void LatexDocument::statement_display() {
                   display(of_running('S', 0), sum, label("sum"), "")));
   const bool symbolic = !recurrence_is_short();
   say(display(recurrence_left(symbolic), right_side(), label("claim"), symbolic ? "," : "."));
+  const bool right_named = inline_tex(right_side()) == inline_tex(of_running('b', 0));
   if (symbolic) {
     say("where\n");
     coefficient_list();
+  }
+  if (right_named) {
+    say("Here $" + inline_tex(of_running('b', 0)) + "$ is, as in a claim file,\n");
+    code_paragraph(proof_.right_side_text);
   }
 }
 
@@ -141,9 +146,10 @@ Formula LatexDocument::recurrence_left(bool symbolic) {
     } else if (text == "-1") {
       term = piece("-", 0.8);
     } else if (text != "1") {
-      const ExpressionFormula printed = expressions_.parsed(text, symbol_names());
-      term = printed.strength == Strength::sum ? bracketed(printed.formula, printed.tall)
-                                               : printed.formula;
+      const auto printed = expressions_.parsed(text, symbol_names());
+      term = !printed                               ? piece("", 100 * kRoom)  // not on a page
+             : printed->strength == Strength::sum ? bracketed(printed->formula, printed->tall)
+                                                  : printed->formula;
       append_tex(term, "\\,", 0.2);
     }
     const Formula value = of_running('S', static_cast<long>(i));
@@ -156,7 +162,8 @@ Formula LatexDocument::recurrence_left(bool symbolic) {
 Formula LatexDocument::right_side() {
   const std::string& text = proof_.right_side_text;
   if (text.empty() || text == "0") return piece("0", 0.52);
-  return expressions_.parsed(text, symbol_names()).formula;
+  const auto printed = expressions_.parsed(text, symbol_names());
+  return printed ? printed->formula : of_running('b', 0);
 }
 
 void LatexDocument::conventions() {

@@ -63,6 +63,7 @@ bool starts_with_minus(const Formula& formula) {
 
 void append_term(Formula& out, const Formula& more) {
   Formula term = more;
+  if (!term.empty()) term.front().product = false;
   if (!out.empty() && !starts_with_minus(term)) prepend_tex(term, "+", kPlus);
   append(out, term);
 }

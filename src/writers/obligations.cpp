@@ -140,13 +140,14 @@ void write_argument(ObligationsDocument& out, const proof::Proof& proof, const T
     write_equality(out, print, proof);
   }
   if (!proof.ranges.empty()) write_ranges(out, print, proof);
+  const bool weighted = proof.telescoping && print.factored(proof.telescoping->weight.polynomial) != "1";
   if (proof.ends) {
     out.heading("ends");
-    write_balance(out, print, "", *proof.ends);
+    write_balance(out, print, "", *proof.ends, weighted);
   }
   if (proof.closed_recurrence) {
     out.heading("closed recurrence");
-    write_balance(out, print, "", *proof.closed_recurrence);
+    write_balance(out, print, "", *proof.closed_recurrence, weighted);
   }
   if (proof.leading) {
     out.heading("leading coefficient");

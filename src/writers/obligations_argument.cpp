@@ -51,6 +51,15 @@ void write_zero_range(ObligationsDocument& out, const TextPrinter& print, const 
   if (vanishing) out.statement(key, vanishing_text(print, *vanishing));
 }
 
+// The texts of terms are without sign and weight; their values contain both.
+[[nodiscard]] std::string sign_text(const proof::BalanceTerm& term, bool weighted) {
+  using Origin = proof::BalanceTerm::Origin;
+  const bool end = term.origin == Origin::upper_end || term.origin == Origin::lower_end;
+  const bool minus = term.origin == Origin::lower_end || term.origin == Origin::right_side ||
+                     term.origin == Origin::closed_form;
+  return std::string(minus ? "- " : "") + (weighted && !end ? "weight * " : "");
+}
+
 void write_group(ObligationsDocument& out, const TextPrinter& print, const std::string& key,
                  const proof::BalanceGroup& group) {
   out.definition(key + " base", print.product(group.base.product));
@@ -186,12 +195,12 @@ void write_ranges(ObligationsDocument& out, const TextPrinter& print, const proo
 }
 
 void write_balance(ObligationsDocument& out, const TextPrinter& print, const std::string& prefix,
-                   const proof::Balance& balance) {
+                   const proof::Balance& balance, bool weighted) {
   out.statement(prefix + "terms add up to 0", region_text(balance.region));
   for (std::size_t t = 0; t < balance.terms.size(); ++t) {
     const proof::BalanceTerm& term = balance.terms[t];
     const std::string key = fmt::format("{}term {}", prefix, t + 1);
-    out.statement(key, term.text);
+    out.statement(key, sign_text(term, weighted) + term.text);
     const std::string value = print.product(term.product);
     out.definition(key + " value", value);
     if (term.zero) {
@@ -221,7 +230,7 @@ void write_initial_values(ObligationsDocument& out, const TextPrinter& print,
       write_zero_range(out, print, sum_key + " zero below", sum.below);
       write_zero_range(out, print, sum_key + " zero above", sum.above);
     }
-    write_balance(out, print, key + " ", initial.balance);
+    write_balance(out, print, key + " ", initial.balance, false);
   }
 }
 

@@ -3,7 +3,11 @@
 
 namespace sumwright::writers {
 
-inline constexpr const char* kToolVersion = "0.1.0";
+#ifdef SUMWRIGHT_VERSION
+inline constexpr const char* kToolVersion = SUMWRIGHT_VERSION;
+#else
+inline constexpr const char* kToolVersion = "unversioned";
+#endif
 inline constexpr int kRecordFormat = 1;
 inline constexpr int kClaimFormat = 1;
 inline constexpr int kObligationsFormat = 1;

@@ -24,6 +24,9 @@ struct NamedText {
 /// `prefix` is the logical name of the generated files' library.
 [[nodiscard]] std::vector<NamedText> coq_files(const proof::Proof& proof, const std::string& prefix);
 
+/// The text of Claim.v alone.
+[[nodiscard]] std::string coq_claim_text(const proof::Proof& proof);
+
 /// record.json: verdict, subject, sizes, conditions, format versions, hashes of `files`. Deterministic.
 [[nodiscard]] std::string record_json(const proof::Proof& proof, const std::vector<NamedText>& files);
 

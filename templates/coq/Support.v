@@ -32,4 +32,4 @@ Require Export List.
 Export ListNotations.
 From Sumwright Require Export
   Statement Scalars Products Powers Factorials Progressions Sums Induction Positivity
-  Values Continuation.
+  Values Leaves Continuation.

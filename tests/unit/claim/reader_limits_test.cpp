@@ -1,7 +1,7 @@
 // Hostile claim files: each is refused, for the stated reason, in well under a second.
 #include <gtest/gtest.h>
 
-#include <chrono>
+#include <ctime>
 #include <string>
 
 #include "claim/reader.hpp"
@@ -25,14 +25,32 @@ std::string with_summand(const std::string& summand) {
   return replaced(full_claim(), "binomial(n, k)^2", summand);
 }
 
+// Sanitizers slow everything down.
+#if defined(__SANITIZE_ADDRESS__)
+constexpr double kSlower = 20;
+#else
+constexpr double kSlower = 1;
+#endif
+
+// Processor time, as other work on the machine is not the reader's fault.
+double seconds_since(std::clock_t start) {
+  return static_cast<double>(std::clock() - start) / static_cast<double>(CLOCKS_PER_SEC);
+}
+
 void expect_refused_quickly(const std::string& text, const std::string& message) {
-  const auto start = std::chrono::steady_clock::now();
+  const std::clock_t start = std::clock();
   const auto what = refusal(text);
-  const std::chrono::duration<double> time = std::chrono::steady_clock::now() - start;
+  EXPECT_LT(seconds_since(start), 1.0 * kSlower) << message;
   ASSERT_TRUE(what) << "was read; expected: " << message;
   EXPECT_NE(what->find(message), std::string::npos) << *what;
   EXPECT_LT(what->size(), 1000U);
-  EXPECT_LT(time.count(), 1.0) << message;
+}
+
+void expect_read_quickly(const std::string& text) {
+  const std::clock_t start = std::clock();
+  const auto what = refusal(text);
+  EXPECT_LT(seconds_since(start), 3.0 * kSlower);
+  EXPECT_FALSE(what) << *what;
 }
 
 TEST(ReaderLimits, ExpressionsThatExplode) {
@@ -103,11 +121,11 @@ TEST(ReaderLimits, ManyEntriesOfEachKindStayQuick) {
     parameters += "p" + std::to_string(i) + " = { in = 'rationals', not = [" +
                   repeated("'9^99/7^99', ", 700) + "] }\n";
   }
-  const std::string text = replaced(full_claim(), "x = { in", parameters + "x = { in");
-  const auto start = std::chrono::steady_clock::now();
-  EXPECT_FALSE(refusal(text));
-  const std::chrono::duration<double> time = std::chrono::steady_clock::now() - start;
-  EXPECT_LT(time.count(), 5.0);
+  expect_read_quickly(replaced(full_claim(), "x = { in", parameters + "x = { in"));
+  const std::string sum = "'n" + repeated("+n", 490) + "', ";
+  expect_read_quickly(replaced(full_claim(), "\"n + 1\"]", repeated(sum, 990) + "\"n\"]"));
+  const std::string fraction = "'1/3" + repeated("+9^99/7^99", 95) + "', ";
+  expect_read_quickly(replaced(full_claim(), "\"n + 1\"]", repeated(fraction, 990) + "\"n\"]"));
 }
 
 TEST(ReaderLimits, CanBeNarrowed) {

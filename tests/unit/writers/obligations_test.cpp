@@ -234,7 +234,8 @@ TEST(Obligations, RefusalsSayWhereAndWhat) {
   const std::string text = obligations_text(fixture::squares());
   const std::vector<std::tuple<std::string, std::string, std::string>> cases = {
       {"Sumwright obligations, format 1", "Sumwright obligations, format 2", "o.txt:1:1: error: expected"},
-      {"== base term =", "== base terms ", "a heading is"},
+      {"== base term =", "== base terms ", "did you mean 'base term'?"},
+      {"== base term =", "== base term ", "a heading is"},
       {"evidence: found", "evidence = found", "expected `:` after this key"},
       {"evidence: found", "evidnce: found", "'evidnce' is not a key of this section"},
       {"order: 1", "order: 01", "leading zeros"},
@@ -262,7 +263,6 @@ TEST(Obligations, RefusalsSayWhereAndWhat) {
       {"order: 1\n", "order: 1\r\n", "a character that does not belong here"},
       {"order: 1\n", "order: 1\norder: 1\n", "given twice"}};
   for (const auto& [from, to, wanted] : cases) {
-    const std::string heading = "== base term";
     std::string changed = replaced(text, from, to);
     if (from.starts_with("== conclusion")) {
       changed = replaced(text, "== conclusion =====", "== conditions =====");

@@ -136,7 +136,7 @@ proof::InitialValue value_one() {
   using Origin = proof::BalanceTerm::Origin;
   out.balance.terms = {
       similar_term(balance_term(Origin::value, "F(0, 0)", one), 0, times(1), one, {}),
-      similar_term(balance_term(Origin::value, "-C(0)", product(times(-1), {})), 0, times(-1), one,
+      similar_term(balance_term(Origin::closed_form, "right side at 0", product(times(-1), {})), 0, times(-1), one,
                    {})};
   out.balance.groups = {{{"E1", one}, {0, 1}, {times(1), times(-1)}}};
   return out;
@@ -244,12 +244,12 @@ proof::Balance squares_closed() {
                                     {{fact({1, 0}, 0), 2}, {rfact({1, 0}, 2), 2}, {rfact({0, 0}, -1), 2}}));
   upper.zero = "c5";
   upper.zero_atom = rfact({0, 0}, -1);
-  auto lower = balance_term(Origin::lower_end, "-G(n, 0)", product(times(0), {}));
+  auto lower = balance_term(Origin::lower_end, "G(n, 0)", product(times(0), {}));
   lower.zero = "polynomial factor";
-  auto now = balance_term(Origin::closed_form, "-a_0 C(n)",
+  auto now = balance_term(Origin::closed_form, "a_0 C(n)",
                           product(times(2, {{linear(2, 0, 1), 1}}),
                                   {{fact({2, 0}, 0), 1}, {rfact({1, 0}, 0), 2}}));
-  auto next = balance_term(Origin::closed_form, "-a_1 C(n + 1)",
+  auto next = balance_term(Origin::closed_form, "a_1 C(n + 1)",
                            product(times(-1, {{linear(1, 0, 1), 1}}),
                                    {{fact({2, 0}, 2), 1}, {rfact({1, 0}, 1), 2}}));
   const Factored share = times(2, {{linear(2, 0, 1), 1}, {linear(1, 0, 1), 2}});
@@ -322,17 +322,17 @@ proof::Balance halves_closed() {
   const Product two = product(times(1), {{power(2, {1, 0}, 0), 1}});
   const Factored share = times(4, {{linear(1, 0, 1), 1}});
   const Factored other = times(-4, {{linear(1, 0, 1), 1}});
-  auto lower = balance_term(Origin::lower_end, "-G(n, 0)", product(times(0), {}));
+  auto lower = balance_term(Origin::lower_end, "G(n, 0)", product(times(0), {}));
   lower.zero = "polynomial factor";
   Product upper = end;
   upper.coefficient = other;
   b.terms = {similar_term(balance_term(Origin::upper_end, "G(n, n + 1)", upper), 0, other, end, {}),
              lower,
-             similar_term(balance_term(Origin::explicit_point, "a_1 F(n + 1, n + 1)",
+             similar_term(explicit_term(
                                        product(times(1), {{fact({2, 0}, 2), 1}, {rfact({1, 0}, 1), 2}, {power(2, {-1, 0}, -1), 1}})),
                           0, share, end, {}),
-             similar_term(balance_term(Origin::closed_form, "-a_0 C(n)", product(times(2), {{power(2, {1, 0}, 0), 1}})), 1, times(2), two, {}),
-             similar_term(balance_term(Origin::closed_form, "-a_1 C(n + 1)", product(times(-1), {{power(2, {1, 0}, 1), 1}})), 1, times(-2), two, {})};
+             similar_term(balance_term(Origin::closed_form, "a_0 C(n)", product(times(2), {{power(2, {1, 0}, 0), 1}})), 1, times(2), two, {}),
+             similar_term(balance_term(Origin::closed_form, "a_1 C(n + 1)", product(times(-1), {{power(2, {1, 0}, 1), 1}})), 1, times(-2), two, {})};
   b.groups = {{{"E1", end}, {0, 2}, {other, share}}, {{"E2", two}, {3, 4}, {times(2), times(-2)}}};
   return b;
 }

@@ -1,0 +1,83 @@
+// `find`: from a claim to a proved recurrence for its sum, and to a copy of the claim that carries it.
+#include <fmt/format.h>
+
+#include <cstdio>
+
+#include "claim/reader.hpp"
+#include "claim/text.hpp"
+#include "cli/commands.hpp"
+#include "cli/decision.hpp"
+#include "cli/evidence_text.hpp"
+#include "cli/report.hpp"
+#include "cli/single_file.hpp"
+
+namespace sumwright::cli {
+
+namespace {
+
+namespace fs = std::filesystem;
+
+// FILE may be the claim itself when it is written as the claim was; another name for the same file
+// is more likely a mistake.
+void check_target(const Options& options) {
+  std::error_code code;
+  if (*options.write != options.input && fs::equivalent(*options.write, options.input, code)) {
+    throw Unusable(claim::printable(options.write->string()) +
+                   ": is the claim file under another name");
+  }
+}
+
+// The copy must say what was found: read again, its evidence is checked as a claim of its own.
+void check_copy(const claim::Source& source, const std::string& text, const Options& options,
+                const Watch& watch, Progress& progress) {
+  const claim::ReadClaim read = claim::read_claim_text(source.name, text);
+  auto recurrence = std::make_shared<claim::Claim>(read.claim);
+  recurrence->closed = nullptr;
+  recurrence->other_sum.reset();
+  const Decision decision = decide(recurrence, options, watch, progress);
+  if (decision.status() != Status::established) {
+    throw Fault("the evidence found does not pass when it is read back: " + decision.proof.reason);
+  }
+}
+
+[[nodiscard]] std::string found_text(const claim::Claim& claim, const Decision& decision) {
+  std::string out = verdict_text(decision);
+  if (decision.status() != Status::established) return out;
+  out += "\n" + evidence_toml(decision.proof);
+  if (claim.is_equality()) {
+    out += "\n# This is proved of the sum alone; `sumwright check` decides the equality.\n";
+  }
+  return out;
+}
+
+}  // namespace
+
+Status find(const Options& options) {
+  if (options.write) check_target(options);
+  const std::shared_ptr<const claim::Claim> claim = read_claim(options.input);
+  Decision decision;
+  std::string copy;
+  {
+    const Watch watch(options);
+    Progress progress;
+    decision = decide(as_question(*claim), options, watch, progress);
+    if (options.write && decision.status() == Status::established) {
+      copy = with_evidence(*claim->source, evidence_of(decision.proof));
+      check_copy(*claim->source, copy, options, watch, progress);
+    }
+  }
+  print_result(options.json ? decision_json(decision) : found_text(*claim, decision));
+  if (options.write && decision.status() != Status::established) {
+    fmt::print(stderr, "sumwright: nothing found, nothing written\n");
+  } else if (options.write) {
+    write_single_file(*options.write, copy);
+    fmt::print(stderr, "sumwright: evidence written to {}\n",
+               claim::printable(options.write->string()));
+    if (!claim->is_equality() && !claim->is_question()) {
+      fmt::print(stderr, "sumwright: it replaces the recurrence that the file claimed\n");
+    }
+  }
+  return decision.status();
+}
+
+}  // namespace sumwright::cli

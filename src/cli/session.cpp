@@ -1,0 +1,116 @@
+// Limits of the process, so that a hostile claim ends in a verdict and not in a frozen machine.
+//
+// Invariant: every way out that is taken here leaves files as they were and gives status 3.
+#include "cli/session.hpp"
+
+#include <gmp.h>
+#include <signal.h>
+#include <sys/resource.h>
+#include <unistd.h>
+
+#include <chrono>
+#include <cstdio>
+#include <cstdlib>
+#include <cstring>
+#include <new>
+
+namespace sumwright::cli {
+
+namespace {
+
+using algebra::Deadline;
+
+void on_signal(int) {
+  if (!Deadline::interrupt_flag.exchange(true)) return;
+  constexpr char text[] = "\nsumwright: interrupted\n";
+  const ssize_t ignored = ::write(STDERR_FILENO, text, sizeof text - 1);
+  (void)ignored;
+  ::_exit(static_cast<int>(Status::undecided));
+}
+
+// The number library ends the process when memory is short unless its allocators throw.
+void* allocate(std::size_t size) {
+  void* memory = std::malloc(size);
+  if (memory == nullptr) throw std::bad_alloc();
+  return memory;
+}
+void* reallocate(void* old, std::size_t, std::size_t size) {
+  void* memory = std::realloc(old, size);
+  if (memory == nullptr) throw std::bad_alloc();
+  return memory;
+}
+void release(void* memory, std::size_t) { std::free(memory); }
+
+[[nodiscard]] sigset_t ending_signals() {
+  sigset_t set;
+  sigemptyset(&set);
+  sigaddset(&set, SIGINT);
+  sigaddset(&set, SIGTERM);
+  return set;
+}
+
+}  // namespace
+
+void prepare_process() {
+  mp_set_memory_functions(allocate, reallocate, release);
+  algebra::install_abort_hook();
+  struct sigaction action {};
+  action.sa_handler = on_signal;
+  sigemptyset(&action.sa_mask);
+  action.sa_flags = SA_RESTART;
+  sigaction(SIGINT, &action, nullptr);
+  sigaction(SIGTERM, &action, nullptr);
+}
+
+void limit_memory(std::uint64_t bytes) {
+#if defined(__SANITIZE_ADDRESS__)
+  (void)bytes;  // the sanitizer reserves more address space than any limit
+#else
+  rlimit limit{};
+  if (getrlimit(RLIMIT_AS, &limit) != 0) return;
+  if (limit.rlim_max == RLIM_INFINITY || bytes < limit.rlim_max) limit.rlim_cur = bytes;
+  setrlimit(RLIMIT_AS, &limit);
+#endif
+}
+
+SignalShield::SignalShield() {
+  const sigset_t set = ending_signals();
+  pthread_sigmask(SIG_BLOCK, &set, nullptr);
+}
+
+SignalShield::~SignalShield() {
+  const sigset_t set = ending_signals();
+  pthread_sigmask(SIG_UNBLOCK, &set, nullptr);
+}
+
+Watch::Watch(const Options& options)
+    : deadline_(std::chrono::milliseconds(static_cast<long long>(options.time_limit * 1000) + 1)) {
+  const SignalShield shield;  // signals are for the main thread
+  thread_ = std::thread(&Watch::wait, this, options.time_limit, options.json);
+}
+
+Watch::~Watch() {
+  {
+    const std::lock_guard<std::mutex> lock(mutex_);
+    over_ = true;
+  }
+  changed_.notify_all();
+  thread_.join();
+}
+
+void Watch::wait(double seconds, bool json) {
+  // Work that asks for the time stops by itself; the rest gets a tenth more, or two seconds.
+  const std::chrono::duration<double> grace(seconds + std::max(2.0, seconds / 10));
+  std::unique_lock<std::mutex> lock(mutex_);
+  if (changed_.wait_for(lock, grace, [this] { return over_; })) return;
+  if (json) {
+    std::fputs("{\n  \"verdict\": \"undecided\",\n  \"reason\": \"time limit reached\"\n}\n", stdout);
+  } else {
+    std::fputs("undecided: time limit reached\n", stdout);
+  }
+  std::fflush(stdout);
+  std::fputs("sumwright: stopped inside a step that does not ask for the time\n", stderr);
+  std::_Exit(static_cast<int>(Status::undecided));
+}
+
+}  // namespace sumwright::cli

@@ -1,0 +1,211 @@
+// Balances: one lemma for each term (a polynomial times its base term, or 0), then one line of algebra.
+
+#include <fmt/format.h>
+
+#include "writers/coq_sections.hpp"
+#include "writers/coq_statement.hpp"
+#include "writers/coq_steps.hpp"
+
+namespace sumwright::writers::coq {
+
+using Origin = proof::BalanceTerm::Origin;
+
+namespace {
+
+class BalanceText {
+ public:
+  BalanceText(const proof::Proof& proof, const proof::Balance& balance, std::string region)
+      : proof_(proof),
+        balance_(balance),
+        region_(std::move(region)),
+        scope_(plain_scope(proof)),
+        names_(names(proof)) {
+    literal_ = balance.id.starts_with("initial");
+  }
+
+  std::string run(std::vector<std::string>& texts) {
+    bases();
+    for (std::size_t i = 0; i < balance_.terms.size(); ++i) {
+      texts.push_back(written(balance_.terms[i]));
+      lemma(i, texts.back());
+    }
+    return out_;
+  }
+
+ private:
+  void bases() {
+    for (const proof::BalanceGroup& g : balance_.groups)
+      out_ += fmt::format("Definition {} ({} : Z) : K :=\n  ({})%K.\n\n", g.base.id, names_.n,
+                          product(g.base.product, scope_));
+  }
+
+  [[nodiscard]] std::string at(const proof::Affine& point) const {
+    return bracketed(affine(point, scope_));
+  }
+
+  [[nodiscard]] std::string scale(unsigned i) const {
+    if (!proof_.telescoping) return fmt::format("a{} (inj {})", i, names_.n);
+    return fmt::format("weight (inj {0}) * a{1} (inj {0})", names_.n, i);
+  }
+
+  [[nodiscard]] std::string piece_at(const proof::BalanceTerm& t, const std::string& n) const {
+    if (names_.index) return fmt::format("F{} {}%Z {}", t.piece + 1, n, at(t.point));
+    return fmt::format("F{} {}%Z", t.piece + 1, n);
+  }
+
+  /// The term as it stands in the recurrence.
+  [[nodiscard]] std::string written(const proof::BalanceTerm& t) const {
+    const std::string& n = names_.n;
+    switch (t.origin) {
+      case Origin::upper_end:
+        return fmt::format("up (inj {0}) (inj {1}) * c (inj {0}) (inj {1} + inj 1) * base {0} {1}", n,
+                           at(t.point));
+      case Origin::lower_end:
+        return fmt::format("- (down (inj {0}) (inj {1}) * c (inj {0}) (inj {1}) * base {0} {1})", n,
+                           at(t.point));
+      case Origin::explicit_point:
+        return fmt::format("{} * {}", scale(t.shift), piece_at(t, shifted(n, t.shift)));
+      case Origin::right_side:
+        if (literal_) return fmt::format("- b{} {}", t.piece + 1, point_of_value(t));
+        return fmt::format("- ({}b{} {})",
+                           proof_.telescoping ? fmt::format("weight (inj {}) * ", n) : std::string(),
+                           t.piece + 1, n);
+      case Origin::closed_form:
+        if (literal_) return fmt::format("- C{} {}", t.piece + 1, point_of_value(t));
+        return fmt::format("- ({} * C{} {}%Z)", scale(t.shift), t.piece + 1, shifted(n, t.shift));
+      case Origin::value: break;
+    }
+    const std::string where =
+        bracketed(std::to_string(std::stol(balance_.id.substr(8)) + static_cast<long>(t.shift)));
+    std::string f = names_.index ? fmt::format("F{} {} {}", t.piece + 1, where, at(t.point))
+                                 : fmt::format("F{} {}", t.piece + 1, where);
+    if (proof_.claim->is_equality()) return f;
+    return fmt::format("a{} (inj {}) * {}", t.shift, point_of_value(t), f);
+  }
+
+  [[nodiscard]] std::string point_of_value(const proof::BalanceTerm&) const {
+    return bracketed(balance_.id.substr(8));
+  }
+
+  [[nodiscard]] proof::Affine constant(long value) const {
+    proof::Affine out;
+    out.coefficients.assign(proof_.symbols.size(), 0);
+    out.constant = value;
+    return out;
+  }
+
+  /// What the definition behind the term is unfolded to.
+  [[nodiscard]] Unfolded unfolded(const proof::BalanceTerm& t) const {
+    Unfolded u{nullptr, {}, scope_};
+    const long value = literal_ ? std::stol(balance_.id.substr(8)) : 0;
+    proof::Affine n = constant(static_cast<long>(t.shift));
+    n.coefficients[0] = 1;
+    std::string n_text = t.shift == 0 ? names_.n : fmt::format("{} + {}", names_.n, t.shift);
+    if (literal_) {
+      const long where = value + (t.origin == Origin::value ? static_cast<long>(t.shift) : 0);
+      n = constant(where);
+      n_text = std::to_string(where);
+    }
+    switch (t.origin) {
+      case Origin::upper_end:
+      case Origin::lower_end:
+        u.original = &proof_.telescoping->base.product;
+        u.by = {{1, t.point}};
+        u.scope = with(scope_, 1, affine(t.point, scope_));
+        return u;
+      case Origin::right_side: u.original = &proof_.right_side->products[t.piece]; break;
+      case Origin::closed_form: u.original = &proof_.closed->products[t.piece]; break;
+      default: u.original = &proof_.summand.products[t.piece]; break;
+    }
+    if (t.shift != 0 || literal_) {
+      u.by[0] = n;
+      u.scope = with(u.scope, 0, n_text);
+    }
+    if (names_.index && (t.origin == Origin::explicit_point || t.origin == Origin::value)) {
+      u.by[1] = t.point;
+      // Simultaneous: the point is already written in n.
+      u.scope = with(u.scope, 1, affine(t.point, scope_));
+    }
+    return u;
+  }
+
+  [[nodiscard]] std::string definitions(const proof::BalanceTerm& t) const {
+    const std::string factors = proof_.telescoping ? fmt::format("weight, a{}, ", t.shift)
+                                                   : fmt::format("a{}, ", t.shift);
+    switch (t.origin) {
+      case Origin::upper_end: return "up, c, base";
+      case Origin::lower_end: return "down, c, base";
+      case Origin::explicit_point: return factors + fmt::format("F{}", t.piece + 1);
+      case Origin::closed_form:
+        return (literal_ ? std::string() : factors) + fmt::format("C{}", t.piece + 1);
+      case Origin::right_side:
+        return (proof_.telescoping && !literal_ ? std::string("weight, ") : std::string()) +
+               fmt::format("b{}", t.piece + 1);
+      case Origin::value:
+        return (proof_.claim->is_equality() ? std::string() : fmt::format("a{}, ", t.shift)) +
+               fmt::format("F{}", t.piece + 1);
+    }
+    return "";
+  }
+
+  void lemma(std::size_t i, const std::string& text) {
+    const proof::BalanceTerm& t = balance_.terms[i];
+    std::string right = "inj 0";
+    std::string script = fmt::format("  intros{}. unfold {}.\n", region_.empty() ? "" : " Hn",
+                                     definitions(t));
+    if (t.zero) {
+      script += zero_script(t);
+    } else {
+      const proof::BalanceGroup& g = balance_.groups[t.group];
+      right = fmt::format("({}) * {} {}", factored(t.instance->right.coefficient, scope_), g.base.id,
+                          literal_ ? "0" : names_.n);
+      script = fmt::format("  intros{}. unfold {}, {}.\n", region_.empty() ? "" : " Hn",
+                           definitions(t), g.base.id);
+      script += instance_tactics(proof_, *t.instance, unfolded(t), {}, scope_);
+    }
+    out_ += fmt::format("Lemma {}_term_{} {}: {}\n  ({} = {})%K.\nProof.\n{}Qed.\n\n", balance_.id, i + 1,
+                        literal_ ? std::string() : fmt::format("({} : Z) ", names_.n), region_, text,
+                        right, script);
+  }
+
+  std::string zero_script(const proof::BalanceTerm& t) const {
+    if (!t.zero_atom) return respell(unfolded(t), scope_) + "  inj_norm. " + zero_closing(t);
+    return respell(unfolded(t), scope_) +
+           fmt::format("  rewrite (rfact_neg K {}) by lia. ring.\n",
+                       bracketed(affine(t.zero_atom->argument, scope_)));
+  }
+
+  [[nodiscard]] std::string zero_closing(const proof::BalanceTerm&) const { return "ring.\n"; }
+
+  const proof::Proof& proof_;
+  const proof::Balance& balance_;
+  std::string region_;
+  Scope scope_;
+  Names names_;
+  bool literal_ = false;
+  std::string out_;
+};
+
+}  // namespace
+
+std::string balance_lemmas(const proof::Proof& proof, const proof::Balance& balance,
+                           const std::string& region, std::vector<std::string>& term_texts) {
+  return BalanceText(proof, balance, region).run(term_texts);
+}
+
+std::string balance_rewrites(const proof::Proof&, const proof::Balance& balance,
+                             const std::string& arguments) {
+  std::string out;
+  for (std::size_t i = 0; i < balance.terms.size(); ++i)
+    out += fmt::format("  rewrite ({}_term_{}{}).\n", balance.id, i + 1, arguments);
+  return out;
+}
+
+std::string balance_closing(const proof::Balance& balance) {
+  bool fraction = false;
+  for (const proof::BalanceTerm& t : balance.terms)
+    fraction = fraction || (t.instance && has_fraction(t.instance->right.coefficient));
+  return fraction ? "field" : "ring";
+}
+
+}  // namespace sumwright::writers::coq

@@ -1,0 +1,460 @@
+// From the author's vocabulary to products of atoms: one lemma per function call, one per denominator, and
+// the conversion that puts them together.
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <set>
+
+#include "claim/affine.hpp"
+#include "writers/coq_sections.hpp"
+#include "writers/coq_statement.hpp"
+#include "writers/coq_steps.hpp"
+
+namespace sumwright::writers::coq {
+
+using claim::Expression;
+using claim::Operation;
+using proof::AtomKind;
+using proof::LeafRule;
+
+namespace {
+
+class ConversionText {
+ public:
+  ConversionText(const proof::Proof& proof, const proof::Conversion& c, std::string what,
+                 std::string piece, bool with_index)
+      : proof_(proof),
+        c_(c),
+        what_(std::move(what)),
+        piece_(std::move(piece)),
+        with_index_(with_index),
+        scope_(plain_scope(proof)),
+        names_(names(proof)) {
+    variables_ = with_index ? fmt::format("({} {} : Z)", names_.n, names_.k)
+                            : fmt::format("({} : Z)", names_.n);
+    arguments_ = with_index ? names_.n + " " + names_.k : names_.n;
+    premises_ = fmt::format("{} <= {} -> ", bracketed(std::to_string(proof.from)), names_.n);
+    hypotheses_ = "Hn";
+    if (with_index) {
+      const claim::Range& r = proof.claim->sum.over[0];
+      premises_ += fmt::format("{} <= {} <= {} -> ", integer_text(proof, *r.low.value), names_.k,
+                               integer_text(proof, *r.high.value));
+      hypotheses_ += " Hk";
+    }
+  }
+
+  std::string run() {
+    define_pieces();
+    for (std::size_t i = 0; i < c_.leaves.size(); ++i) leaf(i);
+    for (std::size_t i = 0; i < c_.denominators.size(); ++i) denominator(i);
+    conversion();
+    return out_;
+  }
+
+ private:
+  [[nodiscard]] std::string leaf_name(std::size_t i) const {
+    return fmt::format("{}_leaf_{}", what_, i + 1);
+  }
+
+  [[nodiscard]] proof::Affine affine_of(const Expression& e) const {
+    std::set<std::string> integers;
+    for (const proof::Symbol& s : proof_.symbols)
+      if (s.kind != proof::SymbolKind::rational_parameter) integers.insert(s.name);
+    proof::Affine out;
+    out.coefficients.assign(proof_.symbols.size(), 0);
+    const auto view = claim::as_affine(e, integers);
+    if (!view) return out;
+    out.constant = view->constant;
+    for (const auto& [name, c] : view->coefficients)
+      for (std::size_t i = 0; i < proof_.symbols.size(); ++i)
+        if (proof_.symbols[i].name == name) out.coefficients[i] = c;
+    return out;
+  }
+
+  static proof::Affine combine(const proof::Affine& a, long factor, const proof::Affine& b,
+                               long constant) {
+    proof::Affine out = a;
+    for (std::size_t i = 0; i < out.coefficients.size(); ++i)
+      out.coefficients[i] += factor * b.coefficients[i];
+    out.constant += factor * b.constant + constant;
+    return out;
+  }
+
+  [[nodiscard]] std::string z(const proof::Affine& a) const { return bracketed(affine(a, scope_)); }
+
+  void define_pieces() {
+    const std::string type = with_index_ ? fmt::format("({} {} : Z)", names_.n, names_.k)
+                                         : fmt::format("({} : Z)", names_.n);
+    for (std::size_t j = 0; j < c_.products.size(); ++j)
+      out_ += fmt::format("Definition {}{} {} : K :=\n  ({})%K.\n", piece_, j + 1, type,
+                          product(c_.products[j], scope_));
+    out_ += "\n";
+  }
+
+  void lemma(const std::string& name, const std::string& statement, const std::string& script) {
+    out_ += fmt::format("Lemma {} {} : {}\n  {}.\nProof.\n  intros {}.\n{}Qed.\n\n", name, variables_,
+                        premises_, statement, hypotheses_, script);
+  }
+
+  // ---------------------------------------------------------------- leaves
+
+  [[nodiscard]] std::string leaf_text(const proof::Leaf& l) const {
+    return l.rule == LeafRule::reciprocal_factorial ? reciprocal_text(proof_, *l.expression)
+                                                    : field_text(proof_, *l.expression);
+  }
+
+  void leaf(std::size_t i) {
+    const proof::Leaf& l = c_.leaves[i];
+    lemma(leaf_name(i), fmt::format("{}%K = ({})%K", leaf_text(l), product(l.value, scope_)),
+          leaf_script(l));
+  }
+
+  [[nodiscard]] const proof::Atom* interval(const proof::Leaf& l) const {
+    for (const auto& [a, e] : l.value.atoms)
+      if (a.kind == AtomKind::interval_product) return &a;
+    return nullptr;
+  }
+
+  std::string leaf_script(const proof::Leaf& l) {
+    if (l.rule == LeafRule::power) return power_script(l);
+    const Expression& e = *l.expression;
+    const std::string close = " by first [index | pq | pqf].\n  inj_norm. ring.\n";
+    const auto rewrite = [&](const std::string& law) { return "  rewrite (" + law + ")" + close; };
+    const proof::Affine a = affine_of(*e.children[0]);
+    if (l.rule == LeafRule::factorial || l.rule == LeafRule::reciprocal_factorial)
+      return rewrite(fmt::format("leaf_{} K {} {}",
+                                 l.rule == LeafRule::factorial ? "factorial" : "rfactorial",
+                                 integer_text(proof_, *e.children[0]), z(a)));
+    const proof::Affine b = affine_of(*e.children[1]);
+    const std::string second = integer_text(proof_, *e.children[1]);
+    const auto field = [&] { return field_text(proof_, *e.children[0]) + "%K"; };
+    switch (l.rule) {
+      case LeafRule::binomial_factorials:
+        if (!is_integer_argument(proof_, *e.children[0])) break;
+        return rewrite(fmt::format("leaf_binomial K {} {} {} {} {}",
+                                   integer_text(proof_, *e.children[0]), second, z(a), z(b),
+                                   z(combine(a, -1, b, 0))));
+      case LeafRule::binomial_interval: return binomial_interval(l, second, b, rewrite);
+      case LeafRule::rising_factorials:
+        return rewrite(fmt::format("leaf_rising_factorials K {} {} {} {} {}", field(), z(a), second,
+                                   z(combine(a, 1, b, -1)), z(combine(a, 0, b, -1))));
+      case LeafRule::rising_reflected: {
+        proof::Affine zero = a;
+        for (long& c : zero.coefficients) c = 0;
+        zero.constant = 0;
+        const proof::Affine minus = combine(zero, -1, a, 0);
+        return rewrite(fmt::format("leaf_rising_reflected K {} {} {} {} {} {}", field(), z(a), second,
+                                   z(b), z(minus), z(combine(minus, -1, b, 0))));
+      }
+      case LeafRule::falling_factorials:
+        return rewrite(fmt::format("leaf_falling_factorials K {} {} {} {} {}", field(), z(a), second,
+                                   z(a), z(combine(a, -1, b, 0))));
+      case LeafRule::rising_interval:
+      case LeafRule::falling_interval:
+        if (const proof::Atom* ip = interval(l))
+          return rewrite(fmt::format("leaf_{}_ip K {} {} {} {} {}",
+                                     l.rule == LeafRule::rising_interval ? "rising" : "falling",
+                                     field(), interval_base(*ip, scope_) + "%K", second, z(ip->low),
+                                     z(ip->high)));
+        break;
+      default: break;
+    }
+    return "  values. inj_norm. field.\n";
+  }
+
+  template <typename Rewrite>
+  std::string binomial_interval(const proof::Leaf& l, const std::string& second,
+                                const proof::Affine& b, const Rewrite& rewrite) {
+    const Expression& upper = *l.expression->children[0];
+    const proof::Atom* ip = interval(l);
+    if (ip == nullptr) return "  values. inj_norm. field.\n";
+    if (is_integer_argument(proof_, upper))
+      return rewrite(fmt::format("leaf_binomial_ip K {} {} {} {} {}", integer_text(proof_, upper),
+                                 second, z(ip->low), z(ip->high), z(b)));
+    return rewrite(fmt::format("leaf_gbinomial_ip K {}%K {}%K {} {} {} {}", field_text(proof_, upper),
+                               interval_base(*ip, scope_), second, z(ip->low), z(ip->high), z(b)));
+  }
+
+  // ---------------------------------------------------------------- powers
+
+  struct Part {
+    std::string base;
+    long exponent = 1;
+    std::string to;  ///< the exponent in the atom
+  };
+
+  /// The multiple e with image = e * exponent (both affine, exponent not 0).
+  static long multiple(const proof::Affine& image, const proof::Affine& exponent) {
+    for (std::size_t i = 0; i < exponent.coefficients.size(); ++i)
+      if (exponent.coefficients[i] != 0) return image.coefficients[i] / exponent.coefficients[i];
+    return exponent.constant == 0 ? 1 : image.constant / exponent.constant;
+  }
+
+  static std::string part_text(const Part& p) {
+    return p.exponent == 1 ? p.base : fmt::format("{} ^ {}", p.base, p.exponent);
+  }
+
+  static std::string parts_text(const std::vector<Part>& parts, std::size_t first) {
+    if (first >= parts.size()) return "inj 1";
+    if (first + 1 == parts.size()) return part_text(parts[first]);
+    return fmt::format("({} * {})", part_text(parts[first]), parts_text(parts, first + 1));
+  }
+
+  std::string side_conditions(const proof::Leaf& l) const {
+    std::string out = "reflexivity | index | right; index | left; numeric_neq0 | numeric_neq0 | "
+                      "left; split; numeric_neq0";
+    for (const proof::Nonzero& why : l.nonzero)
+      if (!why.factors.empty()) {
+        const std::string one = nonzero_tactic(proof_, why, scope_);
+        out += fmt::format(" | ({0}) | left; {0}", one);
+      }
+    return out + " | pq | pqf";
+  }
+
+  std::string power_script(const proof::Leaf& l) {
+    const Expression& e = *l.expression;
+    const std::string v = field_text(proof_, *e.children[0]);
+    const std::string written = integer_text(proof_, *e.children[1]);
+    const proof::Affine exponent = affine_of(*e.children[1]);
+    std::vector<Part> above;
+    std::vector<Part> below;
+    for (const auto& [a, count] : l.value.atoms) {
+      const long m = multiple(a.argument, exponent);
+      Part p{power_base(a.base, scope_), std::abs(m), z(a.argument)};
+      (m > 0 ? above : below).push_back(p);
+    }
+    const std::string by = " by first [" + side_conditions(l) + "].\n";
+    std::string out;
+    std::string current = written;
+    if (!below.empty()) {
+      proof::Affine zero = exponent;
+      for (long& c : zero.coefficients) c = 0;
+      zero.constant = 0;
+      const std::string minus = z(combine(zero, -1, exponent, 0));
+      out += fmt::format("  rewrite (zpow_div_base K {}%K ({})%K ({})%K {} {})", v,
+                         parts_text(above, 0), parts_text(below, 0), written, minus) + by;
+      out += split(below, minus, by);
+    } else {
+      out += fmt::format("  rewrite (leaf_zpow K {}%K ({})%K {} {})", v, parts_text(above, 0), written,
+                         written) + by;
+    }
+    if (above.empty())
+      out += fmt::format("  rewrite (zpow_one_base K (inj 1) {}) by reflexivity.\n", written);
+    else
+      out += split(above, written, by);
+    return out + "  inj_norm. ring.\n";
+  }
+
+  static std::string split(const std::vector<Part>& parts, const std::string& exponent,
+                           const std::string& by) {
+    std::string out;
+    for (std::size_t i = 0; i + 1 < parts.size(); ++i)
+      out += fmt::format("  rewrite (zpow_mul_base K ({})%K ({})%K ({})%K {})", parts_text(parts, i),
+                         part_text(parts[i]), parts_text(parts, i + 1), exponent) + by;
+    for (const Part& p : parts) {
+      if (p.exponent == 1)
+        out += fmt::format("  rewrite (leaf_zpow K {0}%K {0}%K {1} {2})", p.base, exponent, p.to) + by;
+      else
+        out += fmt::format("  rewrite (zpow_pow_base K ({})%K {}%K {} {} {})", part_text(p), p.base,
+                           p.exponent, exponent, p.to) + by;
+    }
+    return out;
+  }
+
+  // ---------------------------------------------------------------- denominators
+
+  [[nodiscard]] std::string divisor_text(const proof::Denominator& d) const {
+    const std::string v = field_text(proof_, *d.expression);
+    if (d.node->operation == Operation::power && d.expression == d.node->children[0]) {
+      const auto exponent = claim::as_literal(*d.node->children[1]);
+      return fmt::format("({} ^ {})", v, mpz_class(abs(*exponent)).get_str());
+    }
+    return v;
+  }
+
+  /// Leaves of `e` that stand outside recorded divisors.
+  void collect(const Expression& e, std::set<std::string>& out, bool reciprocal,
+               const Expression* root) const {
+    if (&e != root)
+      for (const proof::Denominator& d : c_.denominators) {
+        if (d.node.get() != &e) continue;
+        if (e.operation == Operation::divide && d.expression == e.children[1])
+          collect(*e.children[0], out, reciprocal, root);
+        return;
+      }
+    if (e.operation == Operation::call ||
+        (e.operation == Operation::power && !claim::as_literal(*e.children[1]))) {
+      out.insert(claim::to_text(e) + (reciprocal && e.name == "factorial" ? "|r" : ""));
+      return;
+    }
+    if (e.operation == Operation::divide) {
+      collect(*e.children[0], out, reciprocal, root);
+      collect(*e.children[1], out, !reciprocal, root);
+      return;
+    }
+    if (e.operation == Operation::power) {
+      const auto exponent = claim::as_literal(*e.children[1]);
+      collect(*e.children[0], out, reciprocal != (*exponent < 0), root);
+      return;
+    }
+    for (const claim::ExpressionPtr& c : e.children) collect(*c, out, reciprocal, root);
+  }
+
+  std::string leaf_rewrites(const Expression& within, const Expression* root) const {
+    std::set<std::string> found;
+    collect(within, found, false, root);
+    std::string out;
+    for (std::size_t i = 0; i < c_.leaves.size(); ++i) {
+      const proof::Leaf& l = c_.leaves[i];
+      const std::string key = claim::to_text(*l.expression) +
+                              (l.rule == LeafRule::reciprocal_factorial ? "|r" : "");
+      if (found.contains(key))
+        out += fmt::format("  rewrite ({} {} {}).\n", leaf_name(i), arguments_, hypotheses_);
+    }
+    return out;
+  }
+
+  std::string inner_divisions(const proof::Denominator& outer) const {
+    std::string out;
+    for (std::size_t i = c_.denominators.size(); i-- > 0;)
+      if (&c_.denominators[i] != &outer && contains(*outer.expression, c_.denominators[i].node.get()))
+        out += division_rewrite(i);
+    return out;
+  }
+
+  static bool contains(const Expression& e, const Expression* node) {
+    if (&e == node) return true;
+    return std::any_of(e.children.begin(), e.children.end(),
+                       [&](const claim::ExpressionPtr& c) { return contains(*c, node); });
+  }
+
+  [[nodiscard]] std::string division_rewrite(std::size_t i) const {
+    const proof::Denominator& d = c_.denominators[i];
+    const bool quotient =
+        d.node->operation == Operation::divide && d.expression == d.node->children[1];
+    const std::string law = quotient ? "divide_by" : "invert_by";
+    return fmt::format("  rewrite {}({} K {}%K ({})%K ({}_denominator_{} {} {})).\n",
+                       quotient ? "!" : "", law, divisor_text(d), product(d.reciprocal, scope_), what_,
+                       i + 1, arguments_, hypotheses_);
+  }
+
+  void denominator(std::size_t i) {
+    const proof::Denominator& d = c_.denominators[i];
+    std::string script = inner_divisions(d);
+    std::set<std::string> found;
+    script += leaf_rewrites(*d.expression, d.expression.get());
+    std::string pairs;
+    std::string uses;
+    constant_unit(d, script, pairs, uses);
+    for (std::size_t u = 0; u < d.units.size(); ++u) {
+      std::string pair;
+      const std::string name = fmt::format("unit{}", u + 1);
+      script += unit_assertion(proof_, d.units[u], name, scope_, pair);
+      pairs += fmt::format("{}({}) ^ {}", pairs.empty() ? "" : " * ", pair, d.units[u].exponent);
+      uses += fmt::format("rewrite {}. ", name);
+    }
+    script += fmt::format("  transitivity ({})%K; [inj_norm; ring|].\n  {}ring.\n", pairs, uses);
+    lemma(fmt::format("{}_denominator_{}", what_, i + 1),
+          fmt::format("({} * ({}))%K = inj 1", divisor_text(d), product(d.reciprocal, scope_)),
+          script);
+  }
+
+  /// The numeric part: constant of the divisor times the literal powers of its reciprocal.
+  void constant_unit(const proof::Denominator& d, std::string& script, std::string& pairs,
+                     std::string& uses) const {
+    std::string text = fmt::format("{} * {}", rational(d.as_product.coefficient.constant),
+                                   rational(d.reciprocal.coefficient.constant));
+    bool powers = false;
+    for (const auto& [a, e] : d.reciprocal.atoms) {
+      if (a.kind != AtomKind::power || !is_constant(a.argument) || !is_constant(a.base)) continue;
+      const bool by_unit = std::any_of(d.units.begin(), d.units.end(), [&](const proof::Unit& u) {
+        return u.right.kind == AtomKind::power && atom(u.right, scope_) == atom(a, scope_);
+      });
+      if (by_unit) continue;
+      text += " * " + atom(a, scope_);
+      powers = true;
+    }
+    if (!powers && d.as_product.coefficient.constant == 1 && d.reciprocal.coefficient.constant == 1 &&
+        !d.units.empty())
+      return;
+    script += fmt::format("  assert (unit0 : ({} = inj 1)%K) by (values; field).\n", text);
+    pairs = "(" + text + ")";
+    uses = "rewrite unit0. ";
+  }
+
+  // ---------------------------------------------------------------- the whole expression
+
+  void conversion() {
+    std::string script = fmt::format("  unfold {}.\n", what_);
+    for (std::size_t i = c_.denominators.size(); i-- > 0;)
+      if (!inside_other(i)) script += division_rewrite(i);
+    script += leaf_rewrites(*c_.expression, nullptr);
+    std::string sum;
+    std::string with_units;
+    std::string uses;
+    bool any = false;
+    for (std::size_t j = 0; j < c_.products.size(); ++j) {
+      const std::string piece = fmt::format("{}{} {}", piece_, j + 1, arguments_);
+      std::string term = piece;
+      for (std::size_t u = 0; u < c_.units[j].size(); ++u) {
+        std::string pair;
+        const std::string name = fmt::format("unit{}_{}", j + 1, u + 1);
+        script += unit_assertion(proof_, c_.units[j][u], name, scope_, pair);
+        term = fmt::format("({}) ^ {} * {}", pair, c_.units[j][u].exponent, term);
+        uses += fmt::format("rewrite {}. ", name);
+        any = true;
+      }
+      sum += (sum.empty() ? "" : " + ") + piece;
+      with_units += (with_units.empty() ? "" : " + ") + term;
+    }
+    if (c_.products.empty()) sum = "inj 0";
+    std::string unfold = "  unfold ";
+    for (std::size_t j = 0; j < c_.products.size(); ++j)
+      unfold += fmt::format("{}{}{}", j == 0 ? "" : ", ", piece_, j + 1);
+    if (any)
+      script += fmt::format("  transitivity ({})%K; [{}; inj_norm; ring|].\n  {}ring.\n", with_units,
+                            unfold.substr(2), uses);
+    else
+      script += (c_.products.empty() ? "" : unfold + ". ") + "inj_norm. ring.\n";
+    lemma(what_ + "_terms", fmt::format("{} {} = ({})%K", what_, arguments_, sum), script);
+  }
+
+  [[nodiscard]] bool inside_other(std::size_t i) const {
+    for (std::size_t j = 0; j < c_.denominators.size(); ++j)
+      if (j != i && contains(*c_.denominators[j].expression, c_.denominators[i].node.get()))
+        return true;
+    return false;
+  }
+
+  const proof::Proof& proof_;
+  const proof::Conversion& c_;
+  std::string what_;
+  std::string piece_;
+  bool with_index_;
+  Scope scope_;
+  Names names_;
+  std::string variables_;
+  std::string arguments_;
+  std::string premises_;
+  std::string hypotheses_;
+  std::string out_;
+};
+
+}  // namespace
+
+Names names(const proof::Proof& proof) {
+  const Scope scope = plain_scope(proof);
+  return {scope.integer[0], scope.integer[1], !proof.claim->sum.over.empty()};
+}
+
+std::string shifted(const std::string& n, unsigned by) {
+  return by == 0 ? n : fmt::format("({} + {})", n, by);
+}
+
+std::string conversion_text(const proof::Proof& proof, const proof::Conversion& c,
+                            const std::string& what, const std::string& piece, bool with_index) {
+  return ConversionText(proof, c, what, piece, with_index).run();
+}
+
+}  // namespace sumwright::writers::coq

@@ -1,0 +1,265 @@
+// The formal statement, written from the claim's parse tree by the fixed translation: nothing is
+// simplified, sums and products associate as parsed.
+
+#include "writers/coq_statement.hpp"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <stdexcept>
+
+#include "claim/affine.hpp"
+#include "writers/coq_text.hpp"
+
+namespace sumwright::writers::coq {
+
+using claim::Expression;
+using claim::Operation;
+
+namespace {
+
+bool is_rational(const proof::Proof& proof, const std::string& name) {
+  return std::any_of(proof.claim->parameters.begin(), proof.claim->parameters.end(),
+                     [&](const claim::Parameter& p) {
+                       return p.name == name && p.ring == claim::Parameter::Ring::rationals;
+                     });
+}
+
+bool has_factorial(const Expression& e) {
+  if (e.operation == Operation::call && e.name == "factorial") return true;
+  return std::any_of(e.children.begin(), e.children.end(),
+                     [](const claim::ExpressionPtr& c) { return has_factorial(*c); });
+}
+
+std::string paren(const std::string& text) { return "(" + text + ")"; }
+
+std::string infix(const proof::Proof& proof, const Expression& e, const char* sign,
+                  std::string (*print)(const proof::Proof&, const Expression&)) {
+  return paren(fmt::format("{} {} {}", print(proof, *e.children[0]), sign,
+                           print(proof, *e.children[1])));
+}
+
+std::string call_text(const proof::Proof& proof, const Expression& e) {
+  const auto integer = [&](std::size_t i) { return integer_text(proof, *e.children[i]); };
+  const auto field = [&](std::size_t i) { return field_text(proof, *e.children[i]); };
+  if (e.name == "factorial") return paren("factorial " + integer(0));
+  if (e.name == "binomial") {
+    if (is_integer_argument(proof, *e.children[0]))
+      return paren(fmt::format("binomial {} {}", integer(0), integer(1)));
+    return paren(fmt::format("gbinomial {} {}", field(0), integer(1)));
+  }
+  return paren(fmt::format("{} {} {}", e.name, field(0), integer(1)));
+}
+
+std::string power_text(const proof::Proof& proof, const Expression& e) {
+  const Expression& base = *e.children[0];
+  const std::optional<mpz_class> exponent = claim::as_literal(*e.children[1]);
+  if (!exponent)
+    return paren(fmt::format("zpow {} {}", field_text(proof, base),
+                             integer_text(proof, *e.children[1])));
+  const mpz_class size = abs(*exponent);
+  if (*exponent >= 0) return paren(fmt::format("{} ^ {}", field_text(proof, base), size.get_str()));
+  if (has_factorial(base))
+    return paren(fmt::format("{} ^ {}", reciprocal_text(proof, base), size.get_str()));
+  return paren(fmt::format("/ ({} ^ {})", field_text(proof, base), size.get_str()));
+}
+
+std::string comparison_sign(claim::Comparison c) {
+  switch (c) {
+    case claim::Comparison::less_equal: return "<=";
+    case claim::Comparison::less: return "<";
+    case claim::Comparison::greater_equal: return ">=";
+    case claim::Comparison::greater: return ">";
+    case claim::Comparison::not_equal: return "<>";
+  }
+  return "";
+}
+
+std::string word_condition(claim::Exclusion::Kind kind) {
+  using Kind = claim::Exclusion::Kind;
+  switch (kind) {
+    case Kind::positive_integers: return "0 < z -> ";
+    case Kind::negative_integers: return "z < 0 -> ";
+    case Kind::nonnegative_integers: return "0 <= z -> ";
+    case Kind::nonpositive_integers: return "z <= 0 -> ";
+    default: return "";
+  }
+}
+
+std::string exclusion_text(const proof::Proof& proof, const std::string& x,
+                           const claim::Exclusion& e) {
+  if (e.kind == claim::Exclusion::Kind::constant)
+    return fmt::format("{}%K <> {}%K :> K", x, paren(field_text(proof, *e.written)));
+  return fmt::format("(forall z : Z, {}{} <> inj z :> K)", word_condition(e.kind), x);
+}
+
+std::string assumption_text(const proof::Proof& proof, const claim::Assumption& a) {
+  const std::string sign = comparison_sign(a.comparison);
+  if (a.over_integers)
+    return fmt::format("{} {} {}", integer_text(proof, *a.left), sign, integer_text(proof, *a.right));
+  return fmt::format("{}%K {} {}%K :> K", paren(field_text(proof, *a.left)), sign,
+                     paren(field_text(proof, *a.right)));
+}
+
+std::string recurrence_equation(const proof::Proof& proof) {
+  const claim::Evidence& evidence = proof.claim->evidence;
+  const std::string n = name_of(proof.claim->running);
+  std::string left;
+  for (std::size_t i = 0; i < evidence.recurrence.size(); ++i) {
+    const std::string at = i == 0 ? n : fmt::format("({} + {})%Z", n, i);
+    const std::string part =
+        fmt::format("{} * s {}", field_text(proof, *evidence.recurrence[i]), at);
+    left += left.empty() ? part : " + " + part;
+  }
+  const std::string right =
+      evidence.right_side ? field_text(proof, *evidence.right_side) : std::string("inj 0");
+  return fmt::format("({})%K = ({})%K :> K", left, right);
+}
+
+}  // namespace
+
+std::string name_of(const std::string& symbol) { return safe_name(symbol); }
+
+bool is_integer_argument(const proof::Proof& proof, const Expression& e) {
+  switch (e.operation) {
+    case Operation::literal: return true;
+    case Operation::symbol: return !is_rational(proof, e.name);
+    case Operation::negate:
+    case Operation::add:
+    case Operation::subtract:
+    case Operation::multiply:
+      return std::all_of(e.children.begin(), e.children.end(), [&](const claim::ExpressionPtr& c) {
+        return is_integer_argument(proof, *c);
+      });
+    default: return false;
+  }
+}
+
+std::string integer_text(const proof::Proof& proof, const Expression& e) {
+  switch (e.operation) {
+    case Operation::literal: return bracketed(e.value.get_str());
+    case Operation::symbol: return name_of(e.name);
+    case Operation::negate: return paren("- " + integer_text(proof, *e.children[0]));
+    case Operation::add: return infix(proof, e, "+", integer_text);
+    case Operation::subtract: return infix(proof, e, "-", integer_text);
+    case Operation::multiply: return infix(proof, e, "*", integer_text);
+    case Operation::divide: return infix(proof, e, "/", integer_text);
+    case Operation::power: return infix(proof, e, "^", integer_text);
+    case Operation::call: break;
+  }
+  if (e.name == "floor") return integer_text(proof, *e.children[0]);
+  std::string out = integer_text(proof, *e.children[0]);
+  for (std::size_t i = 1; i < e.children.size(); ++i)
+    out = paren(fmt::format("Z.{} {} {}", e.name, out, integer_text(proof, *e.children[i])));
+  return out;
+}
+
+std::string field_text(const proof::Proof& proof, const Expression& e) {
+  switch (e.operation) {
+    case Operation::literal: return paren("inj " + bracketed(e.value.get_str()));
+    case Operation::symbol:
+      return is_rational(proof, e.name) ? name_of(e.name) : paren("inj " + name_of(e.name));
+    case Operation::negate: return paren("- " + field_text(proof, *e.children[0]));
+    case Operation::add: return infix(proof, e, "+", field_text);
+    case Operation::subtract: return infix(proof, e, "-", field_text);
+    case Operation::multiply: return infix(proof, e, "*", field_text);
+    case Operation::divide:
+      if (has_factorial(*e.children[1]))
+        return paren(fmt::format("{} * {}", field_text(proof, *e.children[0]),
+                                 reciprocal_text(proof, *e.children[1])));
+      return infix(proof, e, "/", field_text);
+    case Operation::power: return power_text(proof, e);
+    case Operation::call: return call_text(proof, e);
+  }
+  throw std::logic_error("unknown expression");
+}
+
+std::string reciprocal_text(const proof::Proof& proof, const Expression& v) {
+  if (v.operation == Operation::call && v.name == "factorial")
+    return paren("rfactorial " + integer_text(proof, *v.children[0]));
+  if (v.operation == Operation::multiply)
+    return paren(fmt::format("{} * {}", reciprocal_text(proof, *v.children[0]),
+                             reciprocal_text(proof, *v.children[1])));
+  if (v.operation == Operation::divide)
+    return paren(fmt::format("{} * {}", reciprocal_text(proof, *v.children[0]),
+                             field_text(proof, *v.children[1])));
+  if (v.operation == Operation::negate)
+    return paren("- " + reciprocal_text(proof, *v.children[0]));
+  if (v.operation == Operation::power) {
+    const std::optional<mpz_class> c = claim::as_literal(*v.children[1]);
+    if (c && *c >= 0)
+      return paren(fmt::format("{} ^ {}", reciprocal_text(proof, *v.children[0]), c->get_str()));
+  }
+  return paren("/ " + field_text(proof, v));
+}
+
+std::string exclusion_name(const proof::Proof& proof, std::size_t parameter, std::size_t exclusion) {
+  return fmt::format("H_not_{}_{}", name_of(proof.symbols[parameter].name), exclusion + 1);
+}
+
+std::string assumption_name(std::size_t assumption) {
+  return fmt::format("H_assume_{}", assumption + 1);
+}
+
+std::vector<Hypothesis> hypotheses(const proof::Proof& proof) {
+  std::vector<Hypothesis> out;
+  const claim::Claim& claim = *proof.claim;
+  for (std::size_t i = 0; i < claim.parameters.size(); ++i)
+    for (std::size_t e = 0; e < claim.parameters[i].excluded.size(); ++e)
+      out.push_back({exclusion_name(proof, i + 2, e),
+                     exclusion_text(proof, name_of(claim.parameters[i].name),
+                                    claim.parameters[i].excluded[e])});
+  for (const claim::Parameter& p : claim.parameters)
+    if (p.at_least)
+      out.push_back({"H_least_" + name_of(p.name),
+                     fmt::format("{} <= {}", bracketed(p.at_least->get_str()), name_of(p.name))});
+  for (std::size_t i = 0; i < claim.assumptions.size(); ++i)
+    out.push_back({assumption_name(i), assumption_text(proof, claim.assumptions[i])});
+  return out;
+}
+
+std::string sum_text(const proof::Proof& proof) {
+  const claim::Sum& sum = proof.claim->sum;
+  const std::string summand = field_text(proof, *sum.summand);
+  if (sum.over.empty()) return fmt::format("{}%K", summand);
+  const claim::Range& r = sum.over[0];
+  return fmt::format("sum {} {} (fun {} : Z => {}%K)", integer_text(proof, *r.low.value),
+                     integer_text(proof, *r.high.value), name_of(r.index), summand);
+}
+
+std::vector<std::string> parameter_names(const proof::Proof& proof) {
+  std::vector<std::string> out;
+  for (const auto ring : {claim::Parameter::Ring::rationals, claim::Parameter::Ring::integers})
+    for (const claim::Parameter& p : proof.claim->parameters)
+      if (p.ring == ring) out.push_back(name_of(p.name));
+  return out;
+}
+
+std::string parameter_binders(const proof::Proof& proof) {
+  std::string out = "(K : char0_field)";
+  for (const auto ring : {claim::Parameter::Ring::rationals, claim::Parameter::Ring::integers})
+    for (const claim::Parameter& p : proof.claim->parameters)
+      if (p.ring == ring)
+        out += fmt::format(" ({} : {})", name_of(p.name),
+                           ring == claim::Parameter::Ring::rationals ? "K" : "Z");
+  return out;
+}
+
+std::string statement_text(const proof::Proof& proof) {
+  const std::string n = name_of(proof.claim->running);
+  std::string out = "forall " + parameter_binders(proof);
+  const bool equality = proof.claim->is_equality();
+  out += equality ? fmt::format(" ({} : Z),\n", n) : " (s : Z -> K),\n";
+  for (const Hypothesis& h : hypotheses(proof)) out += fmt::format("  {} ->\n", h.text);
+  const std::string from = bracketed(std::to_string(proof.from));
+  if (equality) {
+    out += fmt::format("  {} <= {} ->\n  {} =\n  {}%K :> K", from, n, sum_text(proof),
+                       field_text(proof, *proof.claim->closed));
+    return out;
+  }
+  out += fmt::format("  (forall {} : Z, s {} = {}) ->\n", n, n, sum_text(proof));
+  out += fmt::format("  forall {} : Z, {} <= {} ->\n  {}", n, from, n, recurrence_equation(proof));
+  return out;
+}
+
+}  // namespace sumwright::writers::coq
