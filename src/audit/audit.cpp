@@ -8,6 +8,7 @@
 #include "audit/checks.hpp"
 #include "audit/claim_sides.hpp"
 #include "audit/hypotheses.hpp"
+#include "audit/special_values.hpp"
 
 namespace sumwright::audit {
 
@@ -67,11 +68,14 @@ std::string find_counterexample(const claim::Claim& claim, const AuditOptions& o
   const std::lock_guard<std::mutex> lock(one_at_a_time());
   std::vector<std::string> names{claim.running};
   for (const claim::Parameter& parameter : claim.parameters) names.push_back(parameter.name);
-  const std::vector<Point> samples =
-      sample_parameters(claim, names, options.parameter_samples, options.sum_span);
+  // cheaper per point than an audit, so more of them: twice the span, four times the samples
+  const long span = 2 * options.sum_span;
+  std::vector<Point> samples = sample_parameters(claim, names, 4 * options.parameter_samples, span);
+  if (!claim.parameters.empty() && !samples.empty())
+    for (const Point& point : special_points(claim, samples.front(), 8)) samples.push_back(point);
   Author author(claim, samples, options.check_time);
   if (!claim.from.fits_slong_p()) return "";
-  for (long n = claim.from.get_si(); n < claim.from.get_si() + options.sum_span; ++n)
+  for (long n = claim.from.get_si(); n < claim.from.get_si() + span; ++n)
     for (std::size_t sample = 0; sample < samples.size(); ++sample) {
       if (options.check_time) options.check_time();
       try {

@@ -1,5 +1,5 @@
-// The author's sum at points. Only the parse trees of the claim are read; the caches make the checks,
-// which ask for the same values again and again, cheap.
+// The author's sum at points. Only the parse trees of the claim are read; the caches make the
+// checks, which ask for the same values again and again, cheap.
 #include "audit/author.hpp"
 
 namespace sumwright::audit {

@@ -23,7 +23,8 @@ class Author {
   [[nodiscard]] Point point(std::size_t sample, long n) const;
   [[nodiscard]] Point point(std::size_t sample, long n, long k) const;
 
-  /// The range of the index at n; the single point 0 when the claim has no index. One index at most.
+  /// The range of the index at n; the single point 0 when the claim has no index. One index at
+  /// most.
   [[nodiscard]] const Interval& range(std::size_t sample, long n);
   /// The summand at (n, k), in or out of the range.
   [[nodiscard]] const Value& term(std::size_t sample, long n, long k);

@@ -22,12 +22,13 @@ void check_zero_reason(Check& check, const proof::BalanceTerm& term, const Point
   check.expect_same(value_of(term.product, point), Value::of(0), "the vanishing term " + term.text,
                     point);
   if (!term.zero_atom) return;
-  const bool occurs = std::any_of(
-      term.product.atoms.begin(), term.product.atoms.end(),
-      [&](const auto& entry) { return identical(entry.first, *term.zero_atom); });
-  check.expect(occurs && term.zero_atom->kind == proof::AtomKind::reciprocal_factorial &&
-                   value_of(term.zero_atom->argument, point) < 0,
-               [&] { return "the zero atom of " + term.text + " is no reason at " + text_of(point); });
+  const bool occurs =
+      std::any_of(term.product.atoms.begin(), term.product.atoms.end(),
+                  [&](const auto& entry) { return identical(entry.first, *term.zero_atom); });
+  check.expect(
+      occurs && term.zero_atom->kind == proof::AtomKind::reciprocal_factorial &&
+          value_of(term.zero_atom->argument, point) < 0,
+      [&] { return "the zero atom of " + term.text + " is no reason at " + text_of(point); });
 }
 
 void check_group(const Context& context, Check& check, const proof::Balance& balance,
@@ -53,8 +54,9 @@ void check_membership(Check& check, const proof::Balance& balance) {
   for (std::size_t g = 0; g < balance.groups.size(); ++g)
     for (const std::size_t member : balance.groups[g].members) {
       ++uses[member];
-      check.expect(member < balance.terms.size() && balance.terms[member].group == g,
-                   [&] { return "balance " + balance.id + ": a member of no term or another group"; });
+      check.expect(member < balance.terms.size() && balance.terms[member].group == g, [&] {
+        return "balance " + balance.id + ": a member of no term or another group";
+      });
     }
   for (std::size_t t = 0; t < balance.terms.size(); ++t)
     check.expect(uses[t] == (balance.terms[t].zero ? 0U : 1U), [&] {
@@ -143,9 +145,7 @@ class Expected {
   }
 
  private:
-  Value weight() const {
-    return value_of(context_.proof.telescoping->weight.polynomial, point_);
-  }
+  Value weight() const { return value_of(context_.proof.telescoping->weight.polynomial, point_); }
   Value coefficient(std::size_t i) const {
     return value_of(context_.proof.telescoping->coefficients[i], point_);
   }
@@ -199,10 +199,26 @@ Value Expected::right_side() {
   throw TooLarge("coefficients without a value");
 }
 
+/// One term per explicit point and product of F.
+void check_explicit_count(const proof::Proof& proof, const proof::Balance& balance, Check& check) {
+  if (!proof.telescoping) return;
+  std::size_t wanted = 0;
+  for (const proof::RangeStep& step : proof.ranges) wanted += step.low_points + step.high_points;
+  wanted *= proof.summand.products.size();
+  const auto found = static_cast<std::size_t>(
+      std::count_if(balance.terms.begin(), balance.terms.end(),
+                    [](const auto& term) { return term.origin == Origin::explicit_point; }));
+  check.expect(found == wanted, [&] {
+    return std::to_string(found) + " explicit terms in balance " + balance.id + " for " +
+           std::to_string(wanted) + " explicit points and products";
+  });
+}
+
 void check_main_balance(Context& context, const proof::Balance& balance, const std::string& name,
                         std::vector<Finding>& findings) {
   Check check(name);
   check_balance(context, check, balance, context.running_places());
+  check_explicit_count(context.proof, balance, check);
   if (context.proof.telescoping)
     for (const Place& place : context.running_places())
       check.attempt([&] { Expected(context, place, balance.id).compare(check, balance); });

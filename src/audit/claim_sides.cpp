@@ -28,8 +28,8 @@ Sides sides_at(const claim::Claim& claim, Author& author, std::size_t sample, lo
     }
     out.left = plus(out.left, times(coefficient, sum));
   }
-  out.right = claim.evidence.right_side ? evaluate(*claim.evidence.right_side, point)
-                                        : Value::of(0);
+  out.right =
+      claim.evidence.right_side ? evaluate(*claim.evidence.right_side, point) : Value::of(0);
   return out;
 }
 

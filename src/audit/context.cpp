@@ -1,5 +1,6 @@
 // From a Proof to the points at which it is tried: parameter samples (generic, small, boundary,
-// and roots of the factors of the recurrence), n from the threshold on, k over the telescoping range.
+// and roots of the factors of the recurrence), n from the threshold on, k over the telescoping
+// range.
 #include "audit/context.hpp"
 
 #include <algorithm>
@@ -7,6 +8,7 @@
 
 #include "audit/atoms.hpp"
 #include "audit/hypotheses.hpp"
+#include "audit/special_values.hpp"
 
 namespace sumwright::audit {
 
@@ -60,8 +62,8 @@ void Check::attempt(const std::function<void()>& one_case) {
 Finding Check::finding() const {
   Finding out = finding_;
   if (left_out_ > 0 && out.agrees)
-    out.detail += (out.detail.empty() ? "" : "; ") + std::to_string(left_out_) +
-                  " left out (" + first_reason_ + ")";
+    out.detail += (out.detail.empty() ? "" : "; ") + std::to_string(left_out_) + " left out (" +
+                  first_reason_ + ")";
   return out;
 }
 
@@ -121,33 +123,36 @@ bool has_degree_one(const proof::Polynomial& polynomial, std::size_t symbol) {
 
 }  // namespace
 
+void Context::add_sample(const Point& point) {
+  const bool known = std::any_of(samples.begin(), samples.end(), [&](const Point& old) {
+    return std::equal(old.values.begin() + kIndex + 1, old.values.end(),
+                      point.values.begin() + kIndex + 1,
+                      [](const numeric& a, const numeric& b) { return a.is_equal(b); });
+  });
+  if (!known && audit::admits(claim, point)) samples.push_back(point);
+}
+
 void Context::add_special_samples() {
   if (claim.parameters.empty() || samples.empty()) return;
   const Point base = samples.front();
-  std::size_t added = 0;
+  const std::size_t most = samples.size() + kSpecialSamples;
   for (const proof::Polynomial* factor : all_factors(proof))
     for (std::size_t symbol = kIndex + 1; symbol < names.size(); ++symbol) {
-      if (added == kSpecialSamples) return;
+      if (samples.size() >= most) return;
       if (!has_degree_one(*factor, symbol)) continue;
       Point point = base;
       point.values[0] = numeric(proof.threshold + 2);
       point.values[kIndex] = 1;
-      point.values[symbol] = 0;
-      const numeric constant = value_of(*factor, point);
-      point.values[symbol] = 1;
-      const numeric slope = value_of(*factor, point) - constant;
-      if (slope.is_zero()) continue;
-      point.values[symbol] = -constant / slope;
+      const std::optional<numeric> root = linear_root([&](const numeric& x) {
+        point.values[symbol] = x;
+        return Value::of(value_of(*factor, point));
+      });
+      if (!root) continue;
+      point.values[symbol] = *root;
       point.values[kIndex] = 0;
-      if (!audit::admits(claim, point)) continue;
-      if (std::any_of(samples.begin(), samples.end(), [&](const Point& old) {
-            return std::equal(old.values.begin() + 2, old.values.end(), point.values.begin() + 2,
-                              [](const numeric& a, const numeric& b) { return a.is_equal(b); });
-          }))
-        continue;
-      samples.push_back(point);
-      ++added;
+      add_sample(point);
     }
+  for (const Point& point : special_points(claim, base, most - samples.size())) add_sample(point);
 }
 
 std::vector<long> Context::chosen_values(std::size_t sample) const {

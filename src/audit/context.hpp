@@ -31,8 +31,7 @@ class Check {
   /// Counts one case; `detail` is called only when it fails.
   void expect(bool fine, const std::function<std::string()>& detail);
   /// left = right as existing numbers.
-  void expect_same(const Value& left, const Value& right, const std::string& what,
-                   const Point& at);
+  void expect_same(const Value& left, const Value& right, const std::string& what, const Point& at);
   /// Runs one case; values beyond the limits leave it out, and the number of those is remarked.
   void attempt(const std::function<void()>& one_case);
   [[nodiscard]] bool agrees() const { return finding_.agrees; }
@@ -61,14 +60,18 @@ class Context {
   }
   /// Every hypothesis of the claim holds at this sample and n.
   [[nodiscard]] bool admits(std::size_t sample, long n) const;
-  [[nodiscard]] Point at(const Place& place) const { return author.point(place.sample, place.n, place.k); }
+  [[nodiscard]] Point at(const Place& place) const {
+    return author.point(place.sample, place.n, place.k);
+  }
 
-  /// n >= threshold: the first few, some later ones, and those where a coefficient or weight vanishes.
+  /// n >= threshold: the first few, some later ones, and those where a coefficient or weight
+  /// vanishes.
   [[nodiscard]] const std::vector<Place>& running_places() const { return running_places_; }
   /// The same with low <= k <= high of the telescoping range: all, or both ends and some between.
   [[nodiscard]] const std::vector<Place>& index_places() const { return index_places_; }
 
  private:
+  void add_sample(const Point& point);
   void add_special_samples();
   [[nodiscard]] std::vector<long> chosen_values(std::size_t sample) const;
   void make_places();

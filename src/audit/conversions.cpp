@@ -47,7 +47,8 @@ class Comparison {
     if (!context_.admits(sample, n)) return;
     if (context_.claim.sum.over.empty()) return at({sample, n, 0}, true);
     const Interval range = context_.author.range(sample, n);
-    for (const long k : spread(range.low, range.high, sample == 0 ? 12 : 6)) at({sample, n, k}, true);
+    for (const long k : spread(range.low, range.high, sample == 0 ? 12 : 6))
+      at({sample, n, k}, true);
     if (!domain_.delimited()) return;  // nothing is said beyond the range
     for (const long k : {range.low - 2, range.low - 1, range.high + 1, range.high + 2})
       at({sample, n, k}, false);

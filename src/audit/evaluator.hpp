@@ -30,9 +30,9 @@ struct Interval {
 };
 [[nodiscard]] Interval interval_at(const claim::Range& range, const Point& at);
 
-/// The sum at a point (running variable and parameters set). Where an end is infinite, the outermost
-/// terms of the window must vanish, else TooLarge. `check_time` is called once per term when set.
-/// Throws TooLarge when there are too many terms.
+/// The sum at a point (running variable and parameters set). Where an end is infinite, the
+/// outermost terms of the window must vanish, else TooLarge. `check_time` is called once per term
+/// when set. Throws TooLarge when there are too many terms.
 [[nodiscard]] Value evaluate_sum(const claim::Sum& sum, const Point& at,
                                  const std::function<void()>& check_time);
 

@@ -52,8 +52,7 @@ bool mentions_running(const claim::Claim& claim, const claim::Assumption& assump
 
 bool admits_one(const claim::Parameter& parameter, const numeric& value) {
   if (parameter.ring == claim::Parameter::Ring::integers)
-    return value.is_integer() &&
-           (!parameter.at_least || value >= to_numeric(*parameter.at_least));
+    return value.is_integer() && (!parameter.at_least || value >= to_numeric(*parameter.at_least));
   return std::none_of(parameter.excluded.begin(), parameter.excluded.end(),
                       [&](const claim::Exclusion& one) { return excludes(one, value); });
 }
@@ -63,10 +62,9 @@ bool admits_one(const claim::Parameter& parameter, const numeric& value) {
 bool admits_parameters(const claim::Claim& claim, const Point& at) {
   for (const claim::Parameter& parameter : claim.parameters)
     if (!admits_one(parameter, at.at(parameter.name))) return false;
-  return std::all_of(claim.assumptions.begin(), claim.assumptions.end(),
-                     [&](const claim::Assumption& one) {
-                       return mentions_running(claim, one) || holds(one, at);
-                     });
+  return std::all_of(
+      claim.assumptions.begin(), claim.assumptions.end(),
+      [&](const claim::Assumption& one) { return mentions_running(claim, one) || holds(one, at); });
 }
 
 bool admits(const claim::Claim& claim, const Point& at) {
@@ -88,8 +86,14 @@ std::vector<numeric> candidates(const claim::Parameter& parameter) {
   };
   if (parameter.ring == claim::Parameter::Ring::rationals) {
     for (const long a : {0, 1, -1, 2}) keep(a);
-    for (const auto& [a, b] : {std::pair{1L, 2L}, {-2L, 1L}, {3L, 1L}, {-1L, 2L}, {5L, 2L},
-                               {1L, 3L}, {-7L, 3L}, {7L, 5L}})
+    for (const auto& [a, b] : {std::pair{1L, 2L},
+                               {-2L, 1L},
+                               {3L, 1L},
+                               {-1L, 2L},
+                               {5L, 2L},
+                               {1L, 3L},
+                               {-7L, 3L},
+                               {7L, 5L}})
       keep(numeric(a, b));
     return out;
   }

@@ -1,14 +1,15 @@
 // That nothing is assumed beyond the claim.
 //
-// No condition is open. A condition that is `given` rests on hypotheses that the claim contains, and
-// what it says follows from them: it holds at every sample that the claim admits, and the values of a
-// parameter that would break it are not admitted.
+// No condition is open. A condition that is `given` rests on hypotheses that the claim contains,
+// and what it says follows from them: it holds at every sample that the claim admits, and the
+// values of a parameter that would break it are not admitted.
 #include <algorithm>
 #include <set>
 
 #include "audit/checks.hpp"
 #include "audit/evaluator.hpp"
 #include "audit/hypotheses.hpp"
+#include "audit/special_values.hpp"
 #include "audit/text_reader.hpp"
 
 namespace sumwright::audit {
@@ -59,7 +60,7 @@ struct Given {
   const std::vector<Place>& places(const ReadComparison& one) const {
     const std::string index = context.names.size() > 1 ? context.names[1] : "";
     return mentions(*one.left, index) || mentions(*one.right, index) ? context.index_places()
-                                                                    : context.running_places();
+                                                                     : context.running_places();
   }
 
   void fail_at(const Point& point) const {
@@ -73,21 +74,18 @@ struct Given {
     check.count();
     if (fine && !*fine) fail_at(point);
     if (one.sign != "!=") return;
-    for (const claim::Parameter& parameter : context.claim.parameters) root_in(one, parameter.name, point);
+    for (const claim::Parameter& parameter : context.claim.parameters)
+      root_in(one, parameter.name, point);
   }
 
   /// Where the condition is linear in a parameter: the value that breaks it must not be admitted.
   void root_in(const ReadComparison& one, const std::string& name, Point point) const {
-    std::vector<numeric> values;
-    for (const long x : {0, 1, 2}) {
-      point.set(name, numeric(x));
-      const Value difference = minus(evaluate(*one.left, point), evaluate(*one.right, point));
-      if (!difference.exists()) return;
-      values.push_back(difference.number);
-    }
-    const numeric slope = values[1] - values[0];
-    if (slope.is_zero() || !slope.is_equal(values[2] - values[1])) return;
-    point.set(name, -values[0] / slope);
+    const std::optional<numeric> root = linear_root([&](const numeric& x) {
+      point.set(name, x);
+      return minus(evaluate(*one.left, point), evaluate(*one.right, point));
+    });
+    if (!root) return;
+    point.set(name, *root);
     check.count();
     if (admits(context.claim, point)) fail_at(point);
   }

@@ -1,5 +1,5 @@
-// Initial values: at each n the literal sum, its balance with the right side, and the stated number,
-// against the author's sum added up at every sample.
+// Initial values: at each n the literal sum, its balance with the right side, and the stated
+// number, against the author's sum added up at every sample.
 #include "audit/atoms.hpp"
 #include "audit/checks.hpp"
 #include "audit/terms.hpp"
@@ -34,10 +34,9 @@ struct Initial {
     const Interval author = context.author.range(place.sample, literal.at);
     Value sum = Value::of(0);
     for (long k = literal.low; k <= literal.high; ++k)
-      sum = plus(sum, author.contains(k)
-                          ? context.author.term(place.sample, literal.at, k)
-                          : products_at(context, context.proof.summand,
-                                        {place.sample, literal.at, k}));
+      sum = plus(sum, author.contains(k) ? context.author.term(place.sample, literal.at, k)
+                                         : products_at(context, context.proof.summand,
+                                                       {place.sample, literal.at, k}));
     check.expect_same(sum, context.author.sum(place.sample, literal.at),
                       "S(" + std::to_string(literal.at) + ") over " + std::to_string(literal.low) +
                           ".." + std::to_string(literal.high),

@@ -27,8 +27,7 @@ bool is_affine_in_integers(const proof::Polynomial& polynomial,
     unsigned long degree = 0;
     for (std::size_t i = 0; i < monomial.exponents.size(); ++i) {
       degree += monomial.exponents[i];
-      if (monomial.exponents[i] != 0 &&
-          symbols.at(i).kind == proof::SymbolKind::rational_parameter)
+      if (monomial.exponents[i] != 0 && symbols.at(i).kind == proof::SymbolKind::rational_parameter)
         return false;
     }
     if (degree > 1) return false;
@@ -153,9 +152,8 @@ void check_bounds(Check& check, const Context& context, const proof::NonzeroFact
   if (factor.method == Method::positive)
     for (std::size_t i = 0; i < factor.shift.size(); ++i)
       if (occurs(factor.factor, i))
-        check.expect(point.values.at(i) >= numeric(factor.shift[i]), [&] {
-          return what + ": the shift is no lower bound at " + text_of(point);
-        });
+        check.expect(point.values.at(i) >= numeric(factor.shift[i]),
+                     [&] { return what + ": the shift is no lower bound at " + text_of(point); });
   if (factor.method != Method::excluded) return;
   for (const claim::Parameter& one : context.claim.parameters)
     if (one.name == context.names.at(factor.parameter) && factor.exclusion < one.excluded.size() &&

@@ -1,4 +1,5 @@
-// Exact numbers of the audit: GiNaC numerics (CLN), the conversions into them, and values that may not exist.
+// Exact numbers of the audit: GiNaC numerics (CLN), the conversions into them, and values that may
+// not exist.
 #pragma once
 
 #include <ginac/ginac.h>

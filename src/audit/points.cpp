@@ -1,6 +1,7 @@
 // The term identity at integer points, poles of R and both ends included.
 //
-//   weight sum_i a_i F(n+i,k) = up c(n,k+1) B - down c(n,k) B      for threshold <= n, low <= k <= high
+//   weight sum_i a_i F(n+i,k) = up c(n,k+1) B - down c(n,k) B      for threshold <= n, low <= k <=
+//   high
 // as numbers, F from the author's text where the author's range has k; then the instances of the
 // base term that the identity was reduced by.
 #include "audit/atoms.hpp"
@@ -24,10 +25,10 @@ void check_units(Check& check, const std::vector<proof::Unit>& units, const Poin
 
 void check_steps(Check& check, const proof::Instance& instance, const Point& point) {
   for (const proof::AtomStep& step : instance.steps)
-    check.expect_same(value_of(step.from, point),
-                      times(value_of(step.factor, point),
-                            step.literal ? Value::of(1) : value_of(step.to, point)),
-                      "a step of instance " + instance.id, point);
+    check.expect_same(
+        value_of(step.from, point),
+        times(value_of(step.factor, point), step.literal ? Value::of(1) : value_of(step.to, point)),
+        "a step of instance " + instance.id, point);
 }
 
 }  // namespace
@@ -65,7 +66,8 @@ void check_identity(Context& context, std::vector<Finding>& findings) {
       context.tick();
       const Point point = context.at(place);
       if (!domain.contains(point))
-        return check.fail("the region " + telescoping.region.text + " leaves out " + text_of(point));
+        return check.fail("the region " + telescoping.region.text + " leaves out " +
+                          text_of(point));
       Value left = Value::of(0);
       for (std::size_t i = 0; i < telescoping.coefficients.size(); ++i)
         left = plus(left, times(value_of(telescoping.coefficients[i], point),
@@ -77,7 +79,8 @@ void check_identity(Context& context, std::vector<Finding>& findings) {
   findings.push_back(check.finding());
 }
 
-/// Per shift and product of F: the instance is about that product, and the products add up to p_i B.
+/// Per shift and product of F: the instance is about that product, and the products add up to p_i
+/// B.
 void check_shifts(Context& context, std::vector<Finding>& findings) {
   Check check("shifted terms over the base term");
   const proof::Telescoping& telescoping = *context.proof.telescoping;
@@ -100,9 +103,10 @@ void check_shifts(Context& context, std::vector<Finding>& findings) {
                             "left side of the instance of " + use, point);
           sum = plus(sum, value);
         }
-        check.expect_same(sum, times(value_of(telescoping.p.at(i), point),
-                                     value_of(telescoping.base.product, point)),
-                          use + " against p B", point);
+        check.expect_same(
+            sum,
+            times(value_of(telescoping.p.at(i), point), value_of(telescoping.base.product, point)),
+            use + " against p B", point);
       });
   }
   findings.push_back(check.finding());
@@ -125,10 +129,10 @@ void check_index_shift(Context& context, std::vector<Finding>& findings) {
           times(value_of(telescoping.down, next), value_of(telescoping.base.product, next)),
           times(value_of(telescoping.up, point), value_of(telescoping.base.product, point)),
           "down(n,k+1) B(n,k+1) against up(n,k) B(n,k)", point);
-      check.expect_same(value_of(telescoping.index_shift->right, point),
-                        times(value_of(telescoping.up, point),
-                              value_of(telescoping.base.product, point)),
-                        "right side of the statement about B(n,k+1)", point);
+      check.expect_same(
+          value_of(telescoping.index_shift->right, point),
+          times(value_of(telescoping.up, point), value_of(telescoping.base.product, point)),
+          "right side of the statement about B(n,k+1)", point);
     });
   findings.push_back(check.finding());
 }

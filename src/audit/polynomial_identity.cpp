@@ -1,9 +1,9 @@
 // Deciding a polynomial identity by other arithmetic than the one that found it.
 //
-// From factored data to yes or no. Small: GiNaC expands. Large: a polynomial of degree at most d_v in
-// each variable v that vanishes on a grid of d_v + 1 values per variable is 0 (the degree bounds are
-// taken from the factors here). Too large for that: random points; the bound on the error is the
-// lemma of Schwartz (J. ACM 27, 1980) and Zippel (EUROSAM 1979).
+// From factored data to yes or no. Small: GiNaC expands. Large: a polynomial of degree at most d_v
+// in each variable v that vanishes on a grid of d_v + 1 values per variable is 0 (the degree bounds
+// are taken from the factors here). Too large for that: random points; the bound on the error is
+// the lemma of Schwartz (J. ACM 27, 1980) and Zippel (EUROSAM 1979).
 #include "audit/polynomial_identity.hpp"
 
 #include <algorithm>
@@ -190,9 +190,8 @@ class Evaluator {
       std::vector<Partial> next;
       next.reserve(polynomials.size());
       for (std::size_t i = 0; i < polynomials.size(); ++i)
-        next.push_back(substituted(polynomials[i], variable == kIndex && data_.shifted[i]
-                                                       ? value + numeric(1)
-                                                       : value));
+        next.push_back(substituted(
+            polynomials[i], variable == kIndex && data_.shifted[i] ? value + numeric(1) : value));
       at_.push_back(value);
       const bool fine = descend(next, values, variable + 1);
       at_.pop_back();
@@ -306,8 +305,7 @@ std::size_t estimated_size(const Terms& terms, std::size_t symbols) {
 }
 
 IdentityResult decide_identity(const Terms& terms, const std::vector<std::string>& names,
-                               std::size_t expand_up_to,
-                               const std::function<void()>& check_time) {
+                               std::size_t expand_up_to, const std::function<void()>& check_time) {
   if (check_time) check_time();
   const std::vector<std::size_t> degrees = degree_bounds(terms, names.size());
   if (estimated_size(terms, names.size()) <= expand_up_to) return by_expansion(terms, names);

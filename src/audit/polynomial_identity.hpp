@@ -25,14 +25,15 @@ struct IdentityResult {
   bool zero = false;
   std::size_t cases = 0;  ///< terms expanded, or points evaluated
   std::string how;        ///< "expanded", "grid of 12 x 7 points", ...
-  std::string detail;     ///< when not zero: leading monomials of the residue, or a point with its value
+  std::string
+      detail;  ///< when not zero: leading monomials of the residue, or a point with its value
 };
 
 /// Decides whether the terms add up to 0 as polynomials in the symbols (`names` by position; the
 /// index is position 1). Expands when the estimated number of monomials is at most `expand_up_to`;
 /// else evaluates on a full grid of more points per variable than its degree (proof by
-/// interpolation); when even that is too large, at random points with the probability of error told.
-/// An exponent below 0 throws std::logic_error.
+/// interpolation); when even that is too large, at random points with the probability of error
+/// told. An exponent below 0 throws std::logic_error.
 [[nodiscard]] IdentityResult decide_identity(const std::vector<IdentityTerm>& terms,
                                              const std::vector<std::string>& names,
                                              std::size_t expand_up_to,

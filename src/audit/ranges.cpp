@@ -24,9 +24,9 @@ struct Step {
     check.expect(reason->atoms.size() == context.proof.summand.products.size(),
                  [&] { return std::string("not one vanishing atom per product"); });
     for (const proof::Atom& atom : reason->atoms)
-      check.expect(atom.kind == proof::AtomKind::reciprocal_factorial &&
-                       value_of(atom.argument, point) < 0,
-                   [&] { return "the atom does not vanish: " + where; });
+      check.expect(
+          atom.kind == proof::AtomKind::reciprocal_factorial && value_of(atom.argument, point) < 0,
+          [&] { return "the atom does not vanish: " + where; });
   }
 
   void run() {

@@ -1,5 +1,6 @@
 // The recurrence proved against the author's, where the recurrence is the claim, and against the
-// texts in which it is printed: proportional coefficients at points, never zero where the others are not.
+// texts in which it is printed: proportional coefficients at points, never zero where the others
+// are not.
 #include <algorithm>
 
 #include "audit/atoms.hpp"
@@ -35,10 +36,10 @@ struct Proportion {
       some_written = some_written || !author[i].is_zero();
       some_proved = some_proved || !proved(i, point).is_zero();
       for (std::size_t j = i + 1; j < size; ++j)
-        check.expect_same(times(proved(i, point), author[j]), times(proved(j, point), author[i]),
-                          "coefficients " + std::to_string(i) + " and " + std::to_string(j) +
-                              ", crosswise",
-                          point);
+        check.expect_same(
+            times(proved(i, point), author[j]), times(proved(j, point), author[i]),
+            "coefficients " + std::to_string(i) + " and " + std::to_string(j) + ", crosswise",
+            point);
     }
     check.expect(some_proved || !some_written,
                  [&] { return "the proved recurrence is void at " + text_of(point); });
@@ -65,8 +66,8 @@ void check_against(Context& context, const Coefficients& written, const std::str
   findings.push_back(check.finding());
 }
 
-/// The printed recurrence with its right side, the sums added up, for n >= threshold; for a question
-/// from `from` on.
+/// The printed recurrence with its right side, the sums added up, for n >= threshold; for a
+/// question from `from` on.
 void check_printed_sums(Context& context, const Coefficients& printed, Check& check) {
   claim::ExpressionPtr right;
   if (!context.proof.right_side_text.empty()) {

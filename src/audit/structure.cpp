@@ -57,7 +57,8 @@ void check_counts(const proof::Proof& proof, Check& check) {
   need(proof.telescoping->p.size(), "polynomials p");
   need(proof.ranges.size(), "range steps");
   for (std::size_t i = 0; i < proof.ranges.size(); ++i)
-    check.expect(proof.ranges[i].shift == i, [] { return std::string("range steps out of order"); });
+    check.expect(proof.ranges[i].shift == i,
+                 [] { return std::string("range steps out of order"); });
 }
 
 bool contains(const proof::Affine& form, std::size_t symbol) {
@@ -120,9 +121,8 @@ void check_induction(const proof::Proof& proof, Check& check) {
   const long steps = proof.claim->is_equality() ? static_cast<long>(proof.order) : 0;
   std::set<long> covered;
   for (const proof::InitialValue& initial : proof.initial)
-    check.expect(covered.insert(initial.at).second, [&] {
-      return "two initial values at " + std::to_string(initial.at);
-    });
+    check.expect(covered.insert(initial.at).second,
+                 [&] { return "two initial values at " + std::to_string(initial.at); });
   const long last = proof.threshold + steps - 1;
   check.expect(last - proof.from < 100000, [] { return std::string("too many initial values"); });
   if (!check.agrees()) return;

@@ -7,8 +7,7 @@ namespace sumwright::audit {
 
 void check_sums(Context& context, std::vector<Finding>& findings) {
   Check check("sums added up");
-  if (context.samples.empty())
-    check.fail("no parameter values found that the hypotheses admit");
+  if (context.samples.empty()) check.fail("no parameter values found that the hypotheses admit");
   const long from = context.proof.from;
   for (std::size_t sample = 0; sample < context.samples.size(); ++sample)
     for (long n = from; n < from + context.options.sum_span; ++n)

@@ -26,18 +26,18 @@ Value upper_part(const Context& context, const Place& place) {
   if (telescoping.certificate.terms.empty()) return Value::of(0);
   const Point point = context.at(place);
   const Point next = context.at({place.sample, place.n, place.k + 1});
-  return times(times(value_of(telescoping.up, point),
-                     Value::of(value_of(telescoping.certificate, next))),
-               value_of(telescoping.base.product, point));
+  return times(
+      times(value_of(telescoping.up, point), Value::of(value_of(telescoping.certificate, next))),
+      value_of(telescoping.base.product, point));
 }
 
 Value lower_part(const Context& context, const Place& place) {
   const proof::Telescoping& telescoping = *context.proof.telescoping;
   if (telescoping.certificate.terms.empty()) return Value::of(0);
   const Point point = context.at(place);
-  return times(times(value_of(telescoping.down, point),
-                     Value::of(value_of(telescoping.certificate, point))),
-               value_of(telescoping.base.product, point));
+  return times(
+      times(value_of(telescoping.down, point), Value::of(value_of(telescoping.certificate, point))),
+      value_of(telescoping.base.product, point));
 }
 
 }  // namespace sumwright::audit

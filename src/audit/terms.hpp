@@ -6,8 +6,8 @@
 
 namespace sumwright::audit {
 
-/// F(n+shift, k): the author's summand where k is in the author's range at n+shift, else the products
-/// of the summand's Conversion.
+/// F(n+shift, k): the author's summand where k is in the author's range at n+shift, else the
+/// products of the summand's Conversion.
 [[nodiscard]] Value shifted_term(Context& context, const Place& place, long shift);
 /// The sum of the products of a Conversion with the running variable moved by `shift`.
 [[nodiscard]] Value products_at(const Context& context, const proof::Conversion& conversion,

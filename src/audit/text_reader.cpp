@@ -48,7 +48,8 @@ class Reader {
 
  private:
   void skip() {
-    while (place_ < text_.size() && std::isspace(static_cast<unsigned char>(text_[place_]))) ++place_;
+    while (place_ < text_.size() && std::isspace(static_cast<unsigned char>(text_[place_])))
+      ++place_;
   }
   char peek() {
     skip();
@@ -208,9 +209,8 @@ bool Domain::delimited() const { return !region_.nonnegative.empty() || !text_.e
 bool Domain::contains(const Point& at) const {
   for (const proof::Affine& form : region_.nonnegative)
     if (value_of(form, at) < 0) return false;
-  return std::all_of(text_.begin(), text_.end(), [&](const ReadComparison& one) {
-    return holds(one, at).value_or(false);
-  });
+  return std::all_of(text_.begin(), text_.end(),
+                     [&](const ReadComparison& one) { return holds(one, at).value_or(false); });
 }
 
 std::vector<ReadComparison> read_comparisons(const std::string& text,

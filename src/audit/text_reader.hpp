@@ -11,7 +11,8 @@
 
 namespace sumwright::audit {
 
-/// An expression of the claim language. Null when the text is none, or has a symbol that is not listed.
+/// An expression of the claim language. Null when the text is none, or has a symbol that is not
+/// listed.
 [[nodiscard]] claim::ExpressionPtr read_expression(const std::string& text,
                                                    const std::vector<std::string>& symbols);
 

@@ -27,8 +27,17 @@ namespace {
          std::all_of(text.begin(), text.end(), [](char c) { return is_word(c) && c != '\''; });
 }
 
+// The folder and the name of a script: `.` and the whole when it has no folder.
+[[nodiscard]] std::pair<std::string, std::string> split(const std::string& file) {
+  const std::size_t slash = file.find('/');
+  if (slash == std::string::npos) return {".", file};
+  return {file.substr(0, slash), file.substr(slash + 1)};
+}
+
 [[nodiscard]] bool is_script(const std::string& text) {
-  return text.size() > 2 && text.ends_with(".v") && is_name(text.substr(0, text.size() - 2));
+  const auto [folder, name] = split(text);
+  return (folder == "." || is_name(folder)) && name.size() > 2 && name.ends_with(".v") &&
+         is_name(name.substr(0, name.size() - 2));
 }
 
 // The script's words outside comments, with `"` for each string.
@@ -71,8 +80,16 @@ namespace {
 
 }  // namespace
 
+std::string CoqProject::claim_file() const {
+  for (const std::string& file : files) {
+    if (split(file).second == "Claim.v") return file;
+  }
+  return "";
+}
+
 std::string CoqProject::module(const std::string& file) const {
-  return library + "." + file.substr(0, file.size() - 2);
+  const auto [folder, name] = split(file);
+  return libraries.at(folder) + "." + name.substr(0, name.size() - 2);
 }
 
 CoqProject read_coq_project(const std::string& text, const std::string& name) {
@@ -83,20 +100,23 @@ CoqProject read_coq_project(const std::string& text, const std::string& name) {
   };
   const std::vector<std::string> words = tokens(text);
   for (std::size_t i = 0; i < words.size(); ++i) {
-    if (is_script(words[i])) {
-      out.files.push_back(words[i]);
-    } else if ((words[i] == "-Q" || words[i] == "-R") && i + 2 < words.size() &&
-               words[i + 1] == "." && is_name(words[i + 2]) && out.library.empty()) {
-      out.load_path = {words[i], words[i + 1], words[i + 2]};
-      out.library = words[i + 2];
+    if (words[i] == "-Q" && i + 2 < words.size()) {
+      const std::string& folder = words[i + 1];
+      if (folder != "." && !is_name(folder)) refuse(folder);
+      if (!is_name(words[i + 2])) refuse(words[i + 2]);
+      out.load_path.insert(out.load_path.end(), {"-Q", folder, words[i + 2]});
+      out.libraries[folder] = words[i + 2];
       i += 2;
+    } else if (is_script(words[i])) {
+      out.files.push_back(words[i]);
     } else {
       refuse(words[i]);
     }
   }
-  if (out.library.empty() || out.files.empty()) {
-    throw Unusable(claim::printable(name) + ": names no library or no scripts");
+  for (const std::string& file : out.files) {
+    if (!out.libraries.contains(split(file).first)) refuse(file);
   }
+  if (out.claim_file().empty()) throw Unusable(claim::printable(name) + ": lists no Claim.v");
   return out;
 }
 

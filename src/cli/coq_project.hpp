@@ -11,16 +11,18 @@ namespace sumwright::cli {
 
 /// A project: load-path options and scripts.
 struct CoqProject {
-  std::vector<std::string> load_path;  ///< `-Q . NAME`, ready to be arguments
-  std::vector<std::string> files;      ///< plain names that end in .v, in the order listed
-  std::string library;                 ///< the logical name of the folder `.`
+  std::vector<std::string> load_path;           ///< `-Q FOLDER NAME`..., ready to be arguments
+  std::map<std::string, std::string> libraries;  ///< folder (`.` or a plain name) -> logical name
+  std::vector<std::string> files;  ///< `Name.v` or `Folder/Name.v`, in the order listed
 
-  /// The logical name of the module of a script.
+  /// The file called Claim.v, in whichever folder; empty when there is none.
+  [[nodiscard]] std::string claim_file() const;
+  /// The logical name of the module of a script of the project.
   [[nodiscard]] std::string module(const std::string& file) const;
 };
 
-/// Reads a _CoqProject as exports have it: `-Q . NAME` (or -R) lines and file names; anything else
-/// could pass options to the assistant and is refused. Throws Unusable.
+/// Reads a _CoqProject as exports have it: `-Q FOLDER NAME` lines and file names; anything else
+/// could pass options to the assistant or lead out of the folder, and is refused. Throws Unusable.
 [[nodiscard]] CoqProject read_coq_project(const std::string& text, const std::string& name);
 
 /// A command in a script that would reach beyond the proof (write files, load plugins, change

@@ -52,21 +52,68 @@ constexpr std::size_t kDifferencesShown = 10;
   return false;
 }
 
-[[nodiscard]] Decision rebuild(const writers::ObligationsFile& file, const Options& options,
-                               const Watch& watch, Progress& progress) {
-  const claim::ReadClaim read =
-      claim::read_claim_text("claim of " + options.input.filename().string(), file.claim_text);
-  auto claim = std::make_shared<claim::Claim>(read.claim);
-  // The evidence of the claim's own text is what the author claims or brought; else the file's.
-  const bool own = !claim->evidence.recurrence.empty() && says_brought(file);
-  if (file.recurrence.empty() || own) return decide(claim, options, watch, progress);
-  const bool question = claim->is_question();
-  claim->evidence = evidence_of_file(file, *claim);
-  Decision out = decide(claim, options, watch, progress);
-  out.proof.question = question;
-  out.proof.evidence_brought = says_brought(file);
-  return out;
-}
+// The proof rebuilt from the claim's text, and what the file says otherwise.
+struct Rebuilt {
+  Decision decision;
+  std::vector<std::string> differences;
+
+  [[nodiscard]] bool agrees() const {
+    return decision.status() == Status::established && differences.empty();
+  }
+};
+
+class Rebuilder {
+ public:
+  Rebuilder(const writers::ObligationsFile& file, const Options& options, const Watch& watch,
+            Progress& progress)
+      : file_(file), options_(options), watch_(watch), progress_(progress) {}
+
+  // The evidence of the claim's own text is what the author claims or brought. Evidence that was found
+  // is taken from the file; an equality whose proof looks different then is searched for again, as
+  // the file was made.
+  Rebuilt run() {
+    const claim::ReadClaim read = claim::read_claim_text(
+        "claim of " + options_.input.filename().string(), file_.claim_text);
+    const auto claim = std::make_shared<const claim::Claim>(read.claim);
+    const bool own = !claim->evidence.recurrence.empty() && says_brought(file_);
+    if (file_.recurrence.empty() || own) return decided(claim);
+    Rebuilt with_evidence = with_evidence_of_file(*claim);
+    if (with_evidence.agrees() || !claim->is_equality()) return with_evidence;
+    Rebuilt searched = decided(claim);
+    const bool known = searched.decision.status() != Status::undecided;
+    return known ? std::move(searched) : std::move(with_evidence);
+  }
+
+ private:
+  Rebuilt decided(const std::shared_ptr<const claim::Claim>& claim) {
+    Rebuilt out;
+    out.decision = decide(claim, options_, watch_, progress_);
+    compare(out);
+    return out;
+  }
+
+  Rebuilt with_evidence_of_file(const claim::Claim& claim) {
+    auto changed = std::make_shared<claim::Claim>(claim);
+    changed->evidence = evidence_of_file(file_, claim);
+    Rebuilt out;
+    out.decision = decide(changed, options_, watch_, progress_);
+    out.decision.proof.question = claim.is_question();
+    out.decision.proof.evidence_brought = says_brought(file_);
+    compare(out);
+    return out;
+  }
+
+  void compare(Rebuilt& rebuilt) {
+    if (rebuilt.decision.status() != Status::established) return;
+    progress_.show("comparison");
+    rebuilt.differences = writers::differences(file_, rebuilt.decision.proof);
+  }
+
+  const writers::ObligationsFile& file_;
+  const Options& options_;
+  const Watch& watch_;
+  Progress& progress_;
+};
 
 [[nodiscard]] std::string identities_line(const Recheck& recheck) {
   if (!recheck.identities_open.empty()) return "not decided: " + recheck.identities_open;
@@ -104,11 +151,9 @@ Recheck recheck_obligations(const Options& options, const Watch& watch, Progress
   } catch (const std::length_error& reason) {
     out.identities_open = reason.what();
   }
-  out.rebuilt = rebuild(file, options, watch, progress);
-  progress.show("comparison");
-  if (out.rebuilt.status() == Status::established) {
-    out.differences = writers::differences(file, out.rebuilt.proof);
-  }
+  Rebuilt rebuilt = Rebuilder(file, options, watch, progress).run();
+  out.rebuilt = std::move(rebuilt.decision);
+  out.differences = std::move(rebuilt.differences);
   return out;
 }
 

@@ -133,10 +133,10 @@ class Replay {
 
   Status with_tools(const CoqTools& tools) {
     const TemporaryFolder folder;
-    for (const auto& [name, text] : scripts_) {
-      if (name.find('/') == std::string::npos) {
-        writers::FileSink().write(folder.path() / name, text);
-      }
+    for (const std::string& file : project_.files) {
+      const fs::path place = folder.path() / file;
+      fs::create_directories(place.parent_path());
+      writers::FileSink().write(place, scripts_.at(file));
     }
     CoqLimits limits;
     limits.jobs = options_.jobs > 0 ? options_.jobs : std::max(1U, std::thread::hardware_concurrency());
@@ -196,7 +196,7 @@ class Replay {
   }
 
   Status checked(CoqRun& run) {
-    const CoqStep step = run.check(project_.module("Claim.v"));
+    const CoqStep step = run.check(project_.module(project_.claim_file()));
     if (!step.result.succeeded()) return failed_;
     assumptions_ = assumptions_in_summary(step.result.output);
     if (assumptions_.empty()) {

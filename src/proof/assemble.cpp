@@ -162,6 +162,14 @@ class Assembler {
       }
       out.denominators.push_back(std::move(plain));
     }
+    for (const term::PowerMerge& m : c.merges) {
+      PowerMerge plain{term::plain(m.base), term::plain(m.first), term::plain(m.second), {}, {}};
+      for (const term::Requirement& r : m.requirements) {
+        plain.conditions.push_back(requirement(r, place));
+        if (r.nonzero) plain.nonzero = nonzero(*r.nonzero, place, r.kind);
+      }
+      out.merges.push_back(std::move(plain));
+    }
     for (const term::Product& p : c.products) out.products.push_back(term::plain(p));
     for (const auto& units : c.cancelled) {
       std::vector<Unit> list;

@@ -86,13 +86,23 @@ struct Denominator {
   std::vector<std::string> conditions;
 };
 
+/// base^(first + second) = base^first base^second, where two powers of one base met in a product.
+struct PowerMerge {
+  Polynomial base;
+  Affine first;
+  Affine second;
+  std::vector<std::string> conditions;
+  std::optional<Nonzero> nonzero;  ///< set when it rests on a nonzero base, not on exponents >= 0
+};
+
 /// `expression` (summand, closed form, right side) = sum of `products` on `region`.
 struct Conversion {
   std::string id;  ///< "summand", "closed", "right_side"
   claim::ExpressionPtr expression;
   Region region;
   std::vector<Leaf> leaves;               ///< every call and symbolic power, each different one once
-  std::vector<Denominator> denominators;  ///< outermost first
+  std::vector<Denominator> denominators;  ///< innermost first
+  std::vector<PowerMerge> merges;         ///< in the order in which they happened
   std::vector<Product> products;          ///< after cancelling units
   std::vector<std::vector<Unit>> units;   ///< per product: the units cancelled from it
   /// Definedness of the author's text, for `claim_defined`: each entry names a node and why it has a value.

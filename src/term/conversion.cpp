@@ -232,6 +232,7 @@ class Converter {
     Products out;
     for (const Product& x : a)
       for (const Product& y : b) {
+        record_merges(x, y, e.place);
         out.push_back(x);
         out.back().multiply(y);
       }
@@ -241,11 +242,54 @@ class Converter {
   Products power(const Products& base, unsigned long exponent, const Expression& e) {
     Products one{Product{}};
     if (base.size() == 1) {
+      for (unsigned long i = 1; i < exponent; ++i) {
+        Product before;
+        before.multiply(powers_only(base[0]), static_cast<unsigned>(i));
+        record_merges(before, powers_only(base[0]), e.place);
+      }
       one[0].multiply(base[0], static_cast<unsigned>(exponent));
       return one;
     }
     for (unsigned long i = 0; i < exponent; ++i) one = product(one, base, e);
     return one;
+  }
+
+  static Product powers_only(const Product& p) {
+    Product out;
+    for (const auto& [atom, e] : p.atoms)
+      if (atom.kind == AtomKind::power) out.multiply(atom, e);
+    return out;
+  }
+
+  void record_merges(const Product& x, const Product& y, claim::Place place) {
+    for (const auto& [a, ea] : x.atoms)
+      for (const auto& [b, eb] : y.atoms) {
+        if (a.kind != AtomKind::power || b.kind != AtomKind::power || !(a.base == b.base)) continue;
+        PowerMerge merge{a.base, static_cast<long>(ea) * a.argument,
+                         static_cast<long>(eb) * b.argument, {}};
+        const auto same = [&](const PowerMerge& m) {
+          return m.base == merge.base && m.first == merge.first && m.second == merge.second;
+        };
+        if (std::any_of(out_.merges.begin(), out_.merges.end(), same)) continue;
+        if (!a.base.is_constant()) require_merge(merge, place);
+        out_.merges.push_back(std::move(merge));
+      }
+  }
+
+  /// base^(a+b) = base^a base^b needs a, b >= 0 where the base may be 0.
+  void require_merge(PowerMerge& merge, claim::Place place) {
+    if (facts_.implies(merge.first) && facts_.implies(merge.second)) {
+      for (const Affine* form : {&merge.first, &merge.second}) {
+        Requirement r;
+        r.kind = ConditionKind::definedness;
+        r.nonnegative = *form;
+        r.settled = true;
+        r.place = place;
+        merge.requirements.push_back(r);
+      }
+      return;
+    }
+    merge.requirements.push_back(nonvanishing(merge.base, ConditionKind::nonvanishing, place));
   }
 
   /// Adds the coefficients of products with the same atoms; drops zeros.
@@ -328,6 +372,9 @@ const Requirement* Conversion::open() const {
     if (!r.settled) return &r;
   for (const Leaf& leaf : leaves)
     for (const Requirement& r : leaf.requirements)
+      if (!r.settled) return &r;
+  for (const PowerMerge& merge : merges)
+    for (const Requirement& r : merge.requirements)
       if (!r.settled) return &r;
   return nullptr;
 }

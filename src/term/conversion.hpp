@@ -50,8 +50,17 @@ struct Denominator {
   std::vector<Unit> units;
 };
 
+/// Two powers of one base that met in a product: base^sum = base^first * base^second.
+struct PowerMerge {
+  algebra::Polynomial base;
+  Affine first;
+  Affine second;
+  std::vector<Requirement> requirements;  ///< none for numeric bases; else both exponents >= 0, or base != 0
+};
+
 struct Conversion {
   claim::ExpressionPtr expression;
+  std::vector<PowerMerge> merges;   ///< in the order in which they happened
   std::vector<Leaf> leaves;
   std::vector<Denominator> denominators;
   std::vector<Product> products;           ///< not similar in general (closed forms)

@@ -110,7 +110,7 @@ DefinedStatement defined_statement(const proof::Proof& proof) {
   const std::vector<Defined> left = DefinedText(proof, proof.summand, "summand", n.index).run();
   std::vector<Defined> right;
   const proof::Conversion* other = proof.closed ? &*proof.closed : nullptr;
-  if (proof.right_side) other = &*proof.right_side;
+  if (!proof.claim->is_equality()) other = proof.right_side ? &*proof.right_side : nullptr;
   if (other != nullptr) right = DefinedText(proof, *other, "right_side", false).run();
   DefinedStatement out;
   if (n.index) {

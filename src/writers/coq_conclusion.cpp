@@ -82,6 +82,11 @@ class ConclusionText {
     return text;
   }
 
+  [[nodiscard]] std::string moved(proof::Affine form, long by) const {
+    form.constant += by;
+    return affine(form, scope_);
+  }
+
   // ---------------------------------------------------------------- ranges
 
   void range(const proof::RangeStep& r) {
@@ -92,25 +97,24 @@ class ConclusionText {
     const std::string high = affine(t.high, scope_);
     const std::string lo = at_shift(*author.low.value, r.shift);
     const std::string hi = at_shift(*author.high.value, r.shift);
-    const std::string wide_low = r.low_points == 0 ? low : fmt::format("{} - {}", low, r.low_points);
-    const std::string wide_high =
-        r.high_points == 0 ? high : fmt::format("{} + {}", high, r.high_points);
+    const std::string wide_low = moved(t.low, -static_cast<long>(r.low_points));
+    const std::string wide_high = moved(t.high, static_cast<long>(r.high_points));
     const std::string f = fmt::format("(fun {} : Z => {})%K", names_.k, f_pieces(n, names_.k));
     std::string right = fmt::format("sum ({}) ({}) {}", low, high, f);
     std::string split;
     for (unsigned p = r.high_points; p >= 1; --p) {
-      const std::string rest_high = p == 1 ? high : fmt::format("{} + {}", high, p - 1);
-      const std::string here = fmt::format("{} + {}", high, p);
+      const std::string rest_high = moved(t.high, static_cast<long>(p) - 1);
+      const std::string here = moved(t.high, static_cast<long>(p));
       split += fmt::format("  rewrite (sum_last K ({0}) ({1}) ({2}) ({1}) {3}) by lia.\n", wide_low, here,
                            rest_high, f);
-      right += fmt::format(" + ({})", f_pieces(n, "(" + here + ")"));
+      right += fmt::format(" + ({})", f_pieces(n, bracketed(here)));
     }
     for (unsigned p = r.low_points; p >= 1; --p) {
-      const std::string rest_low = p == 1 ? low : fmt::format("{} - {}", low, p - 1);
-      const std::string here = fmt::format("{} - {}", low, p);
+      const std::string rest_low = moved(t.low, 1 - static_cast<long>(p));
+      const std::string here = moved(t.low, -static_cast<long>(p));
       split += fmt::format("  rewrite (sum_first K ({0}) ({1}) ({2}) ({0}) {3}) by lia.\n", here, high,
                            rest_low, f);
-      right += fmt::format(" + ({})", f_pieces(n, "(" + here + ")"));
+      right += fmt::format(" + ({})", f_pieces(n, bracketed(here)));
     }
     out_ += fmt::format("Lemma range_{0} ({1} : Z) : {2}\n  (left_side {3}%Z = {4})%K.\nProof.\n"
                         "  intros Hn. unfold left_side.\n"
@@ -212,16 +216,15 @@ class ConclusionText {
         out.push_back(fmt::format("{} * ({})", scale(i), f_pieces(shifted(names_.n, i), "")));
       return out;
     }
-    const std::string low = affine(proof_.telescoping->low, scope_);
-    const std::string high = affine(proof_.telescoping->high, scope_);
+    const proof::Telescoping& t = *proof_.telescoping;
     for (const proof::RangeStep& r : proof_.ranges) {
       const std::string n = shifted(names_.n, r.shift);
       for (unsigned p = 1; p <= r.low_points; ++p)
         out.push_back(fmt::format("{} * ({})", scale(r.shift),
-                                  f_pieces(n, fmt::format("({} - {})", low, p))));
+                                  f_pieces(n, bracketed(moved(t.low, -static_cast<long>(p))))));
       for (unsigned p = 1; p <= r.high_points; ++p)
         out.push_back(fmt::format("{} * ({})", scale(r.shift),
-                                  f_pieces(n, fmt::format("({} + {})", high, p))));
+                                  f_pieces(n, bracketed(moved(t.high, static_cast<long>(p))))));
     }
     return out;
   }
@@ -229,7 +232,8 @@ class ConclusionText {
   void remainder() {
     out_ += "(** ** The recurrence of the sum, with what remains at the ends *)\n\n";
     std::string body;
-    if (names_.index) {
+    const bool ends = names_.index && !proof_.telescoping->certificate.terms.empty();
+    if (ends) {
       const std::string low = bracketed(affine(proof_.telescoping->low, scope_));
       const std::string high = bracketed(affine(proof_.telescoping->high, scope_));
       body = fmt::format("up (inj {0}) (inj {1}) * c (inj {0}) (inj {1} + inj 1) * base {0} {1} - "
@@ -237,6 +241,7 @@ class ConclusionText {
                          names_.n, high, low);
     }
     for (const std::string& t : explicit_texts()) body += (body.empty() ? "" : "\n   + ") + t;
+    if (body.empty()) body = "inj 0";
     out_ += fmt::format("Definition remainder ({} : Z) : K :=\n  ({})%K.\n\n", names_.n, body);
     std::string script;
     if (names_.index) {
@@ -251,7 +256,7 @@ class ConclusionText {
       }
       for (const std::string& t : explicit_texts()) more += " + " + t;
       script += fmt::format("  transitivity ({}{})%K; [ring|].\n  rewrite (summed {} Hn). unfold "
-                            "remainder. ring.\n", summed, more, names_.n);
+                            "remainder{}. ring.\n", summed, more, names_.n, ends ? "" : ", c");
     } else {
       script = "  unfold left_side, remainder.\n";
       for (unsigned i = 0; i < coefficients_; ++i)
@@ -336,8 +341,8 @@ class ConclusionText {
     }
     rewrites += fmt::format("  rewrite (right_side_terms {}) by lia.\n", at);
     out_ += script;
-    out_ += fmt::format("Lemma {} : ({} = right_side {})%K.\nProof.\n{}"
-                        "  assert (total : ({} = inj 0)%K).\n  {{\n{}  inj_norm. {}. }}\n"
+    out_ += fmt::format("Lemma {0} : ({1} = right_side {2})%K.\nProof.\n{3}"
+                        "  assert (total : ({4} = inj 0)%K).\n  {{\n{5}  inj_norm. {6}. }}\n"
                         "  apply (eq_of_sub K). transitivity ({4})%K; [ring|].\n"
                         "  rewrite total. exact (inj_0 K).\nQed.\n\n",
                         value_name(v.at), statement, at, rewrites, total,

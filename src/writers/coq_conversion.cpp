@@ -106,14 +106,28 @@ class ConversionText {
 
   void leaf(std::size_t i) {
     const proof::Leaf& l = c_.leaves[i];
-    lemma(leaf_name(i), fmt::format("{}%K = ({})%K", leaf_text(l), product(l.value, scope_)),
-          leaf_script(l));
+    const std::string left = leaf_text(l);
+    const std::string right = product(l.value, scope_);
+    lemma(leaf_name(i), fmt::format("{}%K = ({})%K", left, right),
+          is_identity(l) ? "  reflexivity.\n" : leaf_script(l));
   }
 
   [[nodiscard]] const proof::Atom* interval(const proof::Leaf& l) const {
     for (const auto& [a, e] : l.value.atoms)
       if (a.kind == AtomKind::interval_product) return &a;
     return nullptr;
+  }
+
+  /// The leaf is an atom already, as written.
+  [[nodiscard]] bool is_identity(const proof::Leaf& l) const {
+    return bare(leaf_text(l)) == bare(product(l.value, scope_));
+  }
+
+  /// Without brackets: equal for terms that differ in redundant brackets only (canonical forms have no
+  /// others).
+  static std::string bare(std::string text) {
+    std::erase_if(text, [](char ch) { return ch == '(' || ch == ')'; });
+    return text;
   }
 
   std::string leaf_script(const proof::Leaf& l) {
@@ -235,7 +249,7 @@ class ConversionText {
       out += fmt::format("  rewrite (zpow_div_base K {}%K ({})%K ({})%K {} {})", v,
                          parts_text(above, 0), parts_text(below, 0), written, minus) + by;
       out += split(below, minus, by);
-    } else {
+    } else if (bare(v) != bare(parts_text(above, 0))) {
       out += fmt::format("  rewrite (leaf_zpow K {}%K ({})%K {} {})", v, parts_text(above, 0), written,
                          written) + by;
     }
@@ -253,6 +267,7 @@ class ConversionText {
       out += fmt::format("  rewrite (zpow_mul_base K ({})%K ({})%K ({})%K {})", parts_text(parts, i),
                          part_text(parts[i]), parts_text(parts, i + 1), exponent) + by;
     for (const Part& p : parts) {
+      if (p.exponent == 1 && bare(exponent) == bare(p.to)) continue;
       if (p.exponent == 1)
         out += fmt::format("  rewrite (leaf_zpow K {0}%K {0}%K {1} {2})", p.base, exponent, p.to) + by;
       else
@@ -309,7 +324,7 @@ class ConversionText {
       const proof::Leaf& l = c_.leaves[i];
       const std::string key = claim::to_text(*l.expression) +
                               (l.rule == LeafRule::reciprocal_factorial ? "|r" : "");
-      if (found.contains(key))
+      if (found.contains(key) && !is_identity(l))
         out += fmt::format("  rewrite ({} {} {}).\n", leaf_name(i), arguments_, hypotheses_);
     }
     return out;
@@ -387,8 +402,10 @@ class ConversionText {
 
   void conversion() {
     std::string script = fmt::format("  unfold {}.\n", what_);
+    std::set<std::string> divided;
     for (std::size_t i = c_.denominators.size(); i-- > 0;)
-      if (!inside_other(i)) script += division_rewrite(i);
+      if (!inside_other(i) && divided.insert(divisor_text(c_.denominators[i])).second)
+        script += division_rewrite(i);
     script += leaf_rewrites(*c_.expression, nullptr);
     std::string sum;
     std::string with_units;
@@ -412,12 +429,32 @@ class ConversionText {
     std::string unfold = "  unfold ";
     for (std::size_t j = 0; j < c_.products.size(); ++j)
       unfold += fmt::format("{}{}{}", j == 0 ? "" : ", ", piece_, j + 1);
+    const std::string merges = merge_rewrites(script);
     if (any)
-      script += fmt::format("  transitivity ({})%K; [{}; inj_norm; ring|].\n  {}ring.\n", with_units,
-                            unfold.substr(2), uses);
+      script += fmt::format("  transitivity ({})%K; [{}; {}inj_norm; ring|].\n  {}ring.\n", with_units,
+                            unfold.substr(2), merges, uses);
     else
-      script += (c_.products.empty() ? "" : unfold + ". ") + "inj_norm. ring.\n";
+      script += "  " + (c_.products.empty() ? "" : unfold.substr(2) + "; ") + merges +
+                "inj_norm; ring.\n";
     lemma(what_ + "_terms", fmt::format("{} {} = ({})%K", what_, arguments_, sum), script);
+  }
+
+  /// Powers of one base that merged are taken apart again, last merge first.
+  std::string merge_rewrites(std::string& script) const {
+    std::string out;
+    for (std::size_t i = c_.merges.size(); i-- > 0;) {
+      const proof::PowerMerge& m = c_.merges[i];
+      const std::string b = power_base(m.base, scope_);
+      const std::string total = z(combine(m.first, 1, m.second, 0));
+      std::string side = "right; lia";
+      if (is_constant(m.base)) side = "left; numeric_neq0";
+      if (m.nonzero) side = "left; " + nonzero_tactic(proof_, *m.nonzero, scope_);
+      script += fmt::format("  assert (merge{0} : (zpow {1} {2} = zpow {1} {3} * zpow {1} {4})%K)\n"
+                            "    by (apply (zpow_add K); [{5} | lia]).\n",
+                            i + 1, b, total, z(m.first), z(m.second), side);
+      out += fmt::format("try rewrite merge{}; ", i + 1);
+    }
+    return out;
   }
 
   [[nodiscard]] bool inside_other(std::size_t i) const {

@@ -201,11 +201,15 @@ class InstanceTactics {
     bool any = false;
     for (const AtomStep& s : instance_.steps) {
       if (!s.literal) continue;
-      fraction_ = fraction_ || has_fraction(s.factor);
+      // `values` writes 1/m! as the inverse of an integer, 1/1 included.
+      fraction_ = fraction_ || has_fraction(s.factor) ||
+                  s.from.kind == AtomKind::reciprocal_factorial ||
+                  s.from.kind == AtomKind::reciprocal_interval_product ||
+                  s.from.kind == AtomKind::reciprocal;
       Tracker& side = s.side == AtomStep::Side::left ? left_ : right_;
       const std::string text = atom(s.from, scope_);
       side.atoms.erase(text);
-      side.factors.push_back("(" + factored(s.factor, scope_) + ")");
+      side.factors.push_back(fmt::format("({}) ^ {}", factored(s.factor, scope_), s.multiplicity));
       if (s.from.kind == AtomKind::interval_product &&
           !(is_constant(s.from.low) && is_constant(s.from.high))) {
         const long length = s.from.high.constant - s.from.low.constant;
@@ -242,7 +246,8 @@ class InstanceTactics {
       for (unsigned i = 0; i < s.multiplicity; ++i) text += " * " + image;
       const bool left = s.side == AtomStep::Side::left;
       if (!left) out_ += "  symmetry.\n";
-      out_ += fmt::format("  transitivity ({})%K; [rewrite <- {}; inj_norm; ring|].\n", text, name);
+      out_ += fmt::format("  transitivity ({})%K; [rewrite <- {}; inj_norm; {}|].\n", text, name,
+                          fraction_ ? "field" : "ring");
       if (!left) out_ += "  symmetry.\n";
     }
     side.move(from, to, s.multiplicity);

@@ -173,7 +173,7 @@ class TelescopingText {
             : std::string("unfold c; ring.");
     out_ += fmt::format(
         "Lemma summed ({0} : Z) : {1} <= {0} ->\n  ({2} =\n   {3} -\n   {4})%K.\nProof.\n  intros Hn.\n"
-        "  rewrite !sum_scal, !sum_add.\n"
+        "  rewrite !sum_scal, ?sum_add.\n"
         "  refine (sum_tele_ends K ({5}) ({6}) _\n    (fun {7} : Z => {8})%K\n    (fun {7} : Z => {9})%K\n"
         "    ({5}) ({6}) _ _ _ _ _).\n"
         "  - lia.\n  - reflexivity.\n  - reflexivity.\n"

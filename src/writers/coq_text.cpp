@@ -178,7 +178,7 @@ std::string interval_base(const Atom& a, const Scope& scope) {
 std::string power_base(const Polynomial& base, const Scope& scope) {
   if (is_constant(base) && !base.terms.empty() && base.terms[0].coefficient < 0)
     return fmt::format("(inj ({}))", base.terms[0].coefficient.get_str());
-  return "(" + polynomial(base, scope) + ")";
+  return bracketed(polynomial(base, scope));
 }
 
 std::string atom(const Atom& a, const Scope& scope) {

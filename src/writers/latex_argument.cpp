@@ -111,12 +111,10 @@ void LatexDocument::base_term() {
   if (!weight_is_one()) {
     say(fmt::format("From here on, both sides of {} are multiplied by\n", reference("rational")));
     say(display(of_running('d', 0), values_.factored(t.weight.polynomial), "", ","));
-    say("and the factor is taken into $" + inline_tex(at('G', 0)) + "$. " + nonzero_reason(t.weight));
+    say("and the factor is taken into $" + inline_tex(at('G', 0)) + "$. The factor " + nonzero_reason(t.weight) + ". ");
   }
-  const std::string& m = names_.length();
-  say(fmt::format("By ${0}!={0}\\,({0}-1)!$ for ${0}\\ge 1$, and the convention on $1/{0}!$, each of the "
-                  "following is an equality of numbers at all integers with {1}:\n",
-                  m, expressions_.mixed(t.region.text.empty() ? "no restriction" : t.region.text)));
+  say(fmt::format("{} is an equality of numbers at all integers with {}:\n", laws(),
+                  expressions_.mixed(t.region.text.empty() ? "no restriction" : t.region.text)));
   say(display_list(rows, "."));
 }
 
@@ -156,7 +154,8 @@ void LatexDocument::equality() {
                     "term with ${2}+i$. ", names_.letter('p'), inline_tex(at('B', 0)), running(0)));
   }
   if (!weight_is_one()) {
-    left = side_by_side(values_.factored(t.weight.polynomial, false), bracketed(left));
+    left = side_by_side(values_.factored(t.weight.polynomial, false),
+                        t.p.size() == 1 ? left : big_bracketed(left));
   }
   Formula right;
   if (t.certificate.terms.empty()) {
@@ -185,7 +184,8 @@ void LatexDocument::equality() {
     if (t.normal_scale != 1) {
       proof::Factored scale;
       scale.constant = t.normal_scale;
-      expanded = side_by_side(values_.factored(scale), bracketed(expanded));
+      const bool one = inline_tex(expanded) == "1";
+      expanded = side_by_side(values_.factored(scale), one ? expanded : bracketed(expanded));
     }
     say("Both sides, multiplied out, are\n" + display(expanded, {}, "", ""));
     say(fmt::format("({} {}{}{}). ", size.terms, size.terms == 1 ? "term" : "terms",
@@ -200,7 +200,11 @@ void LatexDocument::equality() {
     append_term(sum, times(piece(fmt::format("{}_{{{}}}({})", names_.letter('a'), i, running(0)), 2.8),
                            at('F', static_cast<long>(i))));
   }
-  if (!weight_is_one()) sum = side_by_side(of_running('d', 0), bracketed(sum));
+  if (!weight_is_one()) {
+    Formula d = of_running('d', 0);
+    if (t.p.size() == 1) append_tex(d, "\\,", 0.2);
+    sum = side_by_side(d, t.p.size() == 1 ? sum : big_bracketed(sum));
+  }
   Formula difference = at('G', 0, 1);
   append(difference, piece("-" + inline_tex(at('G', 0)), width_of(at('G', 0)) + 1.25));
   say(fmt::format("This is an equality of polynomials, so no point is an exception to it. Multiplied by "

@@ -181,16 +181,16 @@ std::string LatexDocument::nonzero_reason(const proof::Nonzero& nonzero) {
     }
     reasons.push_back(reason);
   }
-  if (reasons.empty()) return "It is a nonzero constant. ";
+  if (reasons.empty()) return "is a nonzero constant";
   const std::string id = nonzero.condition.empty() ? "" : " (" + latex_text(nonzero.condition) + ")";
-  return "It is not zero: " + enumeration(reasons) + id + ". ";
+  return "is not zero: " + enumeration(reasons) + id;
 }
 
 void LatexDocument::leading() {
   if (!proof_.leading) return;
   head("The leading coefficient");
   const std::string a = fmt::format("{}_{{{}}}({})", names_.letter('a'), proof_.order, running(0));
-  say(fmt::format("Consider ${}$ for ${}\\ge {}$. {}\n", a, running(0), proof_.threshold,
+  say(fmt::format("The coefficient ${}$, for ${}\\ge {}$, {}.\n", a, running(0), proof_.threshold,
                   nonzero_reason(*proof_.leading)));
 }
 

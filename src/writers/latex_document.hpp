@@ -27,6 +27,9 @@ class LatexDocument {
   [[nodiscard]] std::string parameter_sentence() const;
   void statement_display();
   void conventions();
+  [[nodiscard]] bool uses(bool (*kind)(proof::AtomKind)) const;
+  /// `By m! = m (m-1)! ..., each of the following`: the laws that the base term needs.
+  [[nodiscard]] std::string laws() const;
 
   // latex_argument.cpp: certificate, base term, equality, summation
   void certificate();
@@ -49,6 +52,7 @@ class LatexDocument {
   [[nodiscard]] Formula term_label(const proof::BalanceTerm& term, std::optional<long> at);
   [[nodiscard]] std::string zero_reason(const proof::BalanceTerm& term);
   void leading();
+  /// `is not zero: ...`, without a full stop.
   [[nodiscard]] std::string nonzero_reason(const proof::Nonzero& nonzero);
   void initial_values();
   void conclusion();

@@ -105,7 +105,8 @@ ExpressionFormula LatexExpressions::binary(const Expression& expression) const {
   }
   if (starts_with_digit(right.formula)) {
     prepend_tex(right.formula, "\\cdot ", 0.8);
-  } else if (out.tall || (u.operation == Operation::symbol && u.name.size() > 1)) {
+  } else if (out.tall || (u.operation == Operation::symbol &&
+                          inline_tex(left.formula).starts_with("\\math"))) {
     prepend_tex(right.formula, "\\,", 0.2);
   }
   right.formula.front().product = true;

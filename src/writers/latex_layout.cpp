@@ -112,7 +112,7 @@ class LineFiller {
     out += rows[i];
     if (last) out += end;
     if (numbered) out += i == 0 ? fmt::format(" \\label{{{}}}", label) : " \\notag";
-    if (!last) out += "\\\\";
+    if (!last) out += rows.size() > kPageBreaks ? "\\\\[0pt plus 2pt]" : "\\\\";
     out += "\n";
   }
   const std::string environment = numbered ? "align" : "align*";
@@ -171,6 +171,15 @@ Formula bracketed(const Formula& formula, bool tall) {
   if (!out.empty()) out.front().depth = 0;
   prepend_tex(out, "(", 0.4);
   append_tex(out, ")", 0.4);
+  return out;
+}
+
+Formula big_bracketed(const Formula& formula) {
+  Formula out;
+  append(out, formula, 1);
+  if (!out.empty()) out.front().depth = 0;
+  prepend_tex(out, "\\bigl(", 0.5);
+  append_tex(out, "\\bigr)", 0.5);
   return out;
 }
 

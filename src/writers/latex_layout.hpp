@@ -31,6 +31,9 @@ void append_tex(Formula& formula, const std::string& tex, double width);
 /// `tall`, growing ones around a single piece.
 [[nodiscard]] Formula bracketed(const Formula& formula, bool tall = false);
 
+/// The same with brackets one size larger, for sums that contain brackets; lines can be broken.
+[[nodiscard]] Formula big_bracketed(const Formula& formula);
+
 /// Width of a text in the given number of em per character.
 [[nodiscard]] double digits_width(const std::string& digits);
 

@@ -118,12 +118,12 @@ class Scanner {
         depth += text_[end] == '(' ? 1 : text_[end] == ')' ? -1 : 0;
         ++end;
       } while (end < text_.size() && depth > 0);
-      if (depth > 0) return {Token::Kind::other, "\\textasciicircum{}", 0.5, false};
+      if (depth > 0) return {Token::Kind::other, "{\\normalfont\\textasciicircum}", 0.5, false};
     } else {
       while (end < text_.size() && (is_letter(text_[end]) || is_digit(text_[end]))) ++end;
     }
     std::string_view inside = text_.substr(at_, end - at_);
-    if (inside.empty()) return {Token::Kind::other, "\\textasciicircum{}", 0.5, false};
+    if (inside.empty()) return {Token::Kind::other, "{\\normalfont\\textasciicircum}", 0.5, false};
     at_ = end;
     if (inside.front() == '(') inside = inside.substr(1, inside.size() - 2);
     std::string tex;

@@ -11,15 +11,16 @@ namespace sumwright::writers {
 
 namespace {
 
-[[nodiscard]] bool uses(const proof::Product& product, bool (*kind)(proof::AtomKind)) {
-  return std::any_of(product.atoms.begin(), product.atoms.end(),
-                     [&](const auto& atom) { return kind(atom.first.kind); });
-}
-
 [[nodiscard]] bool is_interval(proof::AtomKind kind) {
   return kind == proof::AtomKind::interval_product ||
          kind == proof::AtomKind::reciprocal_interval_product;
 }
+
+[[nodiscard]] bool is_factorial(proof::AtomKind kind) {
+  return kind == proof::AtomKind::factorial || kind == proof::AtomKind::reciprocal_factorial;
+}
+
+[[nodiscard]] bool is_power(proof::AtomKind kind) { return kind == proof::AtomKind::power; }
 
 [[nodiscard]] bool names_function(const claim::Expression& expression, std::string_view name) {
   std::vector<const claim::Expression*> open = {&expression};
@@ -49,7 +50,9 @@ void LatexDocument::opening() {
             latex_text(record.source);
   }
   if (!text.ends_with('.')) text += '.';
-  say("{\\sloppy " + text + "\\par}\n\n");
+  bool ragged = has_long_word(record.source);
+  for (const std::string& author : record.authors) ragged = ragged || has_long_word(author);
+  say("{" + std::string(ragged ? "\\raggedright " : "\\emergencystretch2em ") + text + "\\par}\n\n");
 }
 
 std::string LatexDocument::parameter_sentence() const {
@@ -166,34 +169,58 @@ Formula LatexDocument::right_side() {
   return printed ? printed->formula : of_running('b', 0);
 }
 
+bool LatexDocument::uses(bool (*kind)(proof::AtomKind)) const {
+  std::vector<const proof::Product*> products;
+  if (proof_.telescoping) products.push_back(&proof_.telescoping->base.product);
+  for (const proof::Product& product : proof_.summand.products) products.push_back(&product);
+  if (proof_.closed) {
+    for (const proof::Product& product : proof_.closed->products) products.push_back(&product);
+  }
+  return std::any_of(products.begin(), products.end(), [&](const proof::Product* product) {
+    return std::any_of(product->atoms.begin(), product->atoms.end(),
+                       [&](const auto& atom) { return kind(atom.first.kind); });
+  });
+}
+
+std::string LatexDocument::laws() const {
+  const std::string& m = names_.length();
+  const std::string& z = names_.number();
+  std::vector<std::string> out;
+  if (uses(is_factorial)) {
+    out.push_back(fmt::format("${0}!={0}\\,({0}-1)!$ for ${0}\\ge 1$ and the convention on $1/{0}!$", m));
+  }
+  if (uses(is_interval)) {
+    out.push_back(fmt::format("${0}^{{\\overline{{{1}+1}}}}={0}^{{\\overline{{{1}}}}}\\,({0}+{1})="
+                              "{0}\\,({0}+1)^{{\\overline{{{1}}}}}$", z, m));
+  }
+  if (uses(is_power)) out.push_back(fmt::format("${0}^{{{1}+1}}={0}\\,{0}^{{{1}}}$", z, m));
+  return out.empty() ? "Each of the following" : "By " + enumeration(out) + ", each of the following";
+}
+
 void LatexDocument::conventions() {
   const std::string& m = names_.length();
-  head("Conventions");
-  say(fmt::format("For an integer ${0}<0$ we read $1/{0}!$ as $0$; then\n"
-                  "\\[ \\frac{{1}}{{({0}-1)!}} = \\frac{{{0}}}{{{0}!}} \\]\nholds for every integer ${0}$. ",
-                  m));
-  if (names_function(*claim_.sum.summand, "binomial") ||
-      (claim_.closed && names_function(*claim_.closed, "binomial"))) {
-    const std::string& z = names_.number();
-    say(fmt::format("As usual, $\\binom{{{0}}}{{{1}}}={0}({0}-1)\\cdots({0}-{1}+1)/{1}!$ for ${1}\\ge 0$, and "
-                    "$\\binom{{{0}}}{{{1}}}=0$ for ${1}<0$. ", z, m));
-  }
-  bool intervals = uses(proof_.telescoping ? proof_.telescoping->base.product : proof::Product{},
-                        is_interval);
-  for (const proof::Product& product : proof_.summand.products) {
-    intervals = intervals || uses(product, is_interval);
-  }
+  const std::string& z = names_.number();
   const auto written = [&](std::string_view name) {
     return names_function(*claim_.sum.summand, name) ||
            (claim_.closed && names_function(*claim_.closed, name));
   };
-  if (intervals || written("rising")) {
-    const std::string& z = names_.number();
-    say(fmt::format("The rising factorial is ${0}^{{\\overline{{{1}}}}}={0}({0}+1)\\cdots({0}+{1}-1)$. ", z, m));
+  head("Conventions");
+  if (uses(is_factorial)) {
+    say(fmt::format("For an integer ${0}<0$ we read $1/{0}!$ as $0$; then\n"
+                    "\\[ \\frac{{1}}{{({0}-1)!}} = \\frac{{{0}}}{{{0}!}} \\]\nholds for every integer "
+                    "${0}$. ", m));
+  }
+  if (written("binomial")) {
+    say(fmt::format("As usual, $\\binom{{{0}}}{{{1}}}={0}({0}-1)\\cdots({0}-{1}+1)/{1}!$ for ${1}\\ge 0$, "
+                    "and $\\binom{{{0}}}{{{1}}}=0$ for ${1}<0$. ", z, m));
+  }
+  if (uses(is_interval) || written("rising")) {
+    say(fmt::format("The rising factorial is ${0}^{{\\overline{{{1}}}}}={0}({0}+1)\\cdots({0}+{1}-1)$. ",
+                    z, m));
   }
   if (written("falling")) {
-    const std::string& z = names_.number();
-    say(fmt::format("The falling factorial is ${0}^{{\\underline{{{1}}}}}={0}({0}-1)\\cdots({0}-{1}+1)$. ", z, m));
+    say(fmt::format("The falling factorial is ${0}^{{\\underline{{{1}}}}}={0}({0}-1)\\cdots({0}-{1}+1)$. ",
+                    z, m));
   }
   say("Labels such as (c1) refer to the table of side conditions at the end.\n");
 }

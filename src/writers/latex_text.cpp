@@ -17,7 +17,7 @@ constexpr std::size_t kWord = 12;  // characters of a word between places where 
 [[nodiscard]] std::string ascii(char c) {
   switch (c) {
     case '\\':
-      return "\\textbackslash{}";
+      return "{\\normalfont\\textbackslash}";
     case '{':
     case '}':
     case '$':
@@ -27,9 +27,9 @@ constexpr std::size_t kWord = 12;  // characters of a word between places where 
     case '_':
       return std::string("\\") + c;
     case '^':
-      return "\\textasciicircum{}";
+      return "{\\normalfont\\textasciicircum}";
     case '~':
-      return "\\textasciitilde{}";
+      return "{\\normalfont\\textasciitilde}";
     case '<':
     case '>':
     case '|':
@@ -82,13 +82,26 @@ constexpr std::size_t kWord = 12;  // characters of a word between places where 
   }
 }
 
+// Bytes up to the next blank.
+[[nodiscard]] std::size_t word_length(std::string_view text, std::size_t at) {
+  return std::min(text.find_first_of(" \n\t\r", at), text.size()) - at;
+}
+
 }  // namespace
+
+bool has_long_word(std::string_view text) {
+  for (std::size_t at = 0; at < text.size(); at += word_length(text, at) + 1) {
+    if (word_length(text, at) > 2 * kWord) return true;
+  }
+  return false;
+}
 
 std::string latex_text(std::string_view text, std::size_t limit) {
   std::string out;
   std::size_t word = 0;
   std::size_t count = 0;
   bool blank = false;
+  bool long_word = false;
   for (std::size_t at = 0; at < text.size(); ++count) {
     if (count >= limit) return out + "\\ldots{}";
     const claim::Character c = claim::decode(text, at);
@@ -99,7 +112,8 @@ std::string latex_text(std::string_view text, std::size_t limit) {
     } else {
       if (blank && !out.empty()) out += ' ';
       blank = false;
-      if (word > 2 * kWord && word % kWord == 0) out += "\\allowbreak{}";
+      if (word == 0) long_word = word_length(text, at) > 2 * kWord;
+      if (long_word && word > 0 && word % kWord == 0) out += "\\allowbreak{}";
       out += shown(text, at, c);
       ++word;
     }

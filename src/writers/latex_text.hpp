@@ -14,6 +14,9 @@ namespace sumwright::writers {
 /// `[U+4E2D]`; long words may be broken; cut after `limit` characters, with an ellipsis.
 [[nodiscard]] std::string latex_text(std::string_view text, std::size_t limit = 600);
 
+/// Whether a word is so long that a justified paragraph may not hold it well.
+[[nodiscard]] bool has_long_word(std::string_view text);
+
 /// Source text in typewriter type, with breaks allowed behind operators, commas and brackets.
 [[nodiscard]] std::string latex_code(std::string_view text, std::size_t limit = 1500);
 

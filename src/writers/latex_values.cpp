@@ -1,7 +1,7 @@
-// From polynomials and products of atoms to formulas in pieces.
+// From polynomials and affine forms to formulas in pieces.
 //
-// rfact stands below the fraction bar, ip(a; i, j) is printed as the rising factorial of a + i with
-// j - i factors.
+// Polynomials keep the order of their terms, short ones start with a positive term; long ones are
+// shown in full while they fit the room that is left for them.
 #include "writers/latex_values.hpp"
 
 #include <fmt/format.h>
@@ -21,19 +21,6 @@ constexpr double kWholePage = 1300;  // em on one page
 constexpr double kShort = 100;       // polynomials below are always shown
 constexpr std::size_t kDigits = 24;  // digits kept together
 
-[[nodiscard]] proof::Affine difference(const proof::Affine& a, const proof::Affine& b) {
-  proof::Affine out = a;
-  out.coefficients.resize(std::max(a.coefficients.size(), b.coefficients.size()), 0);
-  for (std::size_t i = 0; i < b.coefficients.size(); ++i) out.coefficients[i] -= b.coefficients[i];
-  out.constant -= b.constant;
-  return out;
-}
-
-[[nodiscard]] bool is_zero(const proof::Affine& a) {
-  return a.constant == 0 && std::all_of(a.coefficients.begin(), a.coefficients.end(),
-                                        [](long c) { return c == 0; });
-}
-
 // Short polynomials start with a positive term where they have one: 2k - 3n - 3.
 [[nodiscard]] std::size_t leading_position(const proof::Polynomial& value) {
   if (value.terms.size() > 6) return 0;
@@ -41,18 +28,6 @@ constexpr std::size_t kDigits = 24;  // digits kept together
     if (value.terms[i].coefficient > 0) return i;
   }
   return 0;
-}
-
-// One symbol, or one nonnegative number: needs no brackets.
-[[nodiscard]] bool is_simple(const proof::Affine& a) {
-  long ones = 0;
-  long others = 0;
-  for (const long c : a.coefficients) {
-    ones += c == 1 ? 1 : 0;
-    others += c != 0 && c != 1 ? 1 : 0;
-  }
-  if (others > 0) return false;
-  return ones == 0 ? a.constant >= 0 : ones == 1 && a.constant == 0;
 }
 
 }  // namespace
@@ -216,117 +191,6 @@ Formula LatexValues::factored(const proof::Factored& value, bool as_sum) {
       }
     }
   }
-  return out;
-}
-
-Formula LatexValues::interval(const proof::Atom& value) {
-  proof::Affine length = difference(value.high, value.low);
-  Formula base;
-  mpz_class number;
-  const bool numeric = writers::is_integer(value.base, &number) && value.base_scale == 1;
-  proof::Affine low = value.low;
-  if (numeric && number.fits_slong_p()) {
-    low.constant += number.get_si();
-    base = affine(low);
-    if (!is_simple(low)) base = bracketed(base);
-  } else {
-    Formula top = polynomial(value.base);
-    if (value.base_scale != 1) {
-      const std::string scale = value.base_scale.get_str();
-      top = piece("\\tfrac{" + inline_tex(top) + "}{" + scale + "}", 0.8 * width_of(top) + 0.4);
-    }
-    const bool bare = top.size() == 1 && is_zero(low);
-    if (!is_zero(low)) append_term(top, affine(low));
-    base = bare && value.base_scale == 1 ? top : bracketed(top);
-  }
-  Formula out = piece(inline_tex(base), width_of(base));
-  const Formula exponent = affine(length);
-  append_tex(out, "^{\\overline{" + inline_tex(exponent) + "}}", kScript * width_of(exponent) + 0.1);
-  return out;
-}
-
-Formula LatexValues::power(const proof::Atom& value) {
-  std::size_t which = 0;
-  mpz_class number;
-  const bool bare = writers::is_symbol(value.base, &which) ||
-                    (writers::is_integer(value.base, &number) && number >= 0);
-  Formula base = polynomial(value.base);
-  if (!bare) base = bracketed(base);
-  Formula out = piece(inline_tex(base), width_of(base));
-  const Piece exponent = script("^", affine(value.argument));
-  append_tex(out, exponent.tex, exponent.width);
-  return out;
-}
-
-Formula LatexValues::atom(const proof::Atom& value) {
-  switch (value.kind) {
-    case proof::AtomKind::factorial:
-    case proof::AtomKind::reciprocal_factorial: {
-      Formula argument = affine(value.argument);
-      if (!is_simple(value.argument)) argument = bracketed(argument);
-      append_tex(argument, "!", 0.3);
-      return piece(inline_tex(argument), width_of(argument));
-    }
-    case proof::AtomKind::power:
-      return power(value);
-    case proof::AtomKind::interval_product:
-    case proof::AtomKind::reciprocal_interval_product:
-      return interval(value);
-    case proof::AtomKind::reciprocal:
-      break;
-  }
-  return bracketed(polynomial(value.base));
-}
-
-void LatexValues::add_atom(Fraction& out, const proof::Atom& value, unsigned exponent) {
-  const bool below = value.kind == proof::AtomKind::reciprocal_factorial ||
-                     value.kind == proof::AtomKind::reciprocal_interval_product ||
-                     value.kind == proof::AtomKind::reciprocal;
-  Formula next = atom(value);
-  if (exponent != 1) {
-    const bool nested = value.kind == proof::AtomKind::power ||
-                        value.kind == proof::AtomKind::interval_product ||
-                        value.kind == proof::AtomKind::reciprocal_interval_product;
-    if (nested) next = bracketed(next);
-    const std::string text = std::to_string(exponent);
-    append_tex(next, "^{" + text + "}", kScript * digits_width(text));
-  }
-  Formula& side = below ? out.below : out.above;
-  if (!side.empty()) append_tex(side, "\\,", 0.2);
-  append(side, next);
-  side.back().product = true;
-}
-
-Formula LatexValues::product(const proof::Product& value) {
-  if (value.coefficient.constant == 0) return piece("0", 0.52);
-  Fraction fraction;
-  for (const auto& [atom, exponent] : value.atoms) add_atom(fraction, atom, exponent);
-  Formula out;
-  const bool unit = value.coefficient.factors.empty() && abs(value.coefficient.constant) == 1;
-  if (!unit || value.atoms.empty()) {
-    out = factored(value.coefficient, value.atoms.empty());
-    if (value.atoms.empty()) return out;
-  } else if (value.coefficient.constant < 0) {
-    out = piece("-", 0.8);
-  }
-  if (fraction.below.empty()) {
-    Formula above = fraction.above;
-    if (!out.empty() && !unit) prepend_tex(above, "\\cdot ", 0.8);
-    append(out, above);
-    return out;
-  }
-  if (fraction.above.empty()) fraction.above = piece("1", 0.52);
-  const double width = std::max(width_of(fraction.above), width_of(fraction.below)) + 0.4;
-  if (width <= kNumberedRoom - 9) {
-    if (!out.empty() && !unit) append_tex(out, "\\,", 0.2);
-    append(out, piece("\\frac{" + inline_tex(fraction.above) + "}{" + inline_tex(fraction.below) + "}", width));
-    return out;
-  }
-  Formula wide = fraction.above;  // too wide for a bar
-  append_tex(wide, "\\,\\bigm/", 1);
-  append(wide, bracketed(fraction.below), 0);
-  if (!out.empty() && !unit) prepend_tex(wide, "\\cdot ", 0.8);
-  append(out, wide);
   return out;
 }
 

@@ -97,6 +97,9 @@ void write_conversion(ObligationsDocument& out, const TextPrinter& print,
     out.statement(key + " gives", fmt::format("{} = {}{}", to_text(*leaf.expression),
                                               print.product(leaf.value),
                                               bracketed_ids(leaf.conditions)));
+    for (std::size_t z = 0; z < leaf.nonzero.size(); ++z) {
+      write_nonzero(out, print, fmt::format("{} nonzero {}", key, z + 1), leaf.nonzero[z]);
+    }
   }
   for (std::size_t j = 0; j < conversion.denominators.size(); ++j) {
     const proof::Denominator& denominator = conversion.denominators[j];

@@ -19,6 +19,21 @@ namespace {
   return columns;
 }
 
+// Where the word that starts at `at` ends: at a blank, but not inside brackets, unless they hold much.
+[[nodiscard]] std::size_t word_end(std::string_view text, std::size_t at) {
+  constexpr std::size_t kTogether = 50;
+  int depth = 0;
+  std::size_t first = text.size();
+  for (std::size_t i = at; i < text.size(); ++i) {
+    depth += text[i] == '(' ? 1 : text[i] == ')' ? -1 : 0;
+    if (text[i] != ' ') continue;
+    if (depth <= 0) return i - at <= kTogether ? i : std::min(first, i);
+    first = std::min(first, i);
+    if (i - at > kTogether) return first;
+  }
+  return text.size() - at <= kTogether ? text.size() : first;
+}
+
 }  // namespace
 
 std::string single_spaced(std::string_view text) {
@@ -54,7 +69,7 @@ void ObligationsDocument::wrapped(std::string_view first, std::string_view rest_
   bool empty_line = true;
   std::size_t at = 0;
   while (at < text.size()) {
-    const std::size_t end = std::min(text.find(' ', at), text.size());
+    const std::size_t end = word_end(text, at);
     const std::string_view word = text.substr(at, end - at);
     const std::size_t gap = empty_line ? 0 : 1;
     if (!empty_line && width(line) + gap + width(word) > kObligationsColumns) {

@@ -29,7 +29,7 @@ void append(Rows& out, const Rows& more) { out.insert(out.end(), more.begin(), m
 }
 
 [[nodiscard]] Rows conversion_keys() {
-  return {{"written", '=', ValueKind::text, true},
+  Rows out = {{"written", '=', ValueKind::text, true},
           {"product #", '=', ValueKind::text, false},
           {"product # cancelled #", ':', ValueKind::text, false},
           {"on", ':', ValueKind::text, true},
@@ -38,6 +38,8 @@ void append(Rows& out, const Rows& more) { out.insert(out.end(), more.begin(), m
           {"denominator #", ':', ValueKind::text, false},
           {"denominator # unit #", ':', ValueKind::text, false},
           {"defined by", ':', ValueKind::text, true}};
+  append(out, nonzero_keys("rule # nonzero #", false));
+  return out;
 }
 
 [[nodiscard]] Rows balance_keys(const std::string& prefix) {

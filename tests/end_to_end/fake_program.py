@@ -13,7 +13,8 @@ HERE = os.path.dirname(os.path.abspath(__file__))
 
 
 def prepared(path):
-    return os.path.join(HERE, "prepared", os.path.basename(path).rsplit(".", 1)[0])
+    name = os.path.basename(path).rsplit(".", 1)[0].removeprefix("Of_exemplars_")
+    return os.path.join(HERE, "prepared", name)
 
 
 def read(*parts):

@@ -1,6 +1,7 @@
 """Programs run with limits: seconds, address space; what they used is measured."""
 
 import os
+import re
 import signal
 import subprocess
 import tempfile
@@ -21,6 +22,11 @@ class Finished:
     cpu_seconds: float
     peak_kib: int
     stopped: bool  # by the time limit
+
+    def reason(self):
+        """For a verdict: its reason in one line; else what it said."""
+        match = re.search(r"^reason\s+(.*(?:\n\s+.*)*)", self.stdout, re.M)
+        return " ".join(match[1].split()) if match else self.text()
 
     def text(self, most=1500):
         """What it said, shortened in the middle, for a report."""

@@ -8,7 +8,7 @@ from dataclasses import dataclass
 from processes import in_parallel, run
 
 NEEDED = ["obligations.txt", "appendix.tex", "appendix-standalone.tex", "coq/_CoqProject",
-          "coq/Claim.v", "record.json", "run.json"]
+          "record.json", "run.json"]
 MOST_MEMORY_KIB = 1 << 20
 
 
@@ -18,6 +18,12 @@ class Export:
     folder: str
     record: dict
     good: bool
+
+    @property
+    def script(self):
+        """The path of Claim.v: in coq/, or in a folder of its own when its library has a name."""
+        own = os.path.join(self.folder, "coq", self.claim.library, "Claim.v")
+        return own if os.path.exists(own) else os.path.join(self.folder, "coq", "Claim.v")
 
 
 def read(path):
@@ -54,10 +60,13 @@ def export(context, claim, out, cwd, path, env):
 
 def problem_of(done, folder):
     if done.status != 0:
-        return f"exit status {done.status}: {done.text()}"
+        return f"exit status {done.status}: {done.reason()}"
     if done.peak_kib > MOST_MEMORY_KIB:
         return f"{done.peak_kib} KiB of memory"
-    missing = [name for name in NEEDED if not os.path.exists(os.path.join(folder, name))]
+    there = files_below(folder)
+    missing = [name for name in NEEDED if name not in there]
+    if not any(os.path.basename(name) == "Claim.v" for name in there):
+        missing.append("Claim.v")
     if missing:
         return f"not written: {', '.join(missing)}"
     record = json.loads(read(os.path.join(folder, "record.json")))
@@ -128,6 +137,6 @@ def exports(context):
     def recheck(first):
         done = run([*context.sumwright, "check", os.path.join(first.folder, "obligations.txt")])
         report.case(first.claim.name,
-                    None if done.status == 0 else f"exit status {done.status}: {done.text()}")
+                    None if done.status == 0 else f"exit status {done.status}: {done.reason()}")
 
     in_parallel(recheck, [e for e in found if e.good])

@@ -68,7 +68,7 @@ def same_up_to_a_factor(a, b):
 
 def refusal_problem(done, path):
     if done.status != 1:
-        return f"exit status {done.status} in place of 1: {done.text()}"
+        return f"exit status {done.status} in place of 1: {done.reason()}"
     answer = json.loads(done.stdout)
     if answer.get("verdict") != "refuted":
         return f"verdict {answer.get('verdict')}"
@@ -98,6 +98,6 @@ def false_claims(context):
     def accept(claim):
         done = run([*context.sumwright, "check", claim.path])
         report.case(claim.name,
-                    None if done.status == 0 else f"exit status {done.status}: {done.text()}")
+                    None if done.status == 0 else f"exit status {done.status}: {done.reason()}")
 
     in_parallel(accept, claims_in(context.false_root, "disguised/*.toml"))

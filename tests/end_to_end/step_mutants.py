@@ -20,7 +20,7 @@ def choose(context, accepted):
     for export in order:
         if len(chosen) >= context.mutants:
             break
-        with open(os.path.join(export.folder, "coq", "Claim.v"), encoding="utf-8") as stream:
+        with open(export.script, encoding="utf-8") as stream:
             text = stream.read()
         for mutate, most in ((polynomial_mutants, each), (statement_mutants, -(-each // 3))):
             try:

@@ -21,7 +21,7 @@ def best_check(context, path):
 
 def problem_of(done):
     if done.status != 0:
-        return f"exit status {done.status}: {done.text()}"
+        return f"exit status {done.status}: {done.reason()}"
     if done.cpu_seconds >= MOST_SECONDS:
         return f"check took {done.cpu_seconds:.2f} s"
     if done.peak_kib > MOST_MEMORY_KIB:
@@ -49,7 +49,7 @@ def speed(context):
         copy = context.place("found", claim.folder + ".toml")
         done = run([*context.sumwright, "find", claim.path, "--write", copy])
         if done.status != 0 or not os.path.exists(copy):
-            report.case(claim.name, f"find: exit status {done.status}: {done.text()}")
+            report.case(claim.name, f"find: exit status {done.status}: {done.reason()}")
             return
         done = best_check(context, copy)
         costs.append(done.cpu_seconds)

@@ -55,13 +55,13 @@ TEST(Mutations, ACoefficient) {
 }
 
 TEST(Mutations, ACoefficientThatHidesInTheProportion) {
-  // all coefficients and the certificate times n - 3: the equality holds, the recurrence is void at 3
+  // all coefficients and the certificate times n - 3: the equality holds, the recurrence is void at
+  // 3
   proof::Proof proof = testing::squares_proof();
   for (proof::Factored& one : proof.telescoping->coefficients)
     one.factors.emplace_back(w().polynomial("n - 3"), 1);
   proof.telescoping->certificate = w().polynomial("(n - 3)*(2*k - 3*n - 3)");
-  expect_disagreement(proof,
-                      {"normal form", "leading coefficient", "recurrence as printed"},
+  expect_disagreement(proof, {"normal form", "leading coefficient", "recurrence as printed"},
                       "void at n = 3");
 }
 
@@ -83,8 +83,7 @@ TEST(Mutations, TheFactorUp) {
   proof::Proof proof = testing::squares_proof();
   proof.telescoping->up = w().factored(1, {{"n + 1 - k", 1}, {"n + 2 - k", 1}});
   expect_disagreement(
-      proof,
-      {"polynomial equality", "term identity at points", "certificate over the base term"},
+      proof, {"polynomial equality", "term identity at points", "certificate over the base term"},
       "down(n,k+1) B(n,k+1)");
 }
 
@@ -100,8 +99,7 @@ TEST(Mutations, TheFactorDown) {
 TEST(Mutations, TheWeight) {
   proof::Proof proof = testing::squares_proof();
   proof.telescoping->weight.polynomial = w().factored(2, {});
-  expect_disagreement(proof,
-                      {"polynomial equality", "normal form", "term identity at points"},
+  expect_disagreement(proof, {"polynomial equality", "normal form", "term identity at points"},
                       "n = 0, k = 0: -2 against -1");
 }
 
@@ -185,8 +183,7 @@ TEST(Mutations, ARegionThatIsTooNarrow) {
 TEST(Mutations, AProductOfTheSummand) {
   proof::Proof proof = testing::squares_proof();
   proof.summand.products[0].coefficient = w().factored(2, {});
-  expect_disagreement(proof,
-                      {"summand as atoms", "shifted terms over the base term", "ranges"},
+  expect_disagreement(proof, {"summand as atoms", "shifted terms over the base term", "ranges"},
                       "expression against atoms at n = 0, k = 0: 1 against 2");
 }
 
@@ -249,7 +246,8 @@ TEST(Mutations, APolynomialOfABalance) {
 TEST(Mutations, ATermOfABalance) {
   proof::Proof proof = testing::squares_proof();
   proof.closed_recurrence->terms[2].product.coefficient = w().factored(2, {{"2*n + 3", 1}});
-  expect_disagreement(proof, {"balance with the closed form"}, "left side of the instance of a_0 C(n)");
+  expect_disagreement(proof, {"balance with the closed form"},
+                      "left side of the instance of a_0 C(n)");
 }
 
 TEST(Mutations, ABalanceOfSomethingElse) {
@@ -274,8 +272,7 @@ TEST(Mutations, ATermInNoGroup) {
 TEST(Mutations, AZeroThatIsNone) {
   proof::Proof proof = testing::halves_proof();
   proof.closed_recurrence->terms[0].zero = "polynomial factor";
-  expect_disagreement(proof, {"balance with the closed form"},
-                      "the term G(n, n+1) is in 1 groups");
+  expect_disagreement(proof, {"balance with the closed form"}, "the term G(n, n+1) is in 1 groups");
 }
 
 TEST(Mutations, AZeroAtomThatDoesNotVanish) {
@@ -328,7 +325,8 @@ TEST(Mutations, AnInitialValueIsWrong) {
   expect_disagreement(proof, {"initial values"}, "S(0) over 0..-1");
   proof = testing::squares_proof();
   proof.initial[0].balance.terms[0].product.coefficient = w().factored(3, {});
-  expect_disagreement(proof, {"initial values"}, "the initial balance against the sum at n = 0, k = 0: 3 against 1");
+  expect_disagreement(proof, {"initial values"},
+                      "the initial balance against the sum at n = 0, k = 0: 3 against 1");
 }
 
 TEST(Mutations, TheThreshold) {
@@ -453,6 +451,51 @@ TEST(Mutations, AnExclusionThatTheClaimDoesNotHave) {
       << found.details;
 }
 
+TEST(Mutations, AFormThatIsNoInteger) {
+  proof::Proof proof = testing::powers_proof();
+  proof.telescoping->base.product.atoms[1].first.argument.coefficients[2] = 1;  // rfact(k + x)
+  const Outcome found = outcome(proof);
+  EXPECT_EQ(found.disagree.count("term identity at points"), 1U) << found.details;
+  EXPECT_NE(found.details.find("an integer was expected"), std::string::npos) << found.details;
+}
+
+TEST(Mutations, TheIndexWhereItHasBeenSummedOver) {
+  proof::Proof proof = testing::squares_proof();
+  proof.closed->products[0].atoms[1].first = w().rfact("n + k");
+  expect_disagreement(proof, {"argument without gaps"}, "the index occurs in closed");
+  proof = testing::squares_proof();
+  proof.closed_recurrence->terms[2].product.atoms[0].first = w().fact("2*n - k");
+  expect_disagreement(proof, {"argument without gaps"}, "the index occurs in balance");
+  proof = testing::squares_proof();
+  proof.telescoping->high = w().affine("n + 1 + k");
+  expect_disagreement(proof, {"argument without gaps"}, "a symbol too many");
+}
+
+TEST(Mutations, TheAuthorsRecurrenceAgainstTheClearedOne) {
+  // written with a denominator, proved without
+  const auto original = testing::read_claim(
+      testing::squares_claim_text() + "[evidence]\nrecurrence = [\"-4 + 2/(n + 1)\", \"1\"]\n");
+  proof::Proof proof = testing::squares_recurrence_proof();
+  auto cleared = std::make_shared<claim::Claim>(*original);
+  cleared->evidence = proof.claim->evidence;
+  proof.claim = cleared;
+  proof.summand.expression = original->sum.summand;
+  AuditOptions options;
+  options.original = original.get();
+  EXPECT_EQ(outcome(proof, options).disagree, Checks{}) << outcome(proof, options).details;
+  const auto other = testing::read_claim(testing::squares_claim_text() +
+                                         "[evidence]\nrecurrence = [\"-4 + 3/(n + 1)\", \"1\"]\n");
+  auto renamed = std::make_shared<claim::Claim>(*other);
+  renamed->sum = original->sum;  // the same trees, so that only the recurrence differs
+  options.original = renamed.get();
+  EXPECT_EQ(outcome(proof, options).disagree, Checks{"recurrence as the author wrote it"})
+      << outcome(proof, options).details;
+  auto assumed = std::make_shared<claim::Claim>(*original);
+  assumed->from = 1;
+  options.original = assumed.get();
+  EXPECT_EQ(outcome(proof, options).disagree, Checks{"nothing assumed beyond the claim"});
+}
+
 // ---------------------------------------------------------------- the sums themselves
 
 TEST(Mutations, AFalseClosedForm) {
@@ -469,7 +512,8 @@ summand = "1"
 over = [ { index = "k", low = 0, high = "n" } ]
 [equals]
 closed = "3*2^n"
-)")->closed;
+)")
+                            ->closed;
   proof.claim = false_claim;
   proof.closed->expression = false_claim->closed;
   proof.closed->products[0].coefficient = w().factored(3, {});

@@ -1,6 +1,6 @@
 // Proofs by hand. Squares: the certificate R = k^2 (2k-3n-3)/(n+1-k)^2 with base term
-// (n! / (k! (n+1-k)!))^2. Halves: G(n,k) = -2k B, from Pascal's rule, with B = (n+k)! / (k! (n+1)! 2^k).
-// Powers: the binomial theorem, G(n,k) = -k B x^k with B = n! / (k! (n+1-k)!).
+// (n! / (k! (n+1-k)!))^2. Halves: G(n,k) = -2k B, from Pascal's rule, with B = (n+k)! / (k! (n+1)!
+// 2^k). Powers: the binomial theorem, G(n,k) = -k B x^k with B = n! / (k! (n+1-k)!).
 #include "sample_proofs.hpp"
 
 #include <map>
@@ -76,12 +76,11 @@ proof::Affine Notation::affine(const std::string& text) const {
   return out;
 }
 
-proof::Factored Notation::factored(
-    const mpq_class& constant, const std::vector<std::pair<std::string, long>>& factors) const {
+proof::Factored Notation::factored(const mpq_class& constant,
+                                   const std::vector<std::pair<std::string, long>>& factors) const {
   proof::Factored out;
   out.constant = constant;
-  for (const auto& [text, exponent] : factors)
-    out.factors.emplace_back(polynomial(text), exponent);
+  for (const auto& [text, exponent] : factors) out.factors.emplace_back(polynomial(text), exponent);
   return out;
 }
 
@@ -140,7 +139,8 @@ namespace {
 
 using Origin = proof::BalanceTerm::Origin;
 
-proof::Condition decided(const std::string& id, proof::ConditionKind kind, const std::string& text) {
+proof::Condition decided(const std::string& id, proof::ConditionKind kind,
+                         const std::string& text) {
   return {id, kind, text, "", proof::Settled::decided, "linear arithmetic"};
 }
 
@@ -178,9 +178,8 @@ proof::InitialValue one_at_zero(const Notation& w) {
   out.balance.id = "initial_0";
   out.balance.terms = {term(Origin::explicit_point, "F(0, 0)", product(w.factored(1, {}), {}), 0),
                        term(Origin::closed_form, "C(0)", product(w.factored(-1, {}), {}), 0)};
-  out.balance.groups = {{{"I", product(w.factored(1, {}), {})},
-                         {0, 1},
-                         {w.factored(1, {}), w.factored(-1, {})}}};
+  out.balance.groups = {
+      {{"I", product(w.factored(1, {}), {})}, {0, 1}, {w.factored(1, {}), w.factored(-1, {})}}};
   return out;
 }
 
@@ -248,11 +247,11 @@ void add_squares_argument(proof::Proof& out, const Notation& w) {
       {instance("shift_1", t.region,
                 product(one, {{w.fact("n + 1"), 2}, {w.rfact("k"), 2}, {w.rfact("n + 1 - k"), 2}}),
                 over(t.p[1], b))}};
-  t.index_shift = instance(
-      "index_shift", t.region,
-      product(w.factored(1, {{"k + 1", 2}}),
-              {{w.fact("n"), 2}, {w.rfact("k + 1"), 2}, {w.rfact("n - k"), 2}}),
-      over(t.up, b));
+  t.index_shift =
+      instance("index_shift", t.region,
+               product(w.factored(1, {{"k + 1", 2}}),
+                       {{w.fact("n"), 2}, {w.rfact("k + 1"), 2}, {w.rfact("n - k"), 2}}),
+               over(t.up, b));
   t.normal_form = w.polynomial("(n+1)^3 - 2*(2*n+1)*(n+1-k)^2");
   if (t.normal_form.terms.front().coefficient < 0) {
     for (proof::Monomial& monomial : t.normal_form.terms) monomial.coefficient *= -1;
@@ -281,24 +280,23 @@ proof::Proof squares_proof() {
   out.closed->region = w.region({"n"});
   out.closed->products = {product(w.factored(1, {}), {{w.fact("2*n"), 1}, {w.rfact("n"), 2}})};
 
-  const proof::Product e =
-      product(w.factored(1, {}), {{w.fact("2*n"), 1}, {w.rfact("n + 1"), 2}});
+  const proof::Product e = product(w.factored(1, {}), {{w.fact("2*n"), 1}, {w.rfact("n + 1"), 2}});
   const proof::Factored first = w.factored(2, {{"2*n + 1", 1}, {"n + 1", 2}});
   const proof::Factored second = w.factored(-1, {{"n + 1", 1}, {"2*n + 2", 1}, {"2*n + 1", 1}});
   proof::Balance balance;
   balance.id = "closed_recurrence";
   balance.region = w.region({"n"});
   balance.terms = squares_ends(w);
-  balance.terms.push_back(term(Origin::closed_form, "a_0 C(n)",
-                               product(w.factored(2, {{"2*n + 1", 1}}),
-                                       {{w.fact("2*n"), 1}, {w.rfact("n"), 2}}),
-                               0));
-  balance.terms.push_back(term(Origin::closed_form, "a_1 C(n+1)",
-                               product(w.factored(-1, {{"n + 1", 1}}),
-                                       {{w.fact("2*n + 2"), 1}, {w.rfact("n + 1"), 2}}),
-                               0));
-  balance.terms[2].instance = instance("closed_0", balance.region, balance.terms[2].product, over(first, e));
-  balance.terms[3].instance = instance("closed_1", balance.region, balance.terms[3].product, over(second, e));
+  balance.terms.push_back(
+      term(Origin::closed_form, "a_0 C(n)",
+           product(w.factored(2, {{"2*n + 1", 1}}), {{w.fact("2*n"), 1}, {w.rfact("n"), 2}}), 0));
+  balance.terms.push_back(term(
+      Origin::closed_form, "a_1 C(n+1)",
+      product(w.factored(-1, {{"n + 1", 1}}), {{w.fact("2*n + 2"), 1}, {w.rfact("n + 1"), 2}}), 0));
+  balance.terms[2].instance =
+      instance("closed_0", balance.region, balance.terms[2].product, over(first, e));
+  balance.terms[3].instance =
+      instance("closed_1", balance.region, balance.terms[3].product, over(second, e));
   balance.groups = {{{"E1", e}, {2, 3}, {first, second}}};
   out.closed_recurrence = balance;
   out.leading = linear_nonzero(w, "n + 1", "c1");
@@ -335,15 +333,12 @@ closed = "2^n"
 )",
                            w);
   out.summand.region = w.region({"n", "k"});
-  out.summand.products = {product(one, {{w.fact("n + k"), 1},
-                                        {w.rfact("k"), 1},
-                                        {w.rfact("n"), 1},
-                                        {w.power("2", "-k"), 1}})};
+  out.summand.products = {product(
+      one, {{w.fact("n + k"), 1}, {w.rfact("k"), 1}, {w.rfact("n"), 1}, {w.power("2", "-k"), 1}})};
   proof::Telescoping t;
-  const proof::Product b = product(one, {{w.fact("n + k"), 1},
-                                         {w.rfact("k"), 1},
-                                         {w.rfact("n + 1"), 1},
-                                         {w.power("2", "-k"), 1}});
+  const proof::Product b = product(
+      one,
+      {{w.fact("n + k"), 1}, {w.rfact("k"), 1}, {w.rfact("n + 1"), 1}, {w.power("2", "-k"), 1}});
   t.base = {"B", b};
   t.region = w.region({"n", "k", "n - k"});
   t.low = w.affine("0");
@@ -377,8 +372,8 @@ closed = "2^n"
   out.closed->region = w.region({"n"});
   out.closed->products = {product(one, {{w.power("2", "n"), 1}})};
 
-  const proof::Product e = product(
-      one, {{w.fact("2*n"), 1}, {w.rfact("n + 1"), 2}, {w.power("2", "-n - 1"), 1}});
+  const proof::Product e =
+      product(one, {{w.fact("2*n"), 1}, {w.rfact("n + 1"), 2}, {w.power("2", "-n - 1"), 1}});
   const proof::Product two = product(one, {{w.power("2", "n"), 1}});
   proof::Balance balance;
   balance.id = "closed_recurrence";
@@ -430,17 +425,14 @@ x = { in = "rationals", not = ["-1"] }
   out.conditions.push_back({"c4", proof::ConditionKind::nonvanishing, "x + 1 != 0", "",
                             proof::Settled::given, "hypothesis x != -1"});
   const auto term_at = [&](const std::string& n) {
-    return product(one, {{w.fact(n), 1},
-                         {w.rfact("k"), 1},
-                         {w.rfact(n + " - k"), 1},
-                         {w.power("x", "k"), 1}});
+    return product(
+        one, {{w.fact(n), 1}, {w.rfact("k"), 1}, {w.rfact(n + " - k"), 1}, {w.power("x", "k"), 1}});
   };
   out.summand.products = {term_at("n")};
   proof::Telescoping t;
-  const proof::Product b = product(one, {{w.fact("n"), 1},
-                                         {w.rfact("k"), 1},
-                                         {w.rfact("n + 1 - k"), 1},
-                                         {w.power("x", "k"), 1}});
+  const proof::Product b = product(
+      one,
+      {{w.fact("n"), 1}, {w.rfact("k"), 1}, {w.rfact("n + 1 - k"), 1}, {w.power("x", "k"), 1}});
   t.base = {"B", b};
   t.region = w.region({"n", "k", "n + 1 - k"});
   t.low = w.affine("0");
@@ -473,13 +465,12 @@ x = { in = "rationals", not = ["-1"] }
   balance.id = "closed_recurrence";
   balance.region = w.region({"n"});
   balance.terms = squares_ends(w);
-  balance.terms.push_back(term(Origin::closed_form, "a_0 C(n)",
-                               over(w.factored(1, {{"x + 1", 1}}), c), 0));
+  balance.terms.push_back(
+      term(Origin::closed_form, "a_0 C(n)", over(w.factored(1, {{"x + 1", 1}}), c), 0));
   balance.terms.push_back(term(Origin::closed_form, "a_1 C(n+1)",
                                product(w.factored(-1, {}), {{w.power("x + 1", "n + 1"), 1}}), 0));
-  balance.groups = {{{"E1", c},
-                     {2, 3},
-                     {w.factored(1, {{"x + 1", 1}}), w.factored(-1, {{"x + 1", 1}})}}};
+  balance.groups = {
+      {{"E1", c}, {2, 3}, {w.factored(1, {{"x + 1", 1}}), w.factored(-1, {{"x + 1", 1}})}}};
   out.closed_recurrence = balance;
   out.leading = proof::Nonzero{};
   out.leading->condition = "c1";

@@ -1,5 +1,5 @@
-// Two whole proofs, written down by hand for the tests of the audit, and the small language in which
-// they are written.
+// Two whole proofs, written down by hand for the tests of the audit, and the small language in
+// which they are written.
 #pragma once
 
 #include <string>
@@ -44,7 +44,8 @@ using Atoms = std::vector<std::pair<proof::Atom, unsigned>>;
 [[nodiscard]] proof::Proof squares_proof();
 /// The same sum as a claimed recurrence: no closed form, a balance of the ends alone.
 [[nodiscard]] proof::Proof squares_recurrence_proof();
-/// sum over k = 0..n of binomial(n+k,k)/2^k = 2^n: an upper end that is not natural, one explicit point.
+/// sum over k = 0..n of binomial(n+k,k)/2^k = 2^n: an upper end that is not natural, one explicit
+/// point.
 [[nodiscard]] proof::Proof halves_proof();
 /// sum over k = 0..n of binomial(n,k) x^k = (x+1)^n for rational x, x != -1 excluded.
 [[nodiscard]] proof::Proof powers_proof();

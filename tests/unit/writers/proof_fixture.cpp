@@ -104,10 +104,12 @@ proof::Condition condition(std::string id, proof::ConditionKind kind, std::strin
 }
 
 proof::BalanceTerm balance_term(proof::BalanceTerm::Origin origin, std::string text,
-                                Product product) {
+                                Product product, Affine point = {}, unsigned shift = 0) {
   proof::BalanceTerm out;
   out.origin = origin;
   out.text = std::move(text);
+  out.point = std::move(point);
+  out.shift = shift;
   out.product = std::move(product);
   return out;
 }
@@ -135,7 +137,7 @@ proof::InitialValue value_one() {
   const Product one = product(times(1), {});
   using Origin = proof::BalanceTerm::Origin;
   out.balance.terms = {
-      similar_term(balance_term(Origin::value, "F(0, 0)", one), 0, times(1), one, {}),
+      similar_term(balance_term(Origin::value, "F(0, 0)", one, affine({0, 0}, 0)), 0, times(1), one, {}),
       similar_term(balance_term(Origin::closed_form, "right side at 0", product(times(-1), {})), 0, times(-1), one,
                    {})};
   out.balance.groups = {{{"E1", one}, {0, 1}, {times(1), times(-1)}}};
@@ -183,7 +185,8 @@ void squares_term(proof::Proof& out) {
                          product(times(1), {{fact({1, 0}, 0), 1},
                                             {rfact({0, 1}, 0), 1},
                                             {rfact({1, -1}, 0), 1}}),
-                         {"c1"}}};
+                         {"c1"},
+                         {}}};
   out.summand.products = {product(
       times(1), {{fact({1, 0}, 0), 2}, {rfact({0, 1}, 0), 2}, {rfact({1, -1}, 0), 2}})};
   out.summand.units = {{}};
@@ -192,7 +195,7 @@ void squares_term(proof::Proof& out) {
   out.closed->expression = out.claim->closed;
   out.closed->region.text = "n >= 0";
   out.closed->leaves = {{out.claim->closed, proof::LeafRule::binomial_factorials,
-                         product(times(1), {{fact({2, 0}, 0), 1}, {rfact({1, 0}, 0), 2}}), {"c2"}}};
+                         product(times(1), {{fact({2, 0}, 0), 1}, {rfact({1, 0}, 0), 2}}), {"c2"}, {}}};
   out.closed->products = {product(times(1), {{fact({2, 0}, 0), 1}, {rfact({1, 0}, 0), 2}})};
   out.closed->units = {{}};
 }
@@ -241,17 +244,18 @@ proof::Balance squares_closed() {
   const Product base = product(times(1), {{fact({2, 0}, 0), 1}, {rfact({1, 0}, 1), 2}});
   auto upper = balance_term(Origin::upper_end, "G(n, n + 2)",
                             product(times(1, {{linear(1, 0, 2), 2}, {linear(-1, 0, 1), 1}}),
-                                    {{fact({1, 0}, 0), 2}, {rfact({1, 0}, 2), 2}, {rfact({0, 0}, -1), 2}}));
+                                    {{fact({1, 0}, 0), 2}, {rfact({1, 0}, 2), 2}, {rfact({0, 0}, -1), 2}}),
+                            affine({1, 0}, 1));
   upper.zero = "c5";
   upper.zero_atom = rfact({0, 0}, -1);
-  auto lower = balance_term(Origin::lower_end, "G(n, 0)", product(times(0), {}));
+  auto lower = balance_term(Origin::lower_end, "G(n, 0)", product(times(0), {}), affine({0, 0}, 0));
   lower.zero = "polynomial factor";
   auto now = balance_term(Origin::closed_form, "a_0 C(n)",
                           product(times(2, {{linear(2, 0, 1), 1}}),
                                   {{fact({2, 0}, 0), 1}, {rfact({1, 0}, 0), 2}}));
   auto next = balance_term(Origin::closed_form, "a_1 C(n + 1)",
                            product(times(-1, {{linear(1, 0, 1), 1}}),
-                                   {{fact({2, 0}, 2), 1}, {rfact({1, 0}, 1), 2}}));
+                                   {{fact({2, 0}, 2), 1}, {rfact({1, 0}, 1), 2}}), {}, 1);
   const Factored share = times(2, {{linear(2, 0, 1), 1}, {linear(1, 0, 1), 2}});
   const Factored other = times(-2, {{linear(2, 0, 1), 1}, {linear(1, 0, 1), 2}});
   b.terms = {upper, lower,
@@ -322,17 +326,17 @@ proof::Balance halves_closed() {
   const Product two = product(times(1), {{power(2, {1, 0}, 0), 1}});
   const Factored share = times(4, {{linear(1, 0, 1), 1}});
   const Factored other = times(-4, {{linear(1, 0, 1), 1}});
-  auto lower = balance_term(Origin::lower_end, "G(n, 0)", product(times(0), {}));
+  auto lower = balance_term(Origin::lower_end, "G(n, 0)", product(times(0), {}), affine({0, 0}, 0));
   lower.zero = "polynomial factor";
   Product upper = end;
   upper.coefficient = other;
-  b.terms = {similar_term(balance_term(Origin::upper_end, "G(n, n + 1)", upper), 0, other, end, {}),
+  b.terms = {similar_term(balance_term(Origin::upper_end, "G(n, n + 1)", upper, affine({1, 0}, 0)), 0, other, end, {}),
              lower,
-             similar_term(explicit_term(
-                                       product(times(1), {{fact({2, 0}, 2), 1}, {rfact({1, 0}, 1), 2}, {power(2, {-1, 0}, -1), 1}})),
+             similar_term(balance_term(Origin::explicit_point, "a_1 F(n + 1, n + 1)",
+                                       product(times(1), {{fact({2, 0}, 2), 1}, {rfact({1, 0}, 1), 2}, {power(2, {-1, 0}, -1), 1}}), affine({1, 0}, 1), 1),
                           0, share, end, {}),
              similar_term(balance_term(Origin::closed_form, "a_0 C(n)", product(times(2), {{power(2, {1, 0}, 0), 1}})), 1, times(2), two, {}),
-             similar_term(balance_term(Origin::closed_form, "a_1 C(n + 1)", product(times(-1), {{power(2, {1, 0}, 1), 1}})), 1, times(-2), two, {})};
+             similar_term(balance_term(Origin::closed_form, "a_1 C(n + 1)", product(times(-1), {{power(2, {1, 0}, 1), 1}}), {}, 1), 1, times(-2), two, {})};
   b.groups = {{{"E1", end}, {0, 2}, {other, share}}, {{"E2", two}, {3, 4}, {times(2), times(-2)}}};
   return b;
 }
