@@ -145,19 +145,7 @@ class Attempter {
     ArgumentDraft& d = out_.draft;
     describe_right_side(facts);
     std::vector<TermDraft> ends = left_terms();
-    if (!as_equality_ || d.evidence.brought) {
-      std::vector<TermDraft> all = ends;
-      if (d.evidence.right_side)
-        for (TermDraft& t : right_side_terms(setting_, weight(), d.evidence.right_side->products))
-          all.push_back(std::move(t));
-      d.ends = balanced(std::move(all), facts);
-      if (!d.ends) return false;
-      if (!d.ends->holds()) {
-        out_.outcome = Attempt::Outcome::ends_fail;
-        return false;
-      }
-    }
-    if (!as_equality_) return true;
+    if (!as_equality_) return recurrence_balance(std::move(ends), facts);
     for (TermDraft& t : closed_terms(setting_, weight(), d.evidence.coefficients,
                                      terms_.closed->products))
       ends.push_back(std::move(t));
@@ -168,6 +156,17 @@ class Attempter {
       return false;
     }
     return true;
+  }
+
+  bool recurrence_balance(std::vector<TermDraft> terms, const Facts& facts) {
+    ArgumentDraft& d = out_.draft;
+    if (d.evidence.right_side)
+      for (TermDraft& t : right_side_terms(setting_, weight(), d.evidence.right_side->products))
+        terms.push_back(std::move(t));
+    d.ends = balanced(std::move(terms), facts);
+    if (!d.ends) return false;
+    if (!d.ends->holds()) out_.outcome = Attempt::Outcome::ends_fail;
+    return d.ends->holds();
   }
 
   /// b = what the ends give, class by class, over the weight.

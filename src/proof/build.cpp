@@ -190,9 +190,31 @@ class Builder {
         return proof_;
       }
     }
-    if (!equality) state_recurrence(brought);
-    const Attempt tried = attempt(*terms_, brought.draft, equality, options_.deadline);
-    return report(tried, equality);
+    if (equality) return equality_from(brought.draft);
+    state_recurrence(brought);
+    const Attempt tried = attempt(*terms_, brought.draft, false, options_.deadline);
+    return report(tried, false);
+  }
+
+  /// The author's recurrence is checked as a claim of its own, right side included; then the equality is
+  /// proved from it without its common factor, or from a recurrence that is found.
+  Proof equality_from(const EvidenceDraft& brought) {
+    const Attempt checked = attempt(*terms_, brought, false, options_.deadline);
+    if (checked.outcome == Attempt::Outcome::ends_fail ||
+        checked.outcome == Attempt::Outcome::initial_fails)
+      return report(checked, true);
+    EvidenceDraft reduced = brought;
+    reduced.right_side.reset();
+    Poly common(terms_->setting.ring);
+    for (const Poly& a : reduced.coefficients) common = gcd(common, a);
+    for (Poly& a : reduced.coefficients) a = a.divide(common).first;
+    if (reduced.certificate)
+      reduced.certificate = *reduced.certificate / RationalFunction(common);
+    const Attempt tried = attempt(*terms_, reduced, true, options_.deadline);
+    if (tried.outcome != Attempt::Outcome::stuck) return report(tried, true);
+    const Proof found = search_and_prove(true);
+    if (found.verdict != Verdict::undecided) return found;
+    return report(tried, true);
   }
 
   Proof answer_question() {

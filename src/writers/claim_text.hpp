@@ -18,7 +18,8 @@ namespace sumwright::writers {
 [[nodiscard]] std::string comparison_text(claim::Comparison comparison);
 
 /// What one exclusion says of the parameter: `x != -1/2`, `x is not a negative integer`.
-[[nodiscard]] std::string exclusion_text(const std::string& name, const claim::Exclusion& exclusion);
+[[nodiscard]] std::string exclusion_text(const std::string& name,
+                                         const claim::Exclusion& exclusion);
 
 /// The hypotheses of the theorem, in its order: exclusions, lower bounds, assumptions, `n >= from`.
 [[nodiscard]] std::vector<std::string> hypothesis_texts(const claim::Claim& claim);

@@ -1,4 +1,5 @@
-// Polynomials with rational coefficients for re-checking an obligation file: small, sparse, GMP only.
+// Polynomials with rational coefficients for re-checking an obligation file: small, sparse, GMP
+// only.
 //
 // Deliberately not the fast arithmetic that finds certificates: a checker does not rest on it.
 #pragma once

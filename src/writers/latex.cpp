@@ -108,8 +108,7 @@ constexpr std::string_view kEnvironment =
 
 std::vector<NamedText> latex_files(const proof::Proof& proof) {
   if (proof.verdict != proof::Verdict::established) return {};
-  const std::string body =
-      LatexDocument(proof, sha256(obligations_text(proof))).appendix();
+  const std::string body = LatexDocument(proof, sha256(obligations_text(proof))).appendix();
   const std::string appendix = std::string(kNotice) + std::string(kEnvironment) + body;
   const std::string standalone =
       std::string(kNotice) +

@@ -60,17 +60,20 @@ void LatexDocument::certificate() {
   if (!proof_.telescoping) return;
   head("The certificate");
   const std::string f = inline_tex(at('F', 0));
-  say(fmt::format("Let ${}$ be the summand{} and put\n", f,
-                  claim_.is_equality() ? ", let $" + inline_tex(of_running('S', 0)) + "$ be the sum," : ""));
+  say(fmt::format(
+      "Let ${}$ be the summand{} and put\n", f,
+      claim_.is_equality() ? ", let $" + inline_tex(of_running('S', 0)) + "$ be the sum," : ""));
   coefficient_list();
   const std::string method =
       proof_.evidence_brought ? "The recurrence was given with the claim. "
-      : proof_.order == 0 ? "The following was found by Gosper's algorithm for indefinite sums. "
-                          : "The following was found by Zeilberger's method of creative telescoping. ";
+      : proof_.order == 0
+          ? "The following was found by Gosper's algorithm for indefinite sums. "
+          : "The following was found by Zeilberger's method of creative telescoping. ";
   Formula left;
   for (std::size_t i = 0; i < proof_.telescoping->coefficients.size(); ++i) {
     const Formula function = at('F', static_cast<long>(i));
-    const Formula coefficient = piece(fmt::format("{}_{{{}}}({})", names_.letter('a'), i, running(0)), 2.8);
+    const Formula coefficient =
+        piece(fmt::format("{}_{{{}}}({})", names_.letter('a'), i, running(0)), 2.8);
     append_term(left, times(coefficient, function));
   }
   Formula right = at('G', 0, 1);
@@ -80,16 +83,21 @@ void LatexDocument::certificate() {
   const auto printed = expressions_.parsed(
       proof_.certificate_text.empty() ? "0" : proof_.certificate_text, symbol_names());
   if (printed) {
-    say("the rational function\n" + display(at('R', 0), printed->formula, label("certificate"), ""));
+    say("the rational function\n" +
+        display(at('R', 0), printed->formula, label("certificate"), ""));
   } else {
     say("a rational function $" + inline_tex(at('R', 0)) +
         "$ that is too long to be printed (it stands in \\texttt{obligations.txt} under "
-        "\\texttt{certificate}; its numerator is in essence the polynomial " + reference("numerator") + "),\n");
+        "\\texttt{certificate}; its numerator is in essence the polynomial " +
+        reference("numerator") + "),\n");
   }
   say("we have, after division by $" + f + "$, an identity of rational functions:\n");
   say(display(left, right, label("rational"), "."));
-  say("At single integer points its terms may have zero denominators. It is therefore not used there; "
-      "what is used is the polynomial equality " + reference("equality") + ", from which "
+  say("At single integer points its terms may have zero denominators. It is therefore not used "
+      "there; "
+      "what is used is the polynomial equality " +
+      reference("equality") +
+      ", from which "
       "denominators have been removed as follows.\n");
 }
 
@@ -111,7 +119,8 @@ void LatexDocument::base_term() {
   if (!weight_is_one()) {
     say(fmt::format("From here on, both sides of {} are multiplied by\n", reference("rational")));
     say(display(of_running('d', 0), values_.factored(t.weight.polynomial), "", ","));
-    say("and the factor is taken into $" + inline_tex(at('G', 0)) + "$. The factor " + nonzero_reason(t.weight) + ". ");
+    say("and the factor is taken into $" + inline_tex(at('G', 0)) + "$. The factor " +
+        nonzero_reason(t.weight) + ". ");
   }
   say(fmt::format("{} is an equality of numbers at all integers with {}:\n", laws(),
                   expressions_.mixed(t.region.text.empty() ? "no restriction" : t.region.text)));
@@ -126,8 +135,9 @@ void LatexDocument::pieces() {
   for (std::size_t j = 0; j < proof_.summand.products.size(); ++j) {
     const std::string tex = inline_tex(at('F', 0));
     const std::string letter = names_.letter('F');
-    const Formula name = piece(letter + "_{" + std::to_string(j + 1) + "}" + tex.substr(letter.size()),
-                               0.5 + width_of(at('F', 0)));
+    const Formula name =
+        piece(letter + "_{" + std::to_string(j + 1) + "}" + tex.substr(letter.size()),
+              0.5 + width_of(at('F', 0)));
     append_term(sum, name);
     rows.push_back({name, values_.product(proof_.summand.products[j])});
   }
@@ -148,10 +158,13 @@ void LatexDocument::equality() {
     left.clear();
     for (std::size_t i = 0; i < t.p.size(); ++i) {
       append_term(left, piece(fmt::format("{}_{{{}}}\\,{}_{{{}}}", names_.letter('a'), i,
-                                          names_.letter('p'), i), 2.4));
+                                          names_.letter('p'), i),
+                              2.4));
     }
-    say(fmt::format("Write ${0}_{{i}}$ for the factor of ${1}$ in the list above, ${0}_{{i}}\\,{1}$ being the "
-                    "term with ${2}+i$. ", names_.letter('p'), inline_tex(at('B', 0)), running(0)));
+    say(fmt::format(
+        "Write ${0}_{{i}}$ for the factor of ${1}$ in the list above, ${0}_{{i}}\\,{1}$ being the "
+        "term with ${2}+i$. ",
+        names_.letter('p'), inline_tex(at('B', 0)), running(0)));
   }
   if (!weight_is_one()) {
     left = side_by_side(values_.factored(t.weight.polynomial, false),
@@ -175,7 +188,8 @@ void LatexDocument::equality() {
   for (std::size_t i = 0; i < proof_.symbols.size(); ++i) {
     const long degree = degree_in(t.normal_form, i);
     if (degree < 1) continue;
-    degrees.push_back(fmt::format("${}$ in ${}$", degree, names_.symbol(proof_.symbols[i].name).tex));
+    degrees.push_back(
+        fmt::format("${}$ in ${}$", degree, names_.symbol(proof_.symbols[i].name).tex));
   }
   if (size.terms == 0) {
     say("Both sides are the zero polynomial. ");
@@ -192,13 +206,15 @@ void LatexDocument::equality() {
                     degrees.empty() ? "" : ", of degree ", enumeration(degrees)));
   }
   if (values_.abbreviated() > 0) {
-    say(fmt::format("Dots stand for terms that are not printed: all polynomials are in full in the "
+    say(
+        fmt::format("Dots stand for terms that are not printed: all polynomials are in full in the "
                     "file \\texttt{{obligations.txt}}, whose SHA-256 is given at the end. "));
   }
   Formula sum;
   for (std::size_t i = 0; i < t.coefficients.size(); ++i) {
-    append_term(sum, times(piece(fmt::format("{}_{{{}}}({})", names_.letter('a'), i, running(0)), 2.8),
-                           at('F', static_cast<long>(i))));
+    append_term(sum,
+                times(piece(fmt::format("{}_{{{}}}({})", names_.letter('a'), i, running(0)), 2.8),
+                      at('F', static_cast<long>(i))));
   }
   if (!weight_is_one()) {
     Formula d = of_running('d', 0);
@@ -207,8 +223,10 @@ void LatexDocument::equality() {
   }
   Formula difference = at('G', 0, 1);
   append(difference, piece("-" + inline_tex(at('G', 0)), width_of(at('G', 0)) + 1.25));
-  say(fmt::format("This is an equality of polynomials, so no point is an exception to it. Multiplied by "
-                  "${}$ it gives\n", inline_tex(at('B', 0))));
+  say(fmt::format(
+      "This is an equality of polynomials, so no point is an exception to it. Multiplied by "
+      "${}$ it gives\n",
+      inline_tex(at('B', 0))));
   say(display(sum, difference, label("telescoping"), ""));
   say("for all integers with " +
       expressions_.mixed(t.region.text.empty() ? "no restriction" : t.region.text) + ".\n");
@@ -237,8 +255,9 @@ Formula LatexDocument::range_sum(const proof::RangeStep& step) {
                       4 + width_of(at('F', shift)));
   const auto add = [&](const proof::Affine& affine, long by) {
     const Formula point = bound(affine, by);
-    append_term(out, piece(fmt::format("{}({},{})", names_.letter('F'), running(shift), inline_tex(point)),
-                           4 + width_of(point) + width_of(of_running('F', shift)) - 2));
+    append_term(
+        out, piece(fmt::format("{}({},{})", names_.letter('F'), running(shift), inline_tex(point)),
+                   4 + width_of(point) + width_of(of_running('F', shift)) - 2));
   };
   const auto add_points = [&](unsigned points, const proof::Affine& affine, long sign) {
     for (unsigned j = 1; j <= points; ++j) {
@@ -261,12 +280,13 @@ void LatexDocument::summation() {
   proof::Affine beyond = t.high;
   ++beyond.constant;
   head("Summation");
-  say(fmt::format("Let ${}\\ge {}$ and sum {} over ${}\\le {}\\le {}$. The right side telescopes to "
-                  "${}({},{})-{}({},{})$. For the left side,\n",
-                  running(0), proof_.threshold, reference("telescoping"),
-                  inline_tex(values_.affine(t.low)), k, inline_tex(values_.affine(t.high)),
-                  names_.letter('G'), running(0), inline_tex(values_.affine(beyond)),
-                  names_.letter('G'), running(0), inline_tex(values_.affine(t.low))));
+  say(fmt::format(
+      "Let ${}\\ge {}$ and sum {} over ${}\\le {}\\le {}$. The right side telescopes to "
+      "${}({},{})-{}({},{})$. For the left side,\n",
+      running(0), proof_.threshold, reference("telescoping"), inline_tex(values_.affine(t.low)), k,
+      inline_tex(values_.affine(t.high)), names_.letter('G'), running(0),
+      inline_tex(values_.affine(beyond)), names_.letter('G'), running(0),
+      inline_tex(values_.affine(t.low))));
   std::vector<DisplayRow> rows;
   std::string reasons;
   for (const proof::RangeStep& step : proof_.ranges) {
@@ -274,16 +294,17 @@ void LatexDocument::summation() {
     rows.push_back({of_running('S', shift), range_sum(step)});
     const auto reason = [&](const std::optional<proof::Vanishing>& vanishing, const char* where) {
       if (!vanishing) return;
-      reasons += fmt::format("\\item ${}$ is $0$ {} this range, {}.\n", inline_tex(at('F', shift)), where,
-                             vanishing_clause(*vanishing));
+      reasons += fmt::format("\\item ${}$ is $0$ {} this range, {}.\n", inline_tex(at('F', shift)),
+                             where, vanishing_clause(*vanishing));
     };
     reason(step.below, "below");
     reason(step.above, "above");
   }
   say(display_list(rows, "."));
   if (reasons.empty()) return;
-  say("The claim's own ends and these differ by terms that vanish:\n\\begin{itemize}\\raggedright\n" + reasons +
-      "\\end{itemize}\n");
+  say("The claim's own ends and these differ by terms that "
+      "vanish:\n\\begin{itemize}\\raggedright\n" +
+      reasons + "\\end{itemize}\n");
 }
 
 }  // namespace sumwright::writers

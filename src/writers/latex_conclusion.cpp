@@ -1,4 +1,5 @@
-// The end of the proof: boundary terms, closed form, leading coefficient, initial values, induction.
+// The end of the proof: boundary terms, closed form, leading coefficient, initial values,
+// induction.
 #include <fmt/format.h>
 
 #include "writers/latex_document.hpp"
@@ -18,7 +19,8 @@ constexpr std::size_t kListed = 12;  // initial values and terms shown one by on
 
 std::string LatexDocument::zero_reason(const proof::BalanceTerm& term) {
   if (!term.zero_atom) return "a polynomial factor is $0$";
-  return "${1/" + inline_tex(values_.atom(*term.zero_atom)) + "}=0$ (" + latex_text(*term.zero) + ")";
+  return "${1/" + inline_tex(values_.atom(*term.zero_atom)) + "}=0$ (" + latex_text(*term.zero) +
+         ")";
 }
 
 // The term in the letters of the argument, with its sign: what `product` is the value of.
@@ -33,17 +35,21 @@ Formula LatexDocument::term_label(const proof::BalanceTerm& term, std::optional<
   const std::string n = at ? std::to_string(*at + shift) : running(shift);
   const std::string f = letter('F', proof_.summand.products.size());
   const std::string point = inline_tex(values_.affine(term.point));
-  const std::string f_value = has_index() ? fmt::format("{}({},{})", f, n, point) : fmt::format("{}({})", f, n);
+  const std::string f_value =
+      has_index() ? fmt::format("{}({},{})", f, n, point) : fmt::format("{}({})", f, n);
   const std::string a = fmt::format("{}_{{{}}}{}\\,", names_.letter('a'), term.shift,
                                     at ? "(" + std::to_string(*at) + ")" : "");
   const bool weighted = !at && proof_.telescoping && !weight_is_one();
   const std::string d = weighted ? names_.letter('d') + "(" + running(0) + ")\\," : "";
-  const auto label = [](const std::string& tex) { return piece(tex, 0.42 * static_cast<double>(tex.size())); };
+  const auto label = [](const std::string& tex) {
+    return piece(tex, 0.42 * static_cast<double>(tex.size()));
+  };
   switch (term.origin) {
     case Origin::upper_end: {
       proof::Affine beyond = term.point;
       ++beyond.constant;
-      return label(fmt::format("{}({},{})", names_.letter('G'), n, inline_tex(values_.affine(beyond))));
+      return label(
+          fmt::format("{}({},{})", names_.letter('G'), n, inline_tex(values_.affine(beyond))));
     }
     case Origin::lower_end:
       return label(fmt::format("-{}({},{})", names_.letter('G'), n, point));
@@ -52,7 +58,9 @@ Formula LatexDocument::term_label(const proof::BalanceTerm& term, std::optional<
     case Origin::value:
       return label((claim_.is_equality() ? "" : a) + f_value);
     case Origin::right_side:
-      return label(fmt::format("-{}{}({})", d, letter('b', proof_.right_side ? proof_.right_side->products.size() : 1), n));
+      return label(
+          fmt::format("-{}{}({})", d,
+                      letter('b', proof_.right_side ? proof_.right_side->products.size() : 1), n));
     case Origin::closed_form:
       break;
   }
@@ -107,8 +115,10 @@ void LatexDocument::balance_group(const proof::Balance& balance, const proof::Ba
 void LatexDocument::balance(const proof::Balance& balance, std::optional<long> at) {
   balance_zeros(balance, at);
   if (balance.groups.size() > 1) {
-    say(fmt::format("The other terms fall into {} classes of similar terms, each of which adds up to $0$ "
-                    "by itself. ", balance.groups.size()));
+    say(fmt::format(
+        "The other terms fall into {} classes of similar terms, each of which adds up to $0$ "
+        "by itself. ",
+        balance.groups.size()));
   }
   for (const proof::BalanceGroup& group : balance.groups) balance_group(balance, group, at);
 }
@@ -117,9 +127,11 @@ void LatexDocument::ends() {
   if (!proof_.ends) return;
   const bool one = !proof_.telescoping || weight_is_one();
   head("The ends of the range");
-  say(fmt::format("It remains to collect the values of ${}$ at the ends and the single terms above, and to "
-                  "compare them with the right side of {}{}. ", names_.letter('G'), reference("claim"),
-                  one ? "" : " times $" + inline_tex(of_running('d', 0)) + "$"));
+  say(fmt::format(
+      "It remains to collect the values of ${}$ at the ends and the single terms above, and to "
+      "compare them with the right side of {}{}. ",
+      names_.letter('G'), reference("claim"),
+      one ? "" : " times $" + inline_tex(of_running('d', 0)) + "$"));
   say("Written on one side, they add up to $0$, as follows. ");
   balance(*proof_.ends);
 }
@@ -132,21 +144,24 @@ void LatexDocument::closed_form() {
   say(fmt::format("Write ${}$ for the right side of {}; in factorials and powers,\n",
                   inline_tex(of_running('C', 0)), reference("claim")));
   Formula closed;
-  for (const proof::Product& product : proof_.closed ? proof_.closed->products : std::vector<proof::Product>{}) {
+  for (const proof::Product& product :
+       proof_.closed ? proof_.closed->products : std::vector<proof::Product>{}) {
     append_term(closed, values_.product(product));
   }
   say(display(of_running('C', 0), closed, "", "."));
   Formula sum;
   for (std::size_t i = 0; i < proof_.telescoping->coefficients.size(); ++i) {
     const auto shift = static_cast<long>(i);
-    append_term(sum, piece(fmt::format("{}_{{{}}}({})\\bigl({}({})-{}({})\\bigr)", names_.letter('a'), i,
-                                       running(0), s, running(shift), c, running(shift)),
-                           8.5 + (i == 0 ? 0 : 3)));
+    append_term(sum,
+                piece(fmt::format("{}_{{{}}}({})\\bigl({}({})-{}({})\\bigr)", names_.letter('a'), i,
+                                  running(0), s, running(shift), c, running(shift)),
+                      8.5 + (i == 0 ? 0 : 3)));
   }
   say("We claim that\n" + display(sum, piece("0", 0.52), label("difference"), ""));
-  say(fmt::format("for ${}\\ge {}$. By the summation above, this says that the values of ${}$ at the ends, the "
-                  "single terms and the terms with ${}$ add up to $0$. ",
-                  running(0), proof_.threshold, names_.letter('G'), c));
+  say(fmt::format(
+      "for ${}\\ge {}$. By the summation above, this says that the values of ${}$ at the ends, the "
+      "single terms and the terms with ${}$ add up to $0$. ",
+      running(0), proof_.threshold, names_.letter('G'), c));
   balance(*proof_.closed_recurrence);
 }
 
@@ -165,7 +180,9 @@ std::string LatexDocument::nonzero_reason(const proof::Nonzero& nonzero) {
         for (std::size_t i = 0; i < factor.shift.size() && i < proof_.symbols.size(); ++i) {
           if (factor.shift[i] == 0 || proof_.symbols[i].name.empty()) continue;
           const std::string name = names_.symbol(proof_.symbols[i].name).tex;
-          moved.push_back(fmt::format("${}{}{}$", name, factor.shift[i] < 0 ? "" : "-", factor.shift[i] < 0 ? "+" + std::to_string(-factor.shift[i]) : std::to_string(factor.shift[i])));
+          moved.push_back(fmt::format("${}{}{}$", name, factor.shift[i] < 0 ? "" : "-",
+                                      factor.shift[i] < 0 ? "+" + std::to_string(-factor.shift[i])
+                                                          : std::to_string(factor.shift[i])));
         }
         reason += "because it is a polynomial ";
         if (!moved.empty()) reason += "in " + enumeration(moved) + " ";
@@ -182,7 +199,8 @@ std::string LatexDocument::nonzero_reason(const proof::Nonzero& nonzero) {
     reasons.push_back(reason);
   }
   if (reasons.empty()) return "is a nonzero constant";
-  const std::string id = nonzero.condition.empty() ? "" : " (" + latex_text(nonzero.condition) + ")";
+  const std::string id =
+      nonzero.condition.empty() ? "" : " (" + latex_text(nonzero.condition) + ")";
   return "is not zero: " + enumeration(reasons) + id;
 }
 
@@ -205,8 +223,9 @@ void LatexDocument::initial_values() {
     } else if (shown.size() < kListed) {
       const mpq_class& v = *value.value;
       const std::string text = v.get_str();
-      shown.push_back(text.size() > 40 ? fmt::format("${}={}$", running(0), value.at)
-                                       : fmt::format("${}$ at ${}={}$", text, running(0), value.at));
+      shown.push_back(text.size() > 40
+                          ? fmt::format("${}={}$", running(0), value.at)
+                          : fmt::format("${}$ at ${}={}$", text, running(0), value.at));
     }
   }
   if (claim_.is_equality()) {
@@ -224,8 +243,9 @@ void LatexDocument::initial_values() {
   say(".\n");
   for (const proof::InitialValue& value : proof_.initial) {
     if (value.value || value.balance.groups.empty()) continue;
-    say(fmt::format("At ${}={}$ the sum has the terms below; with the right side they add up to $0$. ",
-                    running(0), value.at));
+    say(fmt::format(
+        "At ${}={}$ the sum has the terms below; with the right side they add up to $0$. ",
+        running(0), value.at));
     balance(value.balance, value.at);
   }
 }
@@ -234,24 +254,27 @@ void LatexDocument::conclusion() {
   head("Conclusion");
   const std::string n = running(0);
   if (!claim_.is_equality()) {
-    say(fmt::format("This proves {} for ${}\\ge {}$.{}\n", reference("claim"), n, proof_.threshold,
-                    proof_.initial.empty() ? "" : " For smaller values it has been verified directly."));
+    say(fmt::format(
+        "This proves {} for ${}\\ge {}$.{}\n", reference("claim"), n, proof_.threshold,
+        proof_.initial.empty() ? "" : " For smaller values it has been verified directly."));
     return;
   }
   if (proof_.order == 0) {
-    say(fmt::format("Since the coefficient is not zero, {} gives {} for ${}\\ge {}$.{}\n",
-                    reference("difference"), reference("claim"), n, proof_.threshold,
-                    proof_.initial.empty() ? "" : " For smaller values it has been computed directly."));
+    say(fmt::format(
+        "Since the coefficient is not zero, {} gives {} for ${}\\ge {}$.{}\n",
+        reference("difference"), reference("claim"), n, proof_.threshold,
+        proof_.initial.empty() ? "" : " For smaller values it has been computed directly."));
     return;
   }
   const long values = static_cast<long>(proof_.order);
-  say(fmt::format("The difference of the two sides of {} satisfies {}, whose leading coefficient is not zero "
-                  "for ${}\\ge {}$, and vanishes for ${}$. By induction it vanishes for every ${}\\ge {}$.\n",
-                  reference("claim"), reference("difference"), n, proof_.threshold,
-                  proof_.threshold + values - 1 == proof_.from
-                      ? fmt::format("{}={}", n, proof_.from)
-                      : fmt::format("{}\\le {}\\le {}", proof_.from, n, proof_.threshold + values - 1),
-                  n, proof_.from));
+  say(fmt::format(
+      "The difference of the two sides of {} satisfies {}, whose leading coefficient is not zero "
+      "for ${}\\ge {}$, and vanishes for ${}$. By induction it vanishes for every ${}\\ge {}$.\n",
+      reference("claim"), reference("difference"), n, proof_.threshold,
+      proof_.threshold + values - 1 == proof_.from
+          ? fmt::format("{}={}", n, proof_.from)
+          : fmt::format("{}\\le {}\\le {}", proof_.from, n, proof_.threshold + values - 1),
+      n, proof_.from));
 }
 
 }  // namespace sumwright::writers

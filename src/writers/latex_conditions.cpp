@@ -13,7 +13,8 @@ namespace {
 [[nodiscard]] std::string row(const std::string& id, const std::string& kind,
                               const std::string& statement, const std::string& settled) {
   const auto cell = [](double width, const std::string& text) {
-    return fmt::format("\\parbox[t]{{{:.2f}\\textwidth}}{{\\raggedright\\strut {}\\strut}}", width, text);
+    return fmt::format("\\parbox[t]{{{:.2f}\\textwidth}}{{\\raggedright\\strut {}\\strut}}", width,
+                       text);
   };
   return "\\noindent" + cell(0.07, id) + "\\hspace{.01\\textwidth}%\n" + cell(0.19, kind) +
          "\\hspace{.01\\textwidth}%\n" + cell(0.43, statement) + "\\hspace{.01\\textwidth}%\n" +
@@ -44,13 +45,16 @@ void LatexDocument::conditions() {
 
 void LatexDocument::trust() {
   head("What has been proved, and what is trusted");
-  say("The argument above is complete but for the expansion of polynomials, which any computer algebra "
+  say("The argument above is complete but for the expansion of polynomials, which any computer "
+      "algebra "
       "system can repeat, and the linear inequalities in the table. ");
   say("It is accompanied by a script for the proof assistant Coq: the theorem \\texttt{claim} in "
       "\\texttt{coq/Claim.v} states the claim over an arbitrary field of characteristic zero");
-  say(", in a vocabulary (binomial coefficients, factorials, finite sums) that is defined in a file of one "
+  say(", in a vocabulary (binomial coefficients, factorials, finite sums) that is defined in a "
+      "file of one "
       "or two pages, and uses no axioms. Whoever runs Coq on it trusts Coq's kernel and that this "
-      "statement says what the theorem says; neither the program that wrote the script nor these pages "
+      "statement says what the theorem says; neither the program that wrote the script nor these "
+      "pages "
       "have to be trusted. ");
   say("The same obligations, with every polynomial in full, are in the text file "
       "\\texttt{obligations.txt} with SHA-256\n");

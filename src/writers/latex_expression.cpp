@@ -67,8 +67,9 @@ ExpressionFormula LatexExpressions::quotient(const Expression& expression) const
     const bool negative = starts_with_minus(factor);  // of a product: of the whole fraction
     if (negative) factor.front().tex.erase(0, 1);
     out.tall = true;
-    out.formula = piece(std::string(negative ? "-" : "") + "\\frac{1}{" + inline_tex(below) + "}\\,",
-                        width_of(below) + 1.4);
+    out.formula =
+        piece(std::string(negative ? "-" : "") + "\\frac{1}{" + inline_tex(below) + "}\\,",
+              width_of(below) + 1.4);
     if (starts_with_digit(factor)) prepend_tex(factor, "\\cdot ", 0.8);
     append(out.formula, factor, 1);
     return out;
@@ -105,8 +106,8 @@ ExpressionFormula LatexExpressions::binary(const Expression& expression) const {
   }
   if (starts_with_digit(right.formula)) {
     prepend_tex(right.formula, "\\cdot ", 0.8);
-  } else if (out.tall || (u.operation == Operation::symbol &&
-                          inline_tex(left.formula).starts_with("\\math"))) {
+  } else if (out.tall ||
+             (u.operation == Operation::symbol && inline_tex(left.formula).starts_with("\\math"))) {
     prepend_tex(right.formula, "\\,", 0.2);
   }
   right.formula.front().product = true;
@@ -148,10 +149,12 @@ ExpressionFormula LatexExpressions::call(const Expression& expression) const {
     out.formula = single(nested ? bracketed(formula(u)) : at_least(u, Strength::primary));
     const Formula length = formula(*expression.children[1]);
     const std::string line = expression.name == "rising" ? "\\overline" : "\\underline";
-    append_tex(out.formula, "^{" + line + "{" + inline_tex(length) + "}}", kScript * width_of(length) + 0.1);
+    append_tex(out.formula, "^{" + line + "{" + inline_tex(length) + "}}",
+               kScript * width_of(length) + 0.1);
     out.strength = Strength::power;
   } else if (expression.name == "floor") {
-    out.formula = piece("\\lfloor " + inline_tex(formula(u)) + "\\rfloor ", width_of(formula(u)) + 1);
+    out.formula =
+        piece("\\lfloor " + inline_tex(formula(u)) + "\\rfloor ", width_of(formula(u)) + 1);
   } else {
     Formula inside;
     for (const claim::ExpressionPtr& child : expression.children) {
@@ -223,8 +226,9 @@ Formula LatexExpressions::sum(const claim::Sum& sum) const {
     const Formula high = bound(range.high);
     const double width =
         kScript * std::max(index.width + 0.8 + width_of(low), width_of(high)) + 0.5;
-    append(out, piece("\\sum_{" + index.tex + "=" + inline_tex(low) + "}^{" + inline_tex(high) + "} ",
-                      std::max(width, 1.7)));
+    append(out,
+           piece("\\sum_{" + index.tex + "=" + inline_tex(low) + "}^{" + inline_tex(high) + "} ",
+                 std::max(width, 1.7)));
   }
   Formula summand = formula(*sum.summand, !sum.over.empty());
   append(out, summand, out.empty() ? 0 : 1);

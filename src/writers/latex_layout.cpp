@@ -13,8 +13,8 @@ namespace sumwright::writers {
 namespace {
 
 constexpr double kRelation = 1.4;
-constexpr double kIndent = 2.2;       // continuation lines: \quad, and a sign
-constexpr double kShortLeft = 9.0;    // left sides up to this width align what follows
+constexpr double kIndent = 2.2;          // continuation lines: \quad, and a sign
+constexpr double kShortLeft = 9.0;       // left sides up to this width align what follows
 constexpr std::size_t kPageBreaks = 10;  // displays of more lines may be broken over pages
 
 class LineFiller {
@@ -81,7 +81,8 @@ class LineFiller {
     LineFiller filler(room - left_width - kRelation, room - left_width - kRelation - kIndent);
     const auto lines = filler.fill(right);
     for (std::size_t i = 0; i < lines.size(); ++i) {
-      rows.push_back(i == 0 ? inline_tex(left) + " ={}& " + first_line(lines[i]) : "&\\quad " + lines[i]);
+      rows.push_back(i == 0 ? inline_tex(left) + " ={}& " + first_line(lines[i])
+                            : "&\\quad " + lines[i]);
     }
     return rows;
   }

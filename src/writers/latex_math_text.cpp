@@ -1,7 +1,7 @@
 // From the short texts of a proof (conditions, regions, names of terms) to mathematics and words.
 //
-// Words that are no symbols and no letters of the argument stay words; the rest goes between dollars,
-// in pieces that end at commas, so that lines can be broken there.
+// Words that are no symbols and no letters of the argument stay words; the rest goes between
+// dollars, in pieces that end at commas, so that lines can be broken there.
 #include <algorithm>
 #include <array>
 #include <string_view>
@@ -179,8 +179,8 @@ std::string LatexExpressions::mixed(const std::string& text) const {
     if (token.kind == Token::Kind::math) {
       if (math.empty() && token.blank_before && !out.empty()) out += ' ';
       // Two names in a row are a product only where the text says so.
-      if (!math.empty() && token.blank_before && is_letter(token.tex[0]) &&
-          !math.ends_with(' ') && (is_letter(math.back()) || is_digit(math.back()) || math.back() == '}')) {
+      if (!math.empty() && token.blank_before && is_letter(token.tex[0]) && !math.ends_with(' ') &&
+          (is_letter(math.back()) || is_digit(math.back()) || math.back() == '}')) {
         math += "\\,";
       }
       math += token.tex;
@@ -203,7 +203,8 @@ Formula LatexExpressions::math(const std::string& text) const {
   for (const Token& token : Scanner(names_, text).scan()) {
     const bool other = token.kind == Token::Kind::other;
     const std::string& before = out.back().tex;
-    const bool names = !before.empty() && (is_letter(before.back()) || is_digit(before.back()) || before.back() == '}');
+    const bool names = !before.empty() && (is_letter(before.back()) || is_digit(before.back()) ||
+                                           before.back() == '}');
     if (token.blank_before && names && is_letter(token.tex[0])) append_tex(out, "\\,", 0.2);
     append_tex(out, other ? "\\text{" + token.tex + "}" : token.tex, token.width);
   }

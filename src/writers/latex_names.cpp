@@ -13,10 +13,10 @@ namespace sumwright::writers {
 namespace {
 
 constexpr std::array<std::string_view, 35> kGreek = {
-    "alpha", "beta",  "gamma",  "delta", "epsilon", "zeta",  "eta",     "theta", "iota",
-    "kappa", "lambda", "mu",    "nu",    "xi",      "pi",    "rho",     "sigma", "tau",
-    "upsilon", "phi", "chi",    "psi",   "omega",   "Gamma", "Delta",   "Theta", "Lambda",
-    "Xi",    "Pi",    "Sigma",  "Upsilon", "Phi",   "Psi",   "Omega",   "ell"};
+    "alpha",   "beta",   "gamma", "delta",   "epsilon", "zeta",  "eta",   "theta", "iota",
+    "kappa",   "lambda", "mu",    "nu",      "xi",      "pi",    "rho",   "sigma", "tau",
+    "upsilon", "phi",    "chi",   "psi",     "omega",   "Gamma", "Delta", "Theta", "Lambda",
+    "Xi",      "Pi",     "Sigma", "Upsilon", "Phi",     "Psi",   "Omega", "ell"};
 constexpr std::size_t kLongest = 24;
 
 [[nodiscard]] bool is_digit(char c) { return c >= '0' && c <= '9'; }
@@ -55,7 +55,7 @@ constexpr std::size_t kLongest = 24;
     const bool plain = !index.empty() && index.find('_') == std::string_view::npos;
     if (plain) {
       const bool all_digits = std::all_of(index.begin(), index.end(), is_digit);
-      const std::string shown = all_digits ? std::string(index)
+      const std::string shown = all_digits              ? std::string(index)
                                 : single(index).empty() ? word(index)
                                                         : single(index);
       return {head + "_{" + shown + "}", 0.66 + 0.45 * static_cast<double>(index.size()), 0, false};
@@ -87,16 +87,16 @@ LatexNames::LatexNames(const claim::Claim& claim) {
 
 void LatexNames::add(const std::string& name) {
   if (name.empty() || symbols_.contains(name)) return;
-  const std::string shown =
-      name.size() <= kLongest ? name : name.substr(0, kLongest - 4);
-  Piece candidate = name.size() <= kLongest ? pretty(name)
-                                            : Piece{word(shown) + "_{\\ldots}", 14.0, 0, false};
+  const std::string shown = name.size() <= kLongest ? name : name.substr(0, kLongest - 4);
+  Piece candidate =
+      name.size() <= kLongest ? pretty(name) : Piece{word(shown) + "_{\\ldots}", 14.0, 0, false};
   const auto clashes = [&](const Piece& piece) {
     return std::any_of(symbols_.begin(), symbols_.end(),
                        [&](const auto& entry) { return looks_like(entry.second, piece); });
   };
   if (clashes(candidate)) {
-    candidate = {"\\mathtt{" + escaped(shown) + "}", 0.53 * static_cast<double>(shown.size()), 0, false};
+    candidate = {"\\mathtt{" + escaped(shown) + "}", 0.53 * static_cast<double>(shown.size()), 0,
+                 false};
     if (name.size() > kLongest || clashes(candidate)) {
       candidate.tex += "_{" + std::to_string(symbols_.size()) + "}";
       candidate.width += 1;

@@ -24,8 +24,8 @@ constexpr double kScript = 0.75;  // size of exponents
 }
 
 [[nodiscard]] bool is_zero(const proof::Affine& a) {
-  return a.constant == 0 && std::all_of(a.coefficients.begin(), a.coefficients.end(),
-                                        [](long c) { return c == 0; });
+  return a.constant == 0 &&
+         std::all_of(a.coefficients.begin(), a.coefficients.end(), [](long c) { return c == 0; });
 }
 
 // One symbol, or one nonnegative number: needs no brackets.
@@ -64,7 +64,8 @@ Formula LatexValues::interval(const proof::Atom& value) {
   }
   Formula out = piece(inline_tex(base), width_of(base));
   const Formula exponent = affine(length);
-  append_tex(out, "^{\\overline{" + inline_tex(exponent) + "}}", kScript * width_of(exponent) + 0.1);
+  append_tex(out, "^{\\overline{" + inline_tex(exponent) + "}}",
+             kScript * width_of(exponent) + 0.1);
   return out;
 }
 
@@ -125,7 +126,8 @@ Formula LatexValues::product(const proof::Product& value) {
   if (value.coefficient.constant == 0) return piece("0", 0.52);
   Fraction fraction;
   for (const auto& [atom, exponent] : value.atoms) add_atom(fraction, atom, exponent);
-  const bool alone = value.atoms.size() == 1 || (value.atoms.size() == 2 && !fraction.above.empty());
+  const bool alone =
+      value.atoms.size() == 1 || (value.atoms.size() == 2 && !fraction.above.empty());
   for (const auto& [atom, exponent] : value.atoms) {  // a sum alone below needs no brackets
     if (alone && exponent == 1 && atom.kind == proof::AtomKind::reciprocal) {
       const Formula sum = polynomial(atom.base);
@@ -150,7 +152,9 @@ Formula LatexValues::product(const proof::Product& value) {
   const double width = std::max(width_of(fraction.above), width_of(fraction.below)) + 0.4;
   if (width <= kNumberedRoom - 9) {
     if (!out.empty() && !unit) append_tex(out, "\\,", 0.2);
-    append(out, piece("\\frac{" + inline_tex(fraction.above) + "}{" + inline_tex(fraction.below) + "}", width));
+    append(out,
+           piece("\\frac{" + inline_tex(fraction.above) + "}{" + inline_tex(fraction.below) + "}",
+                 width));
     return out;
   }
   Formula wide = fraction.above;  // too wide for a bar

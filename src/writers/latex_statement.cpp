@@ -36,7 +36,8 @@ namespace {
 }  // namespace
 
 void LatexDocument::opening() {
-  say(fmt::format("\\section{{{}}}\\label{{{}}}\n", latex_text(claim_.title, 200), label("section")));
+  say(fmt::format("\\section{{{}}}\\label{{{}}}\n", latex_text(claim_.title, 200),
+                  label("section")));
   const claim::Record& record = claim_.record;
   std::vector<std::string> authors;
   for (std::size_t i = 0; i < record.authors.size() && i < 20; ++i) {
@@ -52,7 +53,8 @@ void LatexDocument::opening() {
   if (!text.ends_with('.')) text += '.';
   bool ragged = has_long_word(record.source);
   for (const std::string& author : record.authors) ragged = ragged || has_long_word(author);
-  say("{" + std::string(ragged ? "\\raggedright " : "\\emergencystretch2em ") + text + "\\par}\n\n");
+  say("{" + std::string(ragged ? "\\raggedright " : "\\emergencystretch2em ") + text +
+      "\\par}\n\n");
 }
 
 std::string LatexDocument::parameter_sentence() const {
@@ -67,15 +69,16 @@ std::string LatexDocument::parameter_sentence() const {
         excluded.push_back(expressions_.mixed(exclusion_text(parameter.name, exclusion)));
       }
     } else if (parameter.at_least) {
-      integers.push_back(expressions_.mixed(parameter.name + " >= " + parameter.at_least->get_str()));
+      integers.push_back(
+          expressions_.mixed(parameter.name + " >= " + parameter.at_least->get_str()));
     } else {
       integers.push_back(name);
     }
   }
   std::string out;
   if (!rationals.empty()) {
-    out += fmt::format("Let {} be {} of a field of characteristic zero{}{}. ", enumeration(rationals),
-                       rationals.size() == 1 ? "an element" : "elements",
+    out += fmt::format("Let {} be {} of a field of characteristic zero{}{}. ",
+                       enumeration(rationals), rationals.size() == 1 ? "an element" : "elements",
                        excluded.empty() ? "" : ", where ", enumeration(excluded));
   }
   if (!integers.empty()) {
@@ -94,8 +97,8 @@ std::string LatexDocument::hypotheses() const {
                                                          to_text(*assumption.right))));
   }
   if (!assumptions.empty()) out += "Assume that " + enumeration(assumptions) + ". ";
-  const std::string range = fmt::format("every integer ${}\\ge {}$", names_.symbol(claim_.running).tex,
-                                        claim_.from.get_str());
+  const std::string range = fmt::format("every integer ${}\\ge {}$",
+                                        names_.symbol(claim_.running).tex, claim_.from.get_str());
   return out + (out.empty() ? "For " : "Then, for ") + range;
 }
 
@@ -116,8 +119,8 @@ void LatexDocument::statement_display() {
   const Formula sum = expressions_.sum(claim_.sum);
   if (claim_.is_equality()) {
     say(",\n");
-    const Formula right = claim_.closed ? expressions_.formula(*claim_.closed)
-                                        : expressions_.sum(*claim_.other_sum);
+    const Formula right =
+        claim_.closed ? expressions_.formula(*claim_.closed) : expressions_.sum(*claim_.other_sum);
     say(display(sum, right, label("claim"), "."));
     return;
   }
@@ -150,7 +153,7 @@ Formula LatexDocument::recurrence_left(bool symbolic) {
       term = piece("-", 0.8);
     } else if (text != "1") {
       const auto printed = expressions_.parsed(text, symbol_names());
-      term = !printed                               ? piece("", 100 * kRoom)  // not on a page
+      term = !printed                             ? piece("", 100 * kRoom)  // not on a page
              : printed->strength == Strength::sum ? bracketed(printed->formula, printed->tall)
                                                   : printed->formula;
       append_tex(term, "\\,", 0.2);
@@ -187,14 +190,18 @@ std::string LatexDocument::laws() const {
   const std::string& z = names_.number();
   std::vector<std::string> out;
   if (uses(is_factorial)) {
-    out.push_back(fmt::format("${0}!={0}\\,({0}-1)!$ for ${0}\\ge 1$ and the convention on $1/{0}!$", m));
+    out.push_back(
+        fmt::format("${0}!={0}\\,({0}-1)!$ for ${0}\\ge 1$ and the convention on $1/{0}!$", m));
   }
   if (uses(is_interval)) {
-    out.push_back(fmt::format("${0}^{{\\overline{{{1}+1}}}}={0}^{{\\overline{{{1}}}}}\\,({0}+{1})="
-                              "{0}\\,({0}+1)^{{\\overline{{{1}}}}}$", z, m));
+    out.push_back(
+        fmt::format("${0}^{{\\overline{{{1}+1}}}}={0}^{{\\overline{{{1}}}}}\\,({0}+{1})="
+                    "{0}\\,({0}+1)^{{\\overline{{{1}}}}}$",
+                    z, m));
   }
   if (uses(is_power)) out.push_back(fmt::format("${0}^{{{1}+1}}={0}\\,{0}^{{{1}}}$", z, m));
-  return out.empty() ? "Each of the following" : "By " + enumeration(out) + ", each of the following";
+  return out.empty() ? "Each of the following"
+                     : "By " + enumeration(out) + ", each of the following";
 }
 
 void LatexDocument::conventions() {
@@ -206,21 +213,27 @@ void LatexDocument::conventions() {
   };
   head("Conventions");
   if (uses(is_factorial)) {
-    say(fmt::format("For an integer ${0}<0$ we read $1/{0}!$ as $0$; then\n"
-                    "\\[ \\frac{{1}}{{({0}-1)!}} = \\frac{{{0}}}{{{0}!}} \\]\nholds for every integer "
-                    "${0}$. ", m));
+    say(fmt::format(
+        "For an integer ${0}<0$ we read $1/{0}!$ as $0$; then\n"
+        "\\[ \\frac{{1}}{{({0}-1)!}} = \\frac{{{0}}}{{{0}!}} \\]\nholds for every integer "
+        "${0}$. ",
+        m));
   }
   if (written("binomial")) {
-    say(fmt::format("As usual, $\\binom{{{0}}}{{{1}}}={0}({0}-1)\\cdots({0}-{1}+1)/{1}!$ for ${1}\\ge 0$, "
-                    "and $\\binom{{{0}}}{{{1}}}=0$ for ${1}<0$. ", z, m));
+    say(fmt::format(
+        "As usual, $\\binom{{{0}}}{{{1}}}={0}({0}-1)\\cdots({0}-{1}+1)/{1}!$ for ${1}\\ge 0$, "
+        "and $\\binom{{{0}}}{{{1}}}=0$ for ${1}<0$. ",
+        z, m));
   }
   if (uses(is_interval) || written("rising")) {
-    say(fmt::format("The rising factorial is ${0}^{{\\overline{{{1}}}}}={0}({0}+1)\\cdots({0}+{1}-1)$. ",
-                    z, m));
+    say(fmt::format(
+        "The rising factorial is ${0}^{{\\overline{{{1}}}}}={0}({0}+1)\\cdots({0}+{1}-1)$. ", z,
+        m));
   }
   if (written("falling")) {
-    say(fmt::format("The falling factorial is ${0}^{{\\underline{{{1}}}}}={0}({0}-1)\\cdots({0}-{1}+1)$. ",
-                    z, m));
+    say(fmt::format(
+        "The falling factorial is ${0}^{{\\underline{{{1}}}}}={0}({0}-1)\\cdots({0}-{1}+1)$. ", z,
+        m));
   }
   say("Labels such as (c1) refer to the table of side conditions at the end.\n");
 }

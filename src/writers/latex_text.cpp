@@ -20,12 +20,13 @@ constexpr std::size_t kWord = 12;  // characters of a word between places where 
       return "{\\normalfont\\textbackslash}";
     case '{':
     case '}':
-    case '$':
     case '&':
     case '%':
     case '#':
     case '_':
       return std::string("\\") + c;
+    case '$':
+      return "{\\normalfont\\$}";
     case '^':
       return "{\\normalfont\\textasciicircum}";
     case '~':
@@ -105,7 +106,8 @@ std::string latex_text(std::string_view text, std::size_t limit) {
   for (std::size_t at = 0; at < text.size(); ++count) {
     if (count >= limit) return out + "\\ldots{}";
     const claim::Character c = claim::decode(text, at);
-    const bool space = c.valid && (c.code == ' ' || c.code == '\n' || c.code == '\t' || c.code == '\r');
+    const bool space =
+        c.valid && (c.code == ' ' || c.code == '\n' || c.code == '\t' || c.code == '\r');
     if (space) {
       blank = true;
       word = 0;

@@ -128,7 +128,8 @@ Formula LatexValues::affine(const proof::Affine& value) const {
   for (std::size_t i = 0; i < value.coefficients.size(); ++i) {
     if (value.coefficients[i] > 0) add(value.coefficients[i], i);
   }
-  if (out.empty() && value.constant > 0) append_term(out, integer_formula(mpz_class(value.constant)));
+  if (out.empty() && value.constant > 0)
+    append_term(out, integer_formula(mpz_class(value.constant)));
   const bool constant_done = !out.empty() && value.constant > 0 &&
                              std::none_of(value.coefficients.begin(), value.coefficients.end(),
                                           [](long c) { return c > 0; });
@@ -143,7 +144,8 @@ Formula LatexValues::affine(const proof::Affine& value) const {
 
 Formula LatexValues::factor(const proof::Polynomial& base, long exponent) {
   std::size_t which = 0;
-  Formula out = writers::is_symbol(base, &which) ? Formula{symbol(which)} : bracketed(polynomial(base));
+  Formula out =
+      writers::is_symbol(base, &which) ? Formula{symbol(which)} : bracketed(polynomial(base));
   if (exponent != 1) {
     const std::string text = std::to_string(exponent);
     append_tex(out, "^{" + text + "}", kScript * digits_width(text));

@@ -10,8 +10,8 @@
 
 namespace sumwright::writers {
 
-/// Prints values of one proof. Polynomials past the room that is left are abbreviated: the first and
-/// last terms are shown and `abbreviated()` counts it.
+/// Prints values of one proof. Polynomials past the room that is left are abbreviated: the first
+/// and last terms are shown and `abbreviated()` counts it.
 class LatexValues {
  public:
   LatexValues(const std::vector<proof::Symbol>& symbols, const LatexNames& names)

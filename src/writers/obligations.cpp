@@ -30,7 +30,8 @@ void write_counterexample(ObligationsDocument& out, const proof::Counterexample&
 
 void write_front(ObligationsDocument& out, const proof::Proof& proof) {
   const bool established = proof.verdict == proof::Verdict::established;
-  out.statement("verdict", established ? word(proof.verdict) : "NOT ESTABLISHED, " + word(proof.verdict));
+  out.statement("verdict",
+                established ? word(proof.verdict) : "NOT ESTABLISHED, " + word(proof.verdict));
   out.statement("subject", word(proof.subject));
   out.statement("title", proof.claim->title);
   out.statement("claim kind", claim_kind(proof));
@@ -42,22 +43,26 @@ void write_front(ObligationsDocument& out, const proof::Proof& proof) {
   std::size_t count = 0;
   for (const proof::Condition& condition : proof.conditions) {
     if (condition.settled != proof::Settled::open) continue;
-    out.statement(fmt::format("open {}", ++count), fmt::format("{}: {}", condition.id, condition.text));
+    out.statement(fmt::format("open {}", ++count),
+                  fmt::format("{}: {}", condition.id, condition.text));
   }
   out.blank();
   if (established) {
-    out.remark("This file states a summation claim and every obligation on which its proof rests. "
-               "It can be checked with nothing else at hand: the claim's own text is the next "
-               "section, and sum, term, base term and equality can be rebuilt from it.");
+    out.remark(
+        "This file states a summation claim and every obligation on which its proof rests. "
+        "It can be checked with nothing else at hand: the claim's own text is the next "
+        "section, and sum, term, base term and equality can be rebuilt from it.");
   } else {
-    out.remark("This claim is NOT established. What follows is as far as the argument goes; items "
-               "marked open are not proved.");
+    out.remark(
+        "This claim is NOT established. What follows is as far as the argument goes; items "
+        "marked open are not proved.");
   }
   out.blank();
-  out.remark("fact(L) is L!, used where L >= 0; rfact(L) is 1/L! for L >= 0 and 0 for L < 0; "
-             "ip(a; i, j) is the product of a + t for i <= t < j; rip(a; i, j) is 1/ip(a; i, j); "
-             "inv(P) is 1/P. Lines that start with # are remarks; conditions are named c1, c2, ... "
-             "and listed near the end.");
+  out.remark(
+      "fact(L) is L!, used where L >= 0; rfact(L) is 1/L! for L >= 0 and 0 for L < 0; "
+      "ip(a; i, j) is the product of a + t for i <= t < j; rip(a; i, j) is 1/ip(a; i, j); "
+      "inv(P) is 1/P. Lines that start with # are remarks; conditions are named c1, c2, ... "
+      "and listed near the end.");
 }
 
 // Characters that reorder or hide text make the block look other than it is.
@@ -105,8 +110,7 @@ void write_symbols(ObligationsDocument& out, const proof::Proof& proof) {
   std::size_t count = 0;
   for (const proof::Symbol& symbol : proof.symbols) {
     if (symbol.name.empty()) continue;
-    out.statement(fmt::format("symbol {}", ++count),
-                  symbol.name + ", " + kind_words(symbol.kind));
+    out.statement(fmt::format("symbol {}", ++count), symbol.name + ", " + kind_words(symbol.kind));
   }
   count = 0;
   for (const std::string& text : hypothesis_texts(*proof.claim)) {
@@ -114,11 +118,13 @@ void write_symbols(ObligationsDocument& out, const proof::Proof& proof) {
   }
 }
 
-void write_recurrence(ObligationsDocument& out, const proof::Proof& proof, const TextPrinter& print) {
+void write_recurrence(ObligationsDocument& out, const proof::Proof& proof,
+                      const TextPrinter& print) {
   if (proof.recurrence_text.empty()) return;
   out.heading("recurrence");
-  out.remark("coefficient 0 * S(n) + coefficient 1 * S(n + 1) + ... = right side, S the sum and n "
-             "the running variable.");
+  out.remark(
+      "coefficient 0 * S(n) + coefficient 1 * S(n + 1) + ... = right side, S the sum and n "
+      "the running variable.");
   out.blank();
   out.statement("evidence", proof.evidence_brought ? "brought by the author" : "found");
   out.statement("order", std::to_string(proof.order));
@@ -140,7 +146,8 @@ void write_argument(ObligationsDocument& out, const proof::Proof& proof, const T
     write_equality(out, print, proof);
   }
   if (!proof.ranges.empty()) write_ranges(out, print, proof);
-  const bool weighted = proof.telescoping && print.factored(proof.telescoping->weight.polynomial) != "1";
+  const bool weighted =
+      proof.telescoping && print.factored(proof.telescoping->weight.polynomial) != "1";
   if (proof.ends) {
     out.heading("ends");
     write_balance(out, print, "", *proof.ends, weighted);
@@ -175,10 +182,9 @@ void write_conclusion(ObligationsDocument& out, const proof::Proof& proof) {
     return std::count_if(proof.conditions.begin(), proof.conditions.end(),
                          [&](const proof::Condition& c) { return c.settled == settled; });
   };
-  out.statement("conditions", fmt::format("{} decided, {} given, {} open",
-                                          count(proof::Settled::decided),
-                                          count(proof::Settled::given),
-                                          count(proof::Settled::open)));
+  out.statement("conditions",
+                fmt::format("{} decided, {} given, {} open", count(proof::Settled::decided),
+                            count(proof::Settled::given), count(proof::Settled::open)));
 }
 
 }  // namespace

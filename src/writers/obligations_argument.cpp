@@ -94,9 +94,9 @@ void write_conversion(ObligationsDocument& out, const TextPrinter& print,
     const proof::Leaf& leaf = conversion.leaves[j];
     const std::string key = fmt::format("rule {}", j + 1);
     out.statement(key, word(leaf.rule));
-    out.statement(key + " gives", fmt::format("{} = {}{}", to_text(*leaf.expression),
-                                              print.product(leaf.value),
-                                              bracketed_ids(leaf.conditions)));
+    out.statement(key + " gives",
+                  fmt::format("{} = {}{}", to_text(*leaf.expression), print.product(leaf.value),
+                              bracketed_ids(leaf.conditions)));
     for (std::size_t z = 0; z < leaf.nonzero.size(); ++z) {
       write_nonzero(out, print, fmt::format("{} nonzero {}", key, z + 1), leaf.nonzero[z]);
     }
@@ -104,8 +104,7 @@ void write_conversion(ObligationsDocument& out, const TextPrinter& print,
   for (std::size_t j = 0; j < conversion.denominators.size(); ++j) {
     const proof::Denominator& denominator = conversion.denominators[j];
     const std::string key = fmt::format("denominator {}", j + 1);
-    out.statement(key, fmt::format("{} = {}, its reciprocal {}{}",
-                                   to_text(*denominator.expression),
+    out.statement(key, fmt::format("{} = {}, its reciprocal {}{}", to_text(*denominator.expression),
                                    print.product(denominator.as_product),
                                    print.product(denominator.reciprocal),
                                    bracketed_ids(denominator.conditions)));
@@ -125,8 +124,9 @@ void write_conversion(ObligationsDocument& out, const TextPrinter& print,
 void write_base(ObligationsDocument& out, const TextPrinter& print,
                 const proof::Telescoping& telescoping) {
   out.heading("base term");
-  out.remark("With i the shift and k the index: F(n + i, k) = p_i * B, G(n, k) = down * c * B, "
-             "G(n, k + 1) = up * c(k + 1) * B.");
+  out.remark(
+      "With i the shift and k the index: F(n + i, k) = p_i * B, G(n, k) = down * c * B, "
+      "G(n, k + 1) = up * c(k + 1) * B.");
   out.blank();
   out.definition("B", print.product(telescoping.base.product));
   out.statement("region", region_text(telescoping.region));
@@ -163,10 +163,11 @@ void write_equality(ObligationsDocument& out, const TextPrinter& print, const pr
     left += fmt::format("{}a_{}*p_{}", i == 0 ? "" : " + ", i, i);
   }
   out.heading("equality");
-  out.remark("Of polynomials, for all values of the symbols. The normal form is that of the left "
-             "side: primitive over the integers, leading coefficient positive, terms in descending "
-             "lexicographic order, the symbols in the order of their list; left side = scale * "
-             "normal form.");
+  out.remark(
+      "Of polynomials, for all values of the symbols. The normal form is that of the left "
+      "side: primitive over the integers, leading coefficient positive, terms in descending "
+      "lexicographic order, the symbols in the order of their list; left side = scale * "
+      "normal form.");
   out.blank();
   out.definition("left", "weight*(" + left + ")");
   out.definition("right", "up*c(k + 1) - down*c(k)");
@@ -186,8 +187,9 @@ void write_equality(ObligationsDocument& out, const TextPrinter& print, const pr
 
 void write_ranges(ObligationsDocument& out, const TextPrinter& print, const proof::Proof& proof) {
   out.heading("ranges");
-  out.remark("The author's sum at n + i is the sum of F(n + i, k) over low..high, plus the given "
-             "numbers of terms just below low and just above high.");
+  out.remark(
+      "The author's sum at n + i is the sum of F(n + i, k) over low..high, plus the given "
+      "numbers of terms just below low and just above high.");
   out.blank();
   for (const proof::RangeStep& step : proof.ranges) {
     const std::string key = fmt::format("range {}", step.shift);

@@ -1,7 +1,8 @@
-// Re-checking a file: its polynomial identities by themselves, and item by item against a rebuilt proof.
+// Re-checking a file: its polynomial identities by themselves, and item by item against a rebuilt
+// proof.
 //
-// The identities are expanded with arithmetic of their own while the work stays within a budget; past
-// it they are evaluated on a grid that is large enough for their degrees.
+// The identities are expanded with arithmetic of their own while the work stays within a budget;
+// past it they are evaluated on a grid that is large enough for their degrees.
 #include <fmt/format.h>
 
 #include <algorithm>
@@ -37,7 +38,8 @@ struct Identity {
   std::size_t cost = 1;                // of one evaluation
 };
 
-void raise_degrees(std::vector<unsigned long>& degrees, const std::vector<const proof::Factored*>& f,
+void raise_degrees(std::vector<unsigned long>& degrees,
+                   const std::vector<const proof::Factored*>& f,
                    const proof::Polynomial* polynomial = nullptr) {
   for (std::size_t i = 0; i < degrees.size(); ++i) {
     unsigned long degree = polynomial == nullptr ? 0 : degree_bound(*polynomial, i);
@@ -82,8 +84,10 @@ void raise_degrees(std::vector<unsigned long>& degrees, const std::vector<const 
   const std::size_t symbols = file.symbols.size();
   ExactPolynomial sum;
   for (std::size_t i = 0; i < file.p.size(); ++i) {
-    add_to(sum, product(expand(file.coefficients[i], symbols, budget),
-                        expand(file.p[i], symbols, budget), budget), 1);
+    add_to(sum,
+           product(expand(file.coefficients[i], symbols, budget),
+                   expand(file.p[i], symbols, budget), budget),
+           1);
   }
   return product(expand(file.weight, symbols, budget), sum, budget);
 }
@@ -172,13 +176,15 @@ void raise_degrees(std::vector<unsigned long>& degrees, const std::vector<const 
 // Sizes as stated; primitive; leading coefficient positive.
 [[nodiscard]] bool normal_form_is_normal(const ObligationsFile& file) {
   const Size size = size_of(file.normal_form);
-  if (size.terms != file.terms || size.degree != file.degree || size.bits != file.bits) return false;
+  if (size.terms != file.terms || size.degree != file.degree || size.bits != file.bits)
+    return false;
   for (std::size_t i = 0; i < file.symbols.size(); ++i) {
     if (degree_in(file.normal_form, i) != file.degrees[i]) return false;
   }
   if (file.normal_form.terms.empty()) return true;
   mpz_class content = 0;
-  for (const proof::Monomial& term : file.normal_form.terms) content = gcd(content, term.coefficient);
+  for (const proof::Monomial& term : file.normal_form.terms)
+    content = gcd(content, term.coefficient);
   return content == 1 && file.normal_form.terms.front().coefficient > 0 && file.normal_scale != 0;
 }
 
@@ -205,11 +211,12 @@ bool equality_holds(const ObligationsFile& file) {
   try {
     if (file.has_equality) {
       if (index_position(file) == file.symbols.size() || !normal_form_is_normal(file)) return false;
-      if (!vanishes(normal_form_identity(file)) || !vanishes(telescoping_identity(file))) return false;
+      if (!vanishes(normal_form_identity(file)) || !vanishes(telescoping_identity(file)))
+        return false;
     }
-    return std::all_of(file.classes.begin(), file.classes.end(), [&](const ObligationsClass& group) {
-      return vanishes(class_identity(file, group));
-    });
+    return std::all_of(
+        file.classes.begin(), file.classes.end(),
+        [&](const ObligationsClass& group) { return vanishes(class_identity(file, group)); });
   } catch (const std::invalid_argument&) {
     return false;  // a negative power where a polynomial is needed
   }

@@ -19,7 +19,8 @@ namespace {
   return columns;
 }
 
-// Where the word that starts at `at` ends: at a blank, but not inside brackets, unless they hold much.
+// Where the word that starts at `at` ends: at a blank, but not inside brackets, unless they hold
+// much.
 [[nodiscard]] std::size_t word_end(std::string_view text, std::size_t at) {
   constexpr std::size_t kTogether = 50;
   int depth = 0;
@@ -51,9 +52,7 @@ std::string single_spaced(std::string_view text) {
   return out;
 }
 
-ObligationsDocument::ObligationsDocument() {
-  text_ = std::string(kObligationsFirstLine) + "\n\n";
-}
+ObligationsDocument::ObligationsDocument() { text_ = std::string(kObligationsFirstLine) + "\n\n"; }
 
 void ObligationsDocument::heading(std::string_view name) {
   std::string line = "== " + std::string(name) + " ";

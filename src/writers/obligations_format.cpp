@@ -30,14 +30,14 @@ void append(Rows& out, const Rows& more) { out.insert(out.end(), more.begin(), m
 
 [[nodiscard]] Rows conversion_keys() {
   Rows out = {{"written", '=', ValueKind::text, true},
-          {"product #", '=', ValueKind::text, false},
-          {"product # cancelled #", ':', ValueKind::text, false},
-          {"on", ':', ValueKind::text, true},
-          {"rule #", ':', ValueKind::text, false},
-          {"rule # gives", ':', ValueKind::text, false},
-          {"denominator #", ':', ValueKind::text, false},
-          {"denominator # unit #", ':', ValueKind::text, false},
-          {"defined by", ':', ValueKind::text, true}};
+              {"product #", '=', ValueKind::text, false},
+              {"product # cancelled #", ':', ValueKind::text, false},
+              {"on", ':', ValueKind::text, true},
+              {"rule #", ':', ValueKind::text, false},
+              {"rule # gives", ':', ValueKind::text, false},
+              {"denominator #", ':', ValueKind::text, false},
+              {"denominator # unit #", ':', ValueKind::text, false},
+              {"defined by", ':', ValueKind::text, true}};
   append(out, nonzero_keys("rule # nonzero #", false));
   return out;
 }
@@ -70,27 +70,20 @@ void append(Rows& out, const Rows& more) { out.insert(out.end(), more.begin(), m
 }
 
 [[nodiscard]] Rows recurrence_keys() {
-  return {{"evidence", ':', ValueKind::text, true},
-          {"order", ':', ValueKind::integer, true},
-          {"from", ':', ValueKind::integer, true},
-          {"threshold", ':', ValueKind::integer, true},
-          {"coefficient #", '=', ValueKind::text, true},
-          {"right side", '=', ValueKind::text, true},
-          {"certificate", '=', ValueKind::text, false},
-          {"boundary #", '=', ValueKind::text, false}};
+  return {
+      {"evidence", ':', ValueKind::text, true},      {"order", ':', ValueKind::integer, true},
+      {"from", ':', ValueKind::integer, true},       {"threshold", ':', ValueKind::integer, true},
+      {"coefficient #", '=', ValueKind::text, true}, {"right side", '=', ValueKind::text, true},
+      {"certificate", '=', ValueKind::text, false},  {"boundary #", '=', ValueKind::text, false}};
 }
 
 [[nodiscard]] Rows base_keys() {
-  Rows out = {{"B", '=', ValueKind::text, true},
-              {"region", ':', ValueKind::text, true},
-              {"low", '=', ValueKind::polynomial, true},
-              {"high", '=', ValueKind::polynomial, true},
-              {"conditions", ':', ValueKind::text, true},
-              {"a_#", '=', ValueKind::factored, true},
-              {"p_#", '=', ValueKind::factored, true},
-              {"c", '=', ValueKind::polynomial, true},
-              {"down", '=', ValueKind::factored, true},
-              {"up", '=', ValueKind::factored, true}};
+  Rows out = {
+      {"B", '=', ValueKind::text, true},          {"region", ':', ValueKind::text, true},
+      {"low", '=', ValueKind::polynomial, true},  {"high", '=', ValueKind::polynomial, true},
+      {"conditions", ':', ValueKind::text, true}, {"a_#", '=', ValueKind::factored, true},
+      {"p_#", '=', ValueKind::factored, true},    {"c", '=', ValueKind::polynomial, true},
+      {"down", '=', ValueKind::factored, true},   {"up", '=', ValueKind::factored, true}};
   append(out, nonzero_keys("weight", true));
   append(out, instance_keys("shift # #"));
   append(out, instance_keys("index shift"));
@@ -119,27 +112,28 @@ void append(Rows& out, const Rows& more) { out.insert(out.end(), more.begin(), m
 }
 
 [[nodiscard]] std::vector<SectionRow> make_sections() {
-  return {{"", front_keys()},
-          {"claim", {{"sha256", ':', ValueKind::text, true},
-                     {"bytes", ':', ValueKind::integer, true}}},
-          {"symbols", {{"symbol #", ':', ValueKind::text, true},
-                       {"hypothesis #", ':', ValueKind::text, false}}},
-          {"term", conversion_keys()},
-          {"closed form", conversion_keys()},
-          {"right side", conversion_keys()},
-          {"recurrence", recurrence_keys()},
-          {"base term", base_keys()},
-          {"equality", equality_keys()},
-          {"ranges", {{"range #", ':', ValueKind::text, true},
-                      {"range # zero below", ':', ValueKind::text, false},
-                      {"range # zero above", ':', ValueKind::text, false}}},
-          {"ends", balance_keys("")},
-          {"closed recurrence", balance_keys("")},
-          {"leading coefficient", nonzero_keys("leading", true)},
-          {"initial values", initial_keys()},
-          {"conditions", {{"c#", ':', ValueKind::text, true}}},
-          {"conclusion", {{"verdict", ':', ValueKind::text, true},
-                          {"conditions", ':', ValueKind::text, true}}}};
+  return {
+      {"", front_keys()},
+      {"claim", {{"sha256", ':', ValueKind::text, true}, {"bytes", ':', ValueKind::integer, true}}},
+      {"symbols",
+       {{"symbol #", ':', ValueKind::text, true}, {"hypothesis #", ':', ValueKind::text, false}}},
+      {"term", conversion_keys()},
+      {"closed form", conversion_keys()},
+      {"right side", conversion_keys()},
+      {"recurrence", recurrence_keys()},
+      {"base term", base_keys()},
+      {"equality", equality_keys()},
+      {"ranges",
+       {{"range #", ':', ValueKind::text, true},
+        {"range # zero below", ':', ValueKind::text, false},
+        {"range # zero above", ':', ValueKind::text, false}}},
+      {"ends", balance_keys("")},
+      {"closed recurrence", balance_keys("")},
+      {"leading coefficient", nonzero_keys("leading", true)},
+      {"initial values", initial_keys()},
+      {"conditions", {{"c#", ':', ValueKind::text, true}}},
+      {"conclusion",
+       {{"verdict", ':', ValueKind::text, true}, {"conditions", ':', ValueKind::text, true}}}};
 }
 
 [[nodiscard]] bool digit(char c) { return c >= '0' && c <= '9'; }

@@ -1,7 +1,7 @@
 // The outer grammar of templates/obligations.ebnf: headings, remarks, entries, the claim's block.
 //
-// Invariant: every byte of the source belongs to a heading, a remark, an entry, the block or a blank
-// line; nothing is skipped silently.
+// Invariant: every byte of the source belongs to a heading, a remark, an entry, the block or a
+// blank line; nothing is skipped silently.
 #include "writers/obligations_lines.hpp"
 
 #include <fmt/format.h>
@@ -75,7 +75,8 @@ class LineReader {
 
   void first_line() {
     if (!next_line() || line_ != kObligationsFirstLine) {
-      refuse(fmt::format("expected `{}` as the first line", kObligationsFirstLine), 0, line_.size());
+      refuse(fmt::format("expected `{}` as the first line", kObligationsFirstLine), 0,
+             line_.size());
     }
   }
 
@@ -170,7 +171,8 @@ class LineReader {
   void append_value(std::size_t column) {
     const std::string_view text = line_.substr(column);
     if (text.empty() || text.front() == ' ' || text.find("  ") != std::string_view::npos) {
-      refuse("words of a value are separated by one blank", std::min(column, line_.size()), text.size());
+      refuse("words of a value are separated by one blank", std::min(column, line_.size()),
+             text.size());
     }
     PlacedValue& value = out_.entries.back().value;
     value.text += text;

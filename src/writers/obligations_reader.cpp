@@ -92,7 +92,8 @@ class FileBuilder {
     const bool denied = out_.verdict.starts_with(kNotEstablished);
     if (denied) out_.verdict.erase(0, kNotEstablished.size());
     const bool established = out_.verdict == "established";
-    if (established == denied || (!established && out_.verdict != "refuted" && out_.verdict != "undecided")) {
+    if (established == denied ||
+        (!established && out_.verdict != "refuted" && out_.verdict != "undecided")) {
       refuse(entry.place, "no such verdict");
     }
     if (text("conclusion", "verdict") != out_.verdict) {
@@ -134,7 +135,8 @@ class FileBuilder {
       const bool repeated =
           std::any_of(out_.symbols.begin(), out_.symbols.end(),
                       [&](const proof::Symbol& symbol) { return symbol.name == name; });
-      if (kind == kinds.end() || repeated) refuse(entry->place, "not a symbol and what it ranges over");
+      if (kind == kinds.end() || repeated)
+        refuse(entry->place, "not a symbol and what it ranges over");
       out_.symbols.push_back({name, kind->second});
     }
   }

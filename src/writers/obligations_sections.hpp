@@ -23,8 +23,8 @@ void write_equality(ObligationsDocument& out, const TextPrinter& print, const pr
 /// How the author's ranges differ from the common range.
 void write_ranges(ObligationsDocument& out, const TextPrinter& print, const proof::Proof& proof);
 
-/// One balance, keys behind `prefix` (empty, or `value 3 `); `weighted`: its terms are multiplied by the
-/// weight of the telescoping identity.
+/// One balance, keys behind `prefix` (empty, or `value 3 `); `weighted`: its terms are multiplied
+/// by the weight of the telescoping identity.
 void write_balance(ObligationsDocument& out, const TextPrinter& print, const std::string& prefix,
                    const proof::Balance& balance, bool weighted);
 

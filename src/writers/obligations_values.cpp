@@ -1,7 +1,7 @@
 // Recursive descent over the polynomial part of templates/obligations.ebnf.
 //
-// Invariant: what is accepted is in the order and form of the printer, so that equal texts and equal
-// values are the same thing.
+// Invariant: what is accepted is in the order and form of the printer, so that equal texts and
+// equal values are the same thing.
 #include "writers/obligations_values.hpp"
 
 #include <algorithm>

@@ -1,8 +1,8 @@
 // From named texts to files: staged in a hidden folder, then moved into place.
 //
 // Invariant: a file below the output folder is either as it was or complete and synchronised.
-// Places are looked up without following symbolic links (openat, O_NOFOLLOW), so that a link planted
-// below the folder cannot lead a write elsewhere.
+// Places are looked up without following symbolic links (openat, O_NOFOLLOW), so that a link
+// planted below the folder cannot lead a write elsewhere.
 #include "writers/output_folder.hpp"
 
 #include <fcntl.h>
@@ -90,7 +90,8 @@ void check_paths(const std::vector<NamedText>& files) {
   }
 }
 
-[[nodiscard]] Descriptor open_folder(int parent, const std::string& name, const std::string& shown) {
+[[nodiscard]] Descriptor open_folder(int parent, const std::string& name,
+                                     const std::string& shown) {
   const int fd = ::openat(parent, name.c_str(), O_RDONLY | O_DIRECTORY | O_NOFOLLOW | O_CLOEXEC);
   if (fd < 0) {
     const bool link = errno == ELOOP || errno == ENOTDIR;
@@ -100,7 +101,8 @@ void check_paths(const std::vector<NamedText>& files) {
   return Descriptor(fd);
 }
 
-[[nodiscard]] Descriptor make_folder(int parent, const std::string& name, const std::string& shown) {
+[[nodiscard]] Descriptor make_folder(int parent, const std::string& name,
+                                     const std::string& shown) {
   if (::mkdirat(parent, name.c_str(), 0777) != 0 && errno != EEXIST) fail(shown, errno);
   return open_folder(parent, name, shown);
 }
@@ -209,7 +211,8 @@ void write_folder(const fs::path& folder, const std::vector<NamedText>& files, F
   }
   for (std::size_t i = 0; i < files.size(); ++i) {
     const std::string last = parts_of(files[i].path).back();
-    if (::renameat(places[i].first.get(), last.c_str(), places[i].second.get(), last.c_str()) != 0) {
+    if (::renameat(places[i].first.get(), last.c_str(), places[i].second.get(), last.c_str()) !=
+        0) {
       fail(files[i].path, errno);
     }
   }

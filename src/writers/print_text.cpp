@@ -154,14 +154,14 @@ std::string TextPrinter::nonzero_factor(const proof::NonzeroFactor& value) const
       std::string by;
       for (std::size_t i = 0; i < value.shift.size() && i < symbols_.size(); ++i) {
         if (value.shift[i] == 0 || degree_in(value.factor, i) < 1) continue;
-        by += fmt::format("{}{} := {} {} {}", by.empty() ? "" : ", ", symbols_[i].name,
-                          symbols_[i].name, value.shift[i] < 0 ? '-' : '+',
-                          std::abs(value.shift[i]));
+        by +=
+            fmt::format("{}{} := {} {} {}", by.empty() ? "" : ", ", symbols_[i].name,
+                        symbols_[i].name, value.shift[i] < 0 ? '-' : '+', std::abs(value.shift[i]));
       }
       return fmt::format("{}: {} coefficients and {} constant term{}{}", factor,
                          value.negated ? "no positive" : "no negative",
-                         value.negated ? "a negative" : "a positive",
-                         by.empty() ? "" : " after ", by);
+                         value.negated ? "a negative" : "a positive", by.empty() ? "" : " after ",
+                         by);
     }
     case proof::NonzeroFactor::Method::excluded:
       return fmt::format("{}: the claim excludes this value of {}", factor,

@@ -50,7 +50,8 @@ using Json = nlohmann::ordered_json;
   for (std::size_t i = 0; i < proof.symbols.size(); ++i) {
     if (!proof.symbols[i].name.empty()) degrees[proof.symbols[i].name] = degree_in(polynomial, i);
   }
-  return {{"terms", size.terms}, {"degree", size.degree}, {"degrees", degrees}, {"bits", size.bits}};
+  return {
+      {"terms", size.terms}, {"degree", size.degree}, {"degrees", degrees}, {"bits", size.bits}};
 }
 
 [[nodiscard]] Json sizes_json(const proof::Proof& proof) {

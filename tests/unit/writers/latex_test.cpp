@@ -62,17 +62,20 @@ proof::Proof with_claim(proof::Proof proof, const std::string& text) {
 }
 
 std::string squares_claim(const std::string& title, const std::string& more = "") {
-  return "format = 1\ntitle = " + title + "\nrunning = \"n\"\nfrom = 0\n[sum]\nsummand = \"binomial(n, k)^2\"\n"
-         "over = [ { index = \"k\", low = \"0\", high = \"n\" } ]\n[equals]\nclosed = \"binomial(2*n, n)\"\n" + more;
+  return "format = 1\ntitle = " + title +
+         "\nrunning = \"n\"\nfrom = 0\n[sum]\nsummand = \"binomial(n, k)^2\"\n"
+         "over = [ { index = \"k\", low = \"0\", high = \"n\" } ]\n[equals]\nclosed = "
+         "\"binomial(2*n, n)\"\n" +
+         more;
 }
 
 TEST(Latex, SaysWhatAPaperNeeds) {
   const std::string text = file_text(fixture::squares(), 0);
   for (const char* part :
-       {"\\sum_{k=0}^{n} \\binom{n}{k}^{2} = \\binom{2n}{n}.", "\\frac{n!^{2}}{k!^{2}\\,(n-k+1)!^{2}}",
-        "F(n,k) &= (n-k+1)^{2}\\,B(n,k)", "G(n,k+1) &= (n-k+1)^{2}\\,c(n,k+1)\\,B(n,k)",
-        "\\frac{k^{2}(2k-3n-3)}{(n+1-k)^{2}}", "\\texttt{coq/Claim.v}", "{1/(-1)!}=0$ (c5)",
-        "E_{1} = \\frac{(2n)!}{(n+1)!^{2}}"}) {
+       {"\\sum_{k=0}^{n} \\binom{n}{k}^{2} = \\binom{2n}{n}.",
+        "\\frac{n!^{2}}{k!^{2}\\,(n-k+1)!^{2}}", "F(n,k) &= (n-k+1)^{2}\\,B(n,k)",
+        "G(n,k+1) &= (n-k+1)^{2}\\,c(n,k+1)\\,B(n,k)", "\\frac{k^{2}(2k-3n-3)}{(n+1-k)^{2}}",
+        "\\texttt{coq/Claim.v}", "{1/(-1)!}=0$ (c5)", "E_{1} = \\frac{(2n)!}{(n+1)!^{2}}"}) {
     EXPECT_NE(text.find(part), std::string::npos) << part;
   }
   EXPECT_EQ(text.find("\\documentclass"), std::string::npos);
@@ -84,20 +87,22 @@ TEST(Latex, SaysWhatAPaperNeeds) {
 
 TEST(Latex, NonNaturalEndIsShownWithItsBalance) {
   const std::string text = file_text(fixture::halves(), 0);
-  for (const char* part : {"F(n+1,n+1)", "2 classes of similar terms", "-4(n+1)+4(n+1) = 0", "2-2 = 0"}) {
+  for (const char* part :
+       {"F(n+1,n+1)", "2 classes of similar terms", "-4(n+1)+4(n+1) = 0", "2-2 = 0"}) {
     EXPECT_NE(text.find(part), std::string::npos) << part;
   }
 }
 
 TEST(Latex, TextIsNeverACommand) {
   EXPECT_EQ(latex_text("\\end{document} $x$ 100% #1 a_b ^~{}&"),
-            "{\\normalfont\\textbackslash}end\\{document\\} \\$x\\$ 100\\% \\#1 a\\_b "
+            "{\\normalfont\\textbackslash}end\\{document\\} {\\normalfont\\$}x{\\normalfont\\$} "
+            "100\\% \\#1 a\\_b "
             "{\\normalfont\\textasciicircum}{\\normalfont\\textasciitilde}\\{\\}\\&");
-  EXPECT_EQ(latex_text("Ap\xC3\xA9ry, Ramanujan\xE2\x80\x99s, \xE6\x9D\x8E"), "Ap\\'{e}ry, Ramanujan's, [U+674E]");
+  EXPECT_EQ(latex_text("Ap\xC3\xA9ry, Ramanujan\xE2\x80\x99s, \xE6\x9D\x8E"),
+            "Ap\\'{e}ry, Ramanujan's, [U+674E]");
   EXPECT_EQ(latex_text("a\n\n\tb\x1B[0m\xFF"), "a b[U+001B][0m[0xFF]");
   EXPECT_EQ(latex_text(std::string(1000, 'a'), 5), "aaaaa\\ldots{}");
-  EXPECT_EQ(latex_code("a_b^2 \\x"),
-            "\\texttt{a\\char95{}b\\char94{}\\allowbreak{}2 \\char92{}x}");
+  EXPECT_EQ(latex_code("a_b^2 \\x"), "\\texttt{a\\char95{}b\\char94{}\\allowbreak{}2 \\char92{}x}");
 }
 
 // No backslash, brace or dollar of a hostile text gets through unescaped.
@@ -110,7 +115,8 @@ TEST(Latex, EscapingIsBalancedForAnyBytes) {
       int depth = 0;
       int dollars = 0;
       for (std::size_t i = 0; i < out.size(); ++i) {
-        if (out[i] == '\\' && i + 1 < out.size() && std::string("{}$&%#_").find(out[i + 1]) != std::string::npos) {
+        if (out[i] == '\\' && i + 1 < out.size() &&
+            std::string("{}$&%#_").find(out[i + 1]) != std::string::npos) {
           ++i;
         } else if (out[i] == '{') {
           ++depth;
@@ -119,7 +125,8 @@ TEST(Latex, EscapingIsBalancedForAnyBytes) {
         } else if (out[i] == '$') {
           ++dollars;
         } else {
-          ASSERT_EQ(std::string("%#&~").find(out[i]) == std::string::npos || out[i] == '~', true) << out;
+          ASSERT_EQ(std::string("%#&~").find(out[i]) == std::string::npos || out[i] == '~', true)
+              << out;
           ASSERT_NE(out[i], '\n');
         }
       }
@@ -167,7 +174,8 @@ TEST_F(ExpressionText, NamesAreReadableAndDifferent) {
 
 TEST(Latex, LettersOfTheArgumentAvoidTheClaims) {
   const proof::Proof proof = fixture::bare(
-      "format = 1\ntitle = \"t\"\nrunning = \"n\"\nfrom = 0\n[sum]\nsummand = \"S + F_1 + a\"\n[equals]\n"
+      "format = 1\ntitle = \"t\"\nrunning = \"n\"\nfrom = 0\n[sum]\nsummand = \"S + F_1 + "
+      "a\"\n[equals]\n"
       "closed = \"1\"\n[parameters]\nS = { in = \"rationals\" }\nF_1 = { in = \"rationals\" }\n"
       "a = { in = \"rationals\" }\n");
   const LatexNames names(*proof.claim);
@@ -190,20 +198,23 @@ TEST(Latex, CompilesWithoutComplaint) {
 
 TEST(Latex, TwoAppendicesFitInOnePaper) {
   if (!have_pdflatex()) GTEST_SKIP() << "pdflatex is not installed";
-  const std::string paper = "\\documentclass{amsart}\\usepackage{amsmath,amsthm}\n"
-                            "\\newtheorem{theorem}{Theorem}\\begin{document}\n\\section{Text}A.\n\\appendix\n" +
-                            file_text(fixture::squares(), 0) + file_text(fixture::halves(), 0) +
-                            "\\end{document}\n";
+  const std::string paper =
+      "\\documentclass{amsart}\\usepackage{amsmath,amsthm}\n"
+      "\\newtheorem{theorem}{Theorem}\\begin{document}\n\\section{Text}A.\n\\appendix\n" +
+      file_text(fixture::squares(), 0) + file_text(fixture::halves(), 0) + "\\end{document}\n";
   EXPECT_EQ(complaints(paper), "");
 }
 
 TEST(Latex, HostileClaimsCompileToo) {
   if (!have_pdflatex()) GTEST_SKIP() << "pdflatex is not installed";
   const std::string record =
-      "[record]\nauthors = [\"\\\\input{/etc/passwd}\", \"\xC5\x81ukasz \xE6\x9D\x8E\xE5\x96\x84\xE8\x98\xAD\"]\n"
-      "source = '''$$\\begin{verbatim} %{}&#^_~\\end ^^5c " + std::string(300, 'w') + "'''\n";
+      "[record]\nauthors = [\"\\\\input{/etc/passwd}\", \"\xC5\x81ukasz "
+      "\xE6\x9D\x8E\xE5\x96\x84\xE8\x98\xAD\"]\n"
+      "source = '''$$\\begin{verbatim} %{}&#^_~\\end ^^5c " +
+      std::string(300, 'w') + "'''\n";
   for (const std::string& title :
-       {std::string("'\\end{document} }{ $$ % # & _ ^ ~ \\write18{x}'"), "'" + std::string(900, 'W') + "'",
+       {std::string("'\\end{document} }{ $$ % # & _ ^ ~ \\write18{x}'"),
+        "'" + std::string(900, 'W') + "'",
         std::string("\"\xE2\x88\x91 \xCE\xB1 \xF0\x9F\x98\x80 \xD0\x96\"")}) {
     const proof::Proof proof = with_claim(fixture::squares(), squares_claim(title, record));
     EXPECT_EQ(complaints(file_text(proof, 1)), "") << title;
@@ -226,8 +237,8 @@ proof::Polynomial random_polynomial(std::mt19937& random, std::size_t terms, uns
 TEST(Latex, LongFormulasStayInsideTheMargins) {
   if (!have_pdflatex()) GTEST_SKIP() << "pdflatex is not installed";
   std::mt19937 random(7);
-  for (const auto& [terms, digits] :
-       std::vector<std::pair<std::size_t, unsigned>>{{12, 2}, {60, 5}, {40, 30}, {9, 400}, {200, 10}, {3000, 60}}) {
+  for (const auto& [terms, digits] : std::vector<std::pair<std::size_t, unsigned>>{
+           {12, 2}, {60, 5}, {40, 30}, {9, 400}, {200, 10}, {3000, 60}}) {
     proof::Proof proof = fixture::squares();
     proof::Telescoping& t = *proof.telescoping;
     t.certificate = random_polynomial(random, terms, digits);

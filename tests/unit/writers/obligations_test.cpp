@@ -2,8 +2,8 @@
 #include <gtest/gtest.h>
 
 #include <fstream>
-#include <iterator>
 #include <iostream>
+#include <iterator>
 
 #include "claim/source.hpp"
 #include "proof_fixture.hpp"
@@ -103,7 +103,10 @@ TEST(Obligations, EveryChangedLineIsNoticed) {
       for (std::size_t c = 0; c < lines[l].size(); ++c) {
         std::vector<std::string> changed = lines;
         char& at = changed[l][c];
-        at = at == '9' ? '8' : at >= '0' && at <= '8' ? static_cast<char>(at + 1) : at == 'x' ? 'y' : 'x';
+        at = at == '9'                ? '8'
+             : at >= '0' && at <= '8' ? static_cast<char>(at + 1)
+             : at == 'x'              ? 'y'
+                                      : 'x';
         try {
           const ObligationsFile file = read_obligations_text("o.txt", joined(changed));
           EXPECT_FALSE(differences(file, proof).empty()) << changed[l];
@@ -199,8 +202,8 @@ TEST(Obligations, NothingStatedIsNotAnEquality) { EXPECT_FALSE(equality_holds(Ob
 
 TEST(Obligations, AnotherClaimsTextIsRefused) {
   const std::string text = obligations_text(fixture::squares());
-  const std::string other = replaced(text, "| closed  = \"binomial(2*n, n)\"",
-                                     "| closed  = \"binomial(2*n, k)\"");
+  const std::string other =
+      replaced(text, "| closed  = \"binomial(2*n, n)\"", "| closed  = \"binomial(2*n, k)\"");
   EXPECT_NE(refusal(other).find("this is not the SHA-256 of the claim's text"), std::string::npos);
   // With the hash put right as well, the rebuilt proof says otherwise.
   const proof::Proof proof = fixture::squares();
@@ -218,8 +221,8 @@ TEST(Obligations, HostileClaimTextStaysInItsBlock) {
   proof::Proof proof = fixture::squares();
   claim::Claim copy = *proof.claim;
   for (const std::string& text :
-       {hostile, hostile + "no line break at the end", std::string("a\r\nb\r\n"), std::string("\n\n"),
-        std::string("\xEF\xBB\xBF# mark\n")}) {
+       {hostile, hostile + "no line break at the end", std::string("a\r\nb\r\n"),
+        std::string("\n\n"), std::string("\xEF\xBB\xBF# mark\n")}) {
     copy.source = std::make_shared<const claim::Source>(claim::Source{"x", text});
     copy.title = "one\nverdict: refuted\n== claim == \x1b[2J   two";
     proof.claim = std::make_shared<const claim::Claim>(copy);
@@ -233,7 +236,8 @@ TEST(Obligations, HostileClaimTextStaysInItsBlock) {
 TEST(Obligations, RefusalsSayWhereAndWhat) {
   const std::string text = obligations_text(fixture::squares());
   const std::vector<std::tuple<std::string, std::string, std::string>> cases = {
-      {"Sumwright obligations, format 1", "Sumwright obligations, format 2", "o.txt:1:1: error: expected"},
+      {"Sumwright obligations, format 1", "Sumwright obligations, format 2",
+       "o.txt:1:1: error: expected"},
       {"== base term =", "== base terms ", "did you mean 'base term'?"},
       {"== base term =", "== base term ", "a heading is"},
       {"evidence: found", "evidence = found", "expected `:` after this key"},
@@ -253,9 +257,11 @@ TEST(Obligations, RefusalsSayWhereAndWhat) {
       {"p_1 = (n + 1)^2", "p_1 = (n + 1)^99999999", "the exponent is too large"},
       {"bytes: 225", "bytes: 226", "the claim's text has 225 bytes"},
       {"verdict: established", "verdict: proved", "no such verdict"},
-      {"verdict: established", "verdict: NOT ESTABLISHED, undecided", "not the verdict that the file starts with"},
+      {"verdict: established", "verdict: NOT ESTABLISHED, undecided",
+       "not the verdict that the file starts with"},
       {"symbol 2: k, summation", "symbol 2: n, summation", "not a symbol and what it ranges over"},
-      {"right = up*c(k + 1) - down*c(k)", "right = up*c(k + 1) + down*c(k)", "expected up*c(k + 1)"},
+      {"right = up*c(k + 1) - down*c(k)", "right = up*c(k + 1) + down*c(k)",
+       "expected up*c(k + 1)"},
       {"low = 0\n", "", "`low` is missing in this section"},
       {"== conclusion", "== conditions", "out of order or repeated"},
       {"order: 1\n", "order: 1\n\n    2\n", "must follow its entry at once"},
@@ -269,8 +275,10 @@ TEST(Obligations, RefusalsSayWhereAndWhat) {
     }
     EXPECT_NE(refusal(changed).find(wanted), std::string::npos) << to << "\n" << refusal(changed);
   }
-  EXPECT_NE(refusal(text.substr(0, text.size() - 1)).find("may have been cut off"), std::string::npos);
-  EXPECT_NE(refusal(text.substr(0, text.find("\n== conclusion"))).find("conclusion"), std::string::npos);
+  EXPECT_NE(refusal(text.substr(0, text.size() - 1)).find("may have been cut off"),
+            std::string::npos);
+  EXPECT_NE(refusal(text.substr(0, text.find("\n== conclusion"))).find("conclusion"),
+            std::string::npos);
   EXPECT_NE(refusal(""), "");
 }
 
@@ -290,8 +298,9 @@ TEST(Obligations, LimitsHold) {
 }
 
 TEST(Obligations, NotEstablishedSaysSoAtTheTop) {
-  proof::Proof proof = fixture::bare("format = 1\ntitle = \"t\"\nrunning = \"n\"\nfrom = 0\n"
-                                     "[sum]\nsummand = \"n\"\n[equals]\nclosed = \"n^2\"\n");
+  proof::Proof proof = fixture::bare(
+      "format = 1\ntitle = \"t\"\nrunning = \"n\"\nfrom = 0\n"
+      "[sum]\nsummand = \"n\"\n[equals]\nclosed = \"n^2\"\n");
   proof.verdict = proof::Verdict::refuted;
   proof.reason = "the two sides differ at n = 2";
   proof.counterexample = proof::Counterexample{{{"n", 2}}, "2", "4", "the claimed equality"};
@@ -300,7 +309,8 @@ TEST(Obligations, NotEstablishedSaysSoAtTheTop) {
   open.text = "n != 0";
   proof.conditions = {open};
   const std::string text = obligations_text(proof);
-  EXPECT_TRUE(text.starts_with("Sumwright obligations, format 1\n\nverdict: NOT ESTABLISHED, refuted\n"));
+  EXPECT_TRUE(
+      text.starts_with("Sumwright obligations, format 1\n\nverdict: NOT ESTABLISHED, refuted\n"));
   EXPECT_NE(text.find("open 1: c1: n != 0\n"), std::string::npos);
   EXPECT_NE(text.find("counterexample: the claimed equality at n = 2\n"), std::string::npos);
   const ObligationsFile file = read_obligations_text("o.txt", text);
@@ -332,8 +342,10 @@ TEST(Obligations, GrammarNamesEveryKeyAndSection) {
         at = end + 1;
         if (words.find_first_not_of(' ') == std::string::npos) continue;
         const std::size_t last = words.find_last_of("abcdefghijklmnopqrstuvwxyzBu_0");
-        EXPECT_NE(grammar.find(words.substr(words.rfind(' ', last) == std::string::npos ? 0 : words.rfind(' ', last) + 1)),
-                  std::string::npos)
+        EXPECT_NE(
+            grammar.find(words.substr(
+                words.rfind(' ', last) == std::string::npos ? 0 : words.rfind(' ', last) + 1)),
+            std::string::npos)
             << row.pattern;
       }
     }

@@ -1,6 +1,7 @@
 // The output folder: complete or untouched, and never outside of itself.
-#include <gtest/gtest.h>
+#include "writers/output_folder.hpp"
 
+#include <gtest/gtest.h>
 #include <sys/stat.h>
 #include <unistd.h>
 
@@ -8,8 +9,6 @@
 #include <fstream>
 #include <iterator>
 #include <set>
-
-#include "writers/output_folder.hpp"
 
 namespace sumwright::writers {
 namespace {
@@ -65,7 +64,8 @@ TEST_F(OutputFolder, WritesAndReplacesOnlyItsOwnNames) {
 
 TEST_F(OutputFolder, RefusesPathsThatLeaveTheFolder) {
   for (const char* path : {"../a", "a/../../b", "/etc/a", "", "a//b", ".", "a/", "./a"}) {
-    EXPECT_NE(refusal({{"good", "x"}, {path, "x"}}).find("not a relative path below"), std::string::npos)
+    EXPECT_NE(refusal({{"good", "x"}, {path, "x"}}).find("not a relative path below"),
+              std::string::npos)
         << path;
   }
   EXPECT_NE(refusal({{std::string("a\0b", 3), "x"}}), "");

@@ -99,7 +99,7 @@ proof::AtomStep step(Atom from, Atom to, Factored factor, std::vector<std::strin
 
 proof::Condition condition(std::string id, proof::ConditionKind kind, std::string text,
                            std::string region, std::string method) {
-  return {std::move(id),         kind, std::move(text), std::move(region), proof::Settled::decided,
+  return {std::move(id),    kind, std::move(text), std::move(region), proof::Settled::decided,
           std::move(method)};
 }
 
@@ -137,9 +137,10 @@ proof::InitialValue value_one() {
   const Product one = product(times(1), {});
   using Origin = proof::BalanceTerm::Origin;
   out.balance.terms = {
-      similar_term(balance_term(Origin::value, "F(0, 0)", one, affine({0, 0}, 0)), 0, times(1), one, {}),
-      similar_term(balance_term(Origin::closed_form, "right side at 0", product(times(-1), {})), 0, times(-1), one,
-                   {})};
+      similar_term(balance_term(Origin::value, "F(0, 0)", one, affine({0, 0}, 0)), 0, times(1), one,
+                   {}),
+      similar_term(balance_term(Origin::closed_form, "right side at 0", product(times(-1), {})), 0,
+                   times(-1), one, {})};
   out.balance.groups = {{{"E1", one}, {0, 1}, {times(1), times(-1)}}};
   return out;
 }
@@ -158,8 +159,8 @@ Affine affine(std::vector<long> coefficients, long constant) {
 
 proof::Proof bare(const std::string& claim_text) {
   proof::Proof out;
-  out.claim = std::make_shared<const claim::Claim>(
-      claim::read_claim_text("claim.toml", claim_text).claim);
+  out.claim =
+      std::make_shared<const claim::Claim>(claim::read_claim_text("claim.toml", claim_text).claim);
   out.symbols.push_back({out.claim->running, proof::SymbolKind::running});
   const auto& over = out.claim->sum.over;
   out.symbols.push_back({over.empty() ? "" : over[0].index, proof::SymbolKind::index});
@@ -180,22 +181,24 @@ void squares_term(proof::Proof& out) {
   out.summand.id = "summand";
   out.summand.expression = out.claim->sum.summand;
   out.summand.region.text = "n >= 0, 0 <= k <= n";
-  out.summand.leaves = {{out.claim->sum.summand->children[0],
-                         proof::LeafRule::binomial_factorials,
-                         product(times(1), {{fact({1, 0}, 0), 1},
-                                            {rfact({0, 1}, 0), 1},
-                                            {rfact({1, -1}, 0), 1}}),
-                         {"c1"},
-                         {}}};
-  out.summand.products = {product(
-      times(1), {{fact({1, 0}, 0), 2}, {rfact({0, 1}, 0), 2}, {rfact({1, -1}, 0), 2}})};
+  out.summand.leaves = {
+      {out.claim->sum.summand->children[0],
+       proof::LeafRule::binomial_factorials,
+       product(times(1), {{fact({1, 0}, 0), 1}, {rfact({0, 1}, 0), 1}, {rfact({1, -1}, 0), 1}}),
+       {"c1"},
+       {}}};
+  out.summand.products = {
+      product(times(1), {{fact({1, 0}, 0), 2}, {rfact({0, 1}, 0), 2}, {rfact({1, -1}, 0), 2}})};
   out.summand.units = {{}};
   out.closed = proof::Conversion{};
   out.closed->id = "closed";
   out.closed->expression = out.claim->closed;
   out.closed->region.text = "n >= 0";
-  out.closed->leaves = {{out.claim->closed, proof::LeafRule::binomial_factorials,
-                         product(times(1), {{fact({2, 0}, 0), 1}, {rfact({1, 0}, 0), 2}}), {"c2"}, {}}};
+  out.closed->leaves = {{out.claim->closed,
+                         proof::LeafRule::binomial_factorials,
+                         product(times(1), {{fact({2, 0}, 0), 1}, {rfact({1, 0}, 0), 2}}),
+                         {"c2"},
+                         {}}};
   out.closed->products = {product(times(1), {{fact({2, 0}, 0), 1}, {rfact({1, 0}, 0), 2}})};
   out.closed->units = {{}};
 }
@@ -203,9 +206,8 @@ void squares_term(proof::Proof& out) {
 proof::Telescoping squares_telescoping() {
   proof::Telescoping t;
   const Polynomial m = linear(1, -1, 1);
-  t.base = {"B", product(times(1), {{fact({1, 0}, 0), 2},
-                                    {rfact({0, 1}, 0), 2},
-                                    {rfact({1, -1}, 1), 2}})};
+  t.base = {"B", product(times(1),
+                         {{fact({1, 0}, 0), 2}, {rfact({0, 1}, 0), 2}, {rfact({1, -1}, 1), 2}})};
   t.coefficients = {times(-2, {{linear(2, 0, 1), 1}}), times(1, {{linear(1, 0, 1), 1}})};
   t.weight.polynomial = times(1);
   t.p = {times(1, {{m, 2}}), times(1, {{linear(1, 0, 1), 2}})};
@@ -216,20 +218,29 @@ proof::Telescoping squares_telescoping() {
   t.low = affine({0, 0}, 0);
   t.high = affine({1, 0}, 1);
   t.conditions = {"c3"};
-  t.normal_form = polynomial({{3, {3, 0}}, {-8, {2, 1}}, {7, {2, 0}}, {4, {1, 2}}, {-12, {1, 1}},
-                              {5, {1, 0}}, {2, {0, 2}}, {-4, {0, 1}}, {1, {0, 0}}});
+  t.normal_form = polynomial({{3, {3, 0}},
+                              {-8, {2, 1}},
+                              {7, {2, 0}},
+                              {4, {1, 2}},
+                              {-12, {1, 1}},
+                              {5, {1, 0}},
+                              {2, {0, 2}},
+                              {-4, {0, 1}},
+                              {1, {0, 0}}});
   t.normal_scale = -1;
   proof::Instance shift;
   shift.id = "shift_0";
   shift.region = t.region;
-  shift.left = product(times(1), {{fact({1, 0}, 0), 2}, {rfact({0, 1}, 0), 2}, {rfact({1, -1}, 0), 2}});
+  shift.left =
+      product(times(1), {{fact({1, 0}, 0), 2}, {rfact({0, 1}, 0), 2}, {rfact({1, -1}, 0), 2}});
   shift.right = t.base.product;
   shift.right.coefficient = t.p[0];
   shift.steps = {step(rfact({1, -1}, 0), rfact({1, -1}, 1), times(1, {{m, 1}}), {})};
   proof::Instance next;
   next.id = "shift_1";
   next.region = t.region;
-  next.left = product(times(1), {{fact({1, 0}, 1), 2}, {rfact({0, 1}, 0), 2}, {rfact({1, -1}, 1), 2}});
+  next.left =
+      product(times(1), {{fact({1, 0}, 1), 2}, {rfact({0, 1}, 0), 2}, {rfact({1, -1}, 1), 2}});
   next.right = t.base.product;
   next.right.coefficient = t.p[1];
   next.steps = {step(fact({1, 0}, 1), fact({1, 0}, 0), times(1, {{linear(1, 0, 1), 1}}), {"c3"})};
@@ -242,25 +253,28 @@ proof::Balance squares_closed() {
   b.id = "closed_recurrence";
   b.region.text = "n >= 0";
   const Product base = product(times(1), {{fact({2, 0}, 0), 1}, {rfact({1, 0}, 1), 2}});
-  auto upper = balance_term(Origin::upper_end, "G(n, n + 2)",
-                            product(times(1, {{linear(1, 0, 2), 2}, {linear(-1, 0, 1), 1}}),
-                                    {{fact({1, 0}, 0), 2}, {rfact({1, 0}, 2), 2}, {rfact({0, 0}, -1), 2}}),
-                            affine({1, 0}, 1));
+  auto upper =
+      balance_term(Origin::upper_end, "G(n, n + 2)",
+                   product(times(1, {{linear(1, 0, 2), 2}, {linear(-1, 0, 1), 1}}),
+                           {{fact({1, 0}, 0), 2}, {rfact({1, 0}, 2), 2}, {rfact({0, 0}, -1), 2}}),
+                   affine({1, 0}, 1));
   upper.zero = "c5";
   upper.zero_atom = rfact({0, 0}, -1);
   auto lower = balance_term(Origin::lower_end, "G(n, 0)", product(times(0), {}), affine({0, 0}, 0));
   lower.zero = "polynomial factor";
-  auto now = balance_term(Origin::closed_form, "a_0 C(n)",
-                          product(times(2, {{linear(2, 0, 1), 1}}),
-                                  {{fact({2, 0}, 0), 1}, {rfact({1, 0}, 0), 2}}));
-  auto next = balance_term(Origin::closed_form, "a_1 C(n + 1)",
-                           product(times(-1, {{linear(1, 0, 1), 1}}),
-                                   {{fact({2, 0}, 2), 1}, {rfact({1, 0}, 1), 2}}), {}, 1);
+  auto now = balance_term(
+      Origin::closed_form, "a_0 C(n)",
+      product(times(2, {{linear(2, 0, 1), 1}}), {{fact({2, 0}, 0), 1}, {rfact({1, 0}, 0), 2}}));
+  auto next = balance_term(
+      Origin::closed_form, "a_1 C(n + 1)",
+      product(times(-1, {{linear(1, 0, 1), 1}}), {{fact({2, 0}, 2), 1}, {rfact({1, 0}, 1), 2}}), {},
+      1);
   const Factored share = times(2, {{linear(2, 0, 1), 1}, {linear(1, 0, 1), 2}});
   const Factored other = times(-2, {{linear(2, 0, 1), 1}, {linear(1, 0, 1), 2}});
   b.terms = {upper, lower,
-             similar_term(now, 0, share, base,
-                          {step(rfact({1, 0}, 0), rfact({1, 0}, 1), times(1, {{linear(1, 0, 1), 1}}), {})}),
+             similar_term(
+                 now, 0, share, base,
+                 {step(rfact({1, 0}, 0), rfact({1, 0}, 1), times(1, {{linear(1, 0, 1), 1}}), {})}),
              similar_term(next, 0, other, base, {})};
   b.groups = {{{"E1", base}, {2, 3}, {share, other}}};
   return b;
@@ -286,9 +300,11 @@ proof::Proof squares() {
   out.leading = nonzero_linear(linear(1, 0, 1), "c6");
   out.initial = {value_one()};
   out.conditions = {
-      condition("c1", Kind::factorial_argument, "n >= 0", "n >= 0, 0 <= k <= n", "linear arithmetic"),
+      condition("c1", Kind::factorial_argument, "n >= 0", "n >= 0, 0 <= k <= n",
+                "linear arithmetic"),
       condition("c2", Kind::factorial_argument, "2*n >= 0", "n >= 0", "linear arithmetic"),
-      condition("c3", Kind::factorial_argument, "n >= 0", "n >= 0, 0 <= k <= n + 1", "linear arithmetic"),
+      condition("c3", Kind::factorial_argument, "n >= 0", "n >= 0, 0 <= k <= n + 1",
+                "linear arithmetic"),
       condition("c4", Kind::support, "n - k < 0", "n >= 0, n < k <= n + 1", "linear arithmetic"),
       condition("c5", Kind::support, "-1 < 0", "n >= 0", "linear arithmetic"),
       condition("c6", Kind::leading_coefficient, "n + 1 != 0", "n >= 0", "linear arithmetic"),
@@ -322,7 +338,8 @@ proof::Balance halves_closed() {
   proof::Balance b;
   b.id = "closed_recurrence";
   b.region.text = "n >= 0";
-  const Product end = product(times(1), {{fact({2, 0}, 1), 1}, {rfact({1, 0}, 1), 2}, {power(2, {-1, 0}, -2), 1}});
+  const Product end =
+      product(times(1), {{fact({2, 0}, 1), 1}, {rfact({1, 0}, 1), 2}, {power(2, {-1, 0}, -2), 1}});
   const Product two = product(times(1), {{power(2, {1, 0}, 0), 1}});
   const Factored share = times(4, {{linear(1, 0, 1), 1}});
   const Factored other = times(-4, {{linear(1, 0, 1), 1}});
@@ -330,13 +347,21 @@ proof::Balance halves_closed() {
   lower.zero = "polynomial factor";
   Product upper = end;
   upper.coefficient = other;
-  b.terms = {similar_term(balance_term(Origin::upper_end, "G(n, n + 1)", upper, affine({1, 0}, 0)), 0, other, end, {}),
+  b.terms = {similar_term(balance_term(Origin::upper_end, "G(n, n + 1)", upper, affine({1, 0}, 0)),
+                          0, other, end, {}),
              lower,
              similar_term(balance_term(Origin::explicit_point, "a_1 F(n + 1, n + 1)",
-                                       product(times(1), {{fact({2, 0}, 2), 1}, {rfact({1, 0}, 1), 2}, {power(2, {-1, 0}, -1), 1}}), affine({1, 0}, 1), 1),
+                                       product(times(1), {{fact({2, 0}, 2), 1},
+                                                          {rfact({1, 0}, 1), 2},
+                                                          {power(2, {-1, 0}, -1), 1}}),
+                                       affine({1, 0}, 1), 1),
                           0, share, end, {}),
-             similar_term(balance_term(Origin::closed_form, "a_0 C(n)", product(times(2), {{power(2, {1, 0}, 0), 1}})), 1, times(2), two, {}),
-             similar_term(balance_term(Origin::closed_form, "a_1 C(n + 1)", product(times(-1), {{power(2, {1, 0}, 1), 1}}), {}, 1), 1, times(-2), two, {})};
+             similar_term(balance_term(Origin::closed_form, "a_0 C(n)",
+                                       product(times(2), {{power(2, {1, 0}, 0), 1}})),
+                          1, times(2), two, {}),
+             similar_term(balance_term(Origin::closed_form, "a_1 C(n + 1)",
+                                       product(times(-1), {{power(2, {1, 0}, 1), 1}}), {}, 1),
+                          1, times(-2), two, {})};
   b.groups = {{{"E1", end}, {0, 2}, {other, share}}, {{"E2", two}, {3, 4}, {times(2), times(-2)}}};
   return b;
 }
@@ -349,7 +374,10 @@ proof::Proof halves() {
   out.summand.id = "summand";
   out.summand.expression = out.claim->sum.summand;
   out.summand.region.text = "n >= 0, 0 <= k <= n";
-  out.summand.products = {product(times(1), {{fact({1, 1}, 0), 1}, {rfact({1, 0}, 0), 1}, {rfact({0, 1}, 0), 1}, {power(2, {0, -1}, 0), 1}})};
+  out.summand.products = {product(times(1), {{fact({1, 1}, 0), 1},
+                                             {rfact({1, 0}, 0), 1},
+                                             {rfact({0, 1}, 0), 1},
+                                             {power(2, {0, -1}, 0), 1}})};
   out.summand.units = {{}};
   out.closed = proof::Conversion{};
   out.closed->id = "closed";
@@ -370,9 +398,11 @@ proof::Proof halves() {
   out.leading->polynomial = times(1);
   out.initial = {value_one()};
   out.conditions = {
-      condition("c1", Kind::factorial_argument, "n + k >= 0", "n >= 0, 0 <= k <= n", "linear arithmetic"),
+      condition("c1", Kind::factorial_argument, "n + k >= 0", "n >= 0, 0 <= k <= n",
+                "linear arithmetic"),
       condition("c2", Kind::nonvanishing, "2^k != 0", "n >= 0, 0 <= k <= n", "2 is not 0"),
-      condition("c3", Kind::explicit_point, "k = n + 1 at shift 1", "n >= 0", "kept as an explicit term")};
+      condition("c3", Kind::explicit_point, "k = n + 1 at shift 1", "n >= 0",
+                "kept as an explicit term")};
   return out;
 }
 

@@ -20,7 +20,8 @@ TEST(Record, SaysWhatWasProved) {
   EXPECT_EQ(json["verdict"], "established");
   EXPECT_EQ(json["claim"]["title"], "Squares along one row of the binomial triangle");
   EXPECT_EQ(json["claim"]["sha256"], sha256(proof.claim->source->text));
-  EXPECT_EQ(json["recurrence"]["coefficients"], (std::vector<std::string>{"-2*(2*n + 1)", "n + 1"}));
+  EXPECT_EQ(json["recurrence"]["coefficients"],
+            (std::vector<std::string>{"-2*(2*n + 1)", "n + 1"}));
   EXPECT_EQ(json["sizes"]["normal_form"]["terms"], 9);
   EXPECT_EQ(json["sizes"]["normal_form"]["degrees"]["k"], 2);
   EXPECT_EQ(json["sizes"]["normal_form"]["bits"], 4);
@@ -37,7 +38,8 @@ TEST(Record, Refuted) {
   proof.verdict = proof::Verdict::refuted;
   proof.subject = proof::Subject::evidence;
   proof.reason = "the \"certificate\"\nis wrong \xFF";  // not UTF-8
-  proof.counterexample = proof::Counterexample{{{"n", 2}, {"k", mpq_class(1, 2)}}, "1/3", "0", "the identity"};
+  proof.counterexample =
+      proof::Counterexample{{{"n", 2}, {"k", mpq_class(1, 2)}}, "1/3", "0", "the identity"};
   const auto json = nlohmann::ordered_json::parse(record_json(proof, {}));
   EXPECT_EQ(json["verdict"], "refuted");
   EXPECT_EQ(json["subject"], "evidence");
