@@ -37,7 +37,7 @@ Value argument(const Expression& expression, const Point& at) {
 }
 
 Value factorial(const Expression& call, const Point& at, bool reciprocal) {
-  const Value a = argument(child(call, 0), at);
+  Value a = argument(child(call, 0), at);
   if (!a.exists()) return a;
   if (!a.number.is_integer()) return Value::outside("factorial of " + text_of(a.number));
   const long m = to_machine(a.number);
@@ -56,8 +56,8 @@ numeric binomial(const numeric& a, long b) {
 }
 
 Value call_of_two(const Expression& call, const Point& at) {
-  const Value a = argument(child(call, 0), at);
-  const Value b = argument(child(call, 1), at);
+  Value a = argument(child(call, 0), at);
+  Value b = argument(child(call, 1), at);
   if (!a.exists()) return a;
   if (!b.exists()) return b;
   if (!b.number.is_integer())
@@ -78,7 +78,7 @@ Value bound_call(const Expression& call, const Point& at) {
     return Value::of((n - GiNaC::mod(n, d)) / d);  // mod of a positive modulus is in [0, d)
   }
   for (std::size_t i = 1; i < call.children.size(); ++i) {
-    const Value next = argument(child(call, i), at);
+    Value next = argument(child(call, i), at);
     if (!out.exists()) return out;
     if (!next.exists()) return next;
     if (call.name == "min" ? next.number < out.number : next.number > out.number) out = next;
@@ -99,7 +99,7 @@ Value call_value(const Expression& call, const Point& at, bool reciprocal) {
 }
 
 Value power(const Expression& node, const Point& at, bool reciprocal) {
-  const Value v = argument(child(node, 1), at);
+  Value v = argument(child(node, 1), at);
   if (!v.exists()) return v;
   if (!v.number.is_integer()) return Value::divided_by_zero("exponent " + text_of(v.number));
   long exponent = to_machine(v.number);

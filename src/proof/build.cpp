@@ -202,7 +202,7 @@ class Builder {
     const Attempt checked = attempt(*terms_, brought, false, options_.deadline);
     if (checked.outcome == Attempt::Outcome::ends_fail ||
         checked.outcome == Attempt::Outcome::initial_fails)
-      return report(checked, true);
+      return ends_fail(checked, true);
     EvidenceDraft reduced = brought;
     reduced.right_side.reset();
     Poly common(terms_->setting.ring);
@@ -429,16 +429,21 @@ class Builder {
   /// The identity is right, but sum a_i S(n+i) is not b.
   Proof ends_fail(const Attempt& tried, bool equality) {
     const claim::Claim recurrence = as_recurrence_claim(*claim_);
-    const auto point = term::refute(recurrence, first_values, 6, {}, options_.deadline);
+    std::vector<mpz_class> also;
+    if (tried.outcome == Attempt::Outcome::initial_fails) also.emplace_back(tried.at);
+    const auto point = term::refute(recurrence, first_values, 6, also, options_.deadline);
     if (!point)
       return undecided("the ends of the sum do not give the claimed right side",
                        "R8: terms that are similar but written differently");
     proof_.verdict = Verdict::refuted;
     proof_.subject = equality ? Subject::evidence : Subject::claim;
     proof_.counterexample = from_difference(*point, "the recurrence of the sum");
-    proof_.reason = fmt::format("the certificate is right as an identity, but the right side of the "
-                                "recurrence is not; the ends give {}",
-                                tried.draft.right_side_text);
+    proof_.reason =
+        tried.outcome == Attempt::Outcome::initial_fails
+            ? fmt::format("the certificate is right as an identity, but the recurrence of the sum fails "
+                          "at {} = {}", claim_->running, tried.at)
+            : fmt::format("the certificate is right as an identity, but the right side of the recurrence "
+                          "is not; the ends give {}", tried.draft.right_side_text);
     return proof_;
   }
 

@@ -39,8 +39,12 @@ std::vector<NamedText> coq_files(const proof::Proof& proof, const std::string& p
     out.push_back({"coq/" + file, std::string(embedded_template("coq/" + file))});
   }
   project += folder + "Claim.v\n";
-  out.insert(out.begin(), {"coq/_CoqProject", project});
   out.push_back({"coq/" + folder + "Claim.v", coq_claim_text(proof)});
+  for (NamedText& file : coq_corollaries(proof, prefix)) {
+    project += folder + file.path + "\n";
+    out.push_back({"coq/" + folder + file.path, std::move(file.text)});
+  }
+  out.insert(out.begin(), {"coq/_CoqProject", project});
   return out;
 }
 

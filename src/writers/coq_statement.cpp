@@ -87,21 +87,22 @@ std::string word_condition(claim::Exclusion::Kind kind) {
 }
 
 std::string exclusion_text(const proof::Proof& proof, const std::string& x,
-                           const claim::Exclusion& e) {
+                           const claim::Exclusion& e, const std::string& field) {
   if (e.kind == claim::Exclusion::Kind::constant)
-    return fmt::format("{}%K <> {}%K :> K", x, paren(field_text(proof, *e.written)));
-  return fmt::format("(forall z : Z, {}{} <> inj z :> K)", word_condition(e.kind), x);
+    return fmt::format("{}%K <> {}%K :> {}", x, paren(field_text(proof, *e.written)), field);
+  return fmt::format("(forall z : Z, {}{} <> inj z :> {})", word_condition(e.kind), x, field);
 }
 
-std::string assumption_text(const proof::Proof& proof, const claim::Assumption& a) {
+std::string assumption_text(const proof::Proof& proof, const claim::Assumption& a,
+                            const std::string& field) {
   const std::string sign = comparison_sign(a.comparison);
   if (a.over_integers)
     return fmt::format("{} {} {}", integer_text(proof, *a.left), sign, integer_text(proof, *a.right));
-  return fmt::format("{}%K {} {}%K :> K", paren(field_text(proof, *a.left)), sign,
-                     paren(field_text(proof, *a.right)));
+  return fmt::format("{}%K {} {}%K :> {}", paren(field_text(proof, *a.left)), sign,
+                     paren(field_text(proof, *a.right)), field);
 }
 
-std::string recurrence_equation(const proof::Proof& proof) {
+std::string recurrence_equation(const proof::Proof& proof, const std::string& field) {
   const claim::Evidence& evidence = proof.claim->evidence;
   const std::string n = name_of(proof.claim->running);
   std::string left;
@@ -113,7 +114,7 @@ std::string recurrence_equation(const proof::Proof& proof) {
   }
   const std::string right =
       evidence.right_side ? field_text(proof, *evidence.right_side) : std::string("inj 0");
-  return fmt::format("({})%K = ({})%K :> K", left, right);
+  return fmt::format("({})%K = ({})%K :> {}", left, right, field);
 }
 
 }  // namespace
@@ -201,20 +202,20 @@ std::string assumption_name(std::size_t assumption) {
   return fmt::format("H_assume_{}", assumption + 1);
 }
 
-std::vector<Hypothesis> hypotheses(const proof::Proof& proof) {
+std::vector<Hypothesis> hypotheses(const proof::Proof& proof, const std::string& field) {
   std::vector<Hypothesis> out;
   const claim::Claim& claim = *proof.claim;
   for (std::size_t i = 0; i < claim.parameters.size(); ++i)
     for (std::size_t e = 0; e < claim.parameters[i].excluded.size(); ++e)
       out.push_back({exclusion_name(proof, i + 2, e),
                      exclusion_text(proof, name_of(claim.parameters[i].name),
-                                    claim.parameters[i].excluded[e])});
+                                    claim.parameters[i].excluded[e], field)});
   for (const claim::Parameter& p : claim.parameters)
     if (p.at_least)
       out.push_back({"H_least_" + name_of(p.name),
                      fmt::format("{} <= {}", bracketed(p.at_least->get_str()), name_of(p.name))});
   for (std::size_t i = 0; i < claim.assumptions.size(); ++i)
-    out.push_back({assumption_name(i), assumption_text(proof, claim.assumptions[i])});
+    out.push_back({assumption_name(i), assumption_text(proof, claim.assumptions[i], field)});
   return out;
 }
 
@@ -235,30 +236,30 @@ std::vector<std::string> parameter_names(const proof::Proof& proof) {
   return out;
 }
 
-std::string parameter_binders(const proof::Proof& proof) {
-  std::string out = "(K : char0_field)";
+std::string parameter_binders(const proof::Proof& proof, const std::string& field) {
+  std::string out = field == "K" ? "(K : char0_field)" : "";
   for (const auto ring : {claim::Parameter::Ring::rationals, claim::Parameter::Ring::integers})
     for (const claim::Parameter& p : proof.claim->parameters)
       if (p.ring == ring)
         out += fmt::format(" ({} : {})", name_of(p.name),
-                           ring == claim::Parameter::Ring::rationals ? "K" : "Z");
+                           ring == claim::Parameter::Ring::rationals ? field : "Z");
   return out;
 }
 
-std::string statement_text(const proof::Proof& proof) {
+std::string statement_text(const proof::Proof& proof, const std::string& field) {
   const std::string n = name_of(proof.claim->running);
-  std::string out = "forall " + parameter_binders(proof);
+  std::string out = "forall " + parameter_binders(proof, field);
   const bool equality = proof.claim->is_equality();
-  out += equality ? fmt::format(" ({} : Z),\n", n) : " (s : Z -> K),\n";
-  for (const Hypothesis& h : hypotheses(proof)) out += fmt::format("  {} ->\n", h.text);
+  out += equality ? fmt::format(" ({} : Z),\n", n) : fmt::format(" (s : Z -> {}),\n", field);
+  for (const Hypothesis& h : hypotheses(proof, field)) out += fmt::format("  {} ->\n", h.text);
   const std::string from = bracketed(std::to_string(proof.from));
   if (equality) {
-    out += fmt::format("  {} <= {} ->\n  {} =\n  {}%K :> K", from, n, sum_text(proof),
-                       field_text(proof, *proof.claim->closed));
+    out += fmt::format("  {} <= {} ->\n  {} =\n  {}%K :> {}", from, n, sum_text(proof),
+                       field_text(proof, *proof.claim->closed), field);
     return out;
   }
   out += fmt::format("  (forall {} : Z, s {} = {}) ->\n", n, n, sum_text(proof));
-  out += fmt::format("  forall {} : Z, {} <= {} ->\n  {}", n, from, n, recurrence_equation(proof));
+  out += fmt::format("  forall {} : Z, {} <= {} ->\n  {}", n, from, n, recurrence_equation(proof, field));
   return out;
 }
 

@@ -25,7 +25,8 @@ struct Hypothesis {
   std::string name;
   std::string text;
 };
-[[nodiscard]] std::vector<Hypothesis> hypotheses(const proof::Proof& proof);
+[[nodiscard]] std::vector<Hypothesis> hypotheses(const proof::Proof& proof,
+                                                 const std::string& field = "K");
 /// The hypothesis of entry `exclusion` of the parameter at symbol position `parameter`.
 [[nodiscard]] std::string exclusion_name(const proof::Proof& proof, std::size_t parameter,
                                          std::size_t exclusion);
@@ -34,10 +35,12 @@ struct Hypothesis {
 /// The sum of the claim with its index bound: `sum 0 n (fun k : Z => ...)%K`.
 [[nodiscard]] std::string sum_text(const proof::Proof& proof);
 /// `Theorem claim : ...` without the final dot, as coq-statement fixes it.
-[[nodiscard]] std::string statement_text(const proof::Proof& proof);
+/// `field`: the field it is stated over, quantified when it is K.
+[[nodiscard]] std::string statement_text(const proof::Proof& proof, const std::string& field = "K");
 /// Names of the parameters in the order of the statement (rational, then integer).
 [[nodiscard]] std::vector<std::string> parameter_names(const proof::Proof& proof);
 /// The binder list `(K : char0_field) (x : K) (m : Z)`.
-[[nodiscard]] std::string parameter_binders(const proof::Proof& proof);
+[[nodiscard]] std::string parameter_binders(const proof::Proof& proof,
+                                            const std::string& field = "K");
 
 }  // namespace sumwright::writers::coq

@@ -31,11 +31,13 @@ class LatexDocument {
   /// `By m! = m (m-1)! ..., each of the following`: the laws that the base term needs.
   [[nodiscard]] std::string laws() const;
 
-  // latex_argument.cpp: certificate, base term, equality, summation
+  // latex_argument.cpp: certificate, base term, equality
   void certificate();
   void coefficient_list();
   void base_term();
   void equality();
+
+  // latex_summation.cpp
   void summation();
   [[nodiscard]] Formula range_sum(const proof::RangeStep& step);
   void pieces();

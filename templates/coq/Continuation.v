@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** Polynomial functions of one variable in K: what holds outside the zeros of a
     polynomial that is somewhere nonzero holds everywhere. *)
 

@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** Factorials, reciprocal factorials and binomial coefficients: the laws by which
     a shifted one becomes a polynomial times another. *)
 

@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** Induction over windows of a sequence; two solutions of one recurrence. *)
 
 Require Import ZArith Lia List Ring Field.

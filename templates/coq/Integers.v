@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** The vocabulary over Z, and claims between integers carried over from a field:
     if the values in K are [inj] of integers, an equation in K is one in Z. *)
 

@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** From the vocabulary of a claim to the atoms of a proof, with every argument spelled
     as the proof needs it: the premises are integer equations (for [lia]) and equations in K
     (for [pq]). *)

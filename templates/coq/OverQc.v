@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** The rational numbers of the standard library are a field of characteristic zero. *)
 
 Require Import ZArith QArith Qcanon Lia.

@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** The real numbers of the standard library are a field of characteristic zero.
     Their axioms appear here and in what uses this file, nowhere else. *)
 

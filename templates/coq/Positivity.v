@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** Integers that are positive because a polynomial has coefficients of one sign:
     a + m (b + m (c + ...)) with a > 0, the others and m >= 0 (Horner's form). *)
 

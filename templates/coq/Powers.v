@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** Powers with an integer exponent. *)
 
 Require Import ZArith Lia Ring Field.

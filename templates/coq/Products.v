@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** Interval products  ip a i j = (a + i) (a + i + 1) ... (a + j - 1),  their
     reciprocals, and rising and falling factorials written with them. *)
 

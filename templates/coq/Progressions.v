@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** Products over an arithmetic progression of integers that misses 0,
     ap u v i j = (u + v i) (u + v (i + 1)) ... (u + v (j - 1)),  continued to j < i by
     reciprocals: rising and falling factorials of a rational number that is no integer. *)

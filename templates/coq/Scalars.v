@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** Arithmetic in a field of characteristic zero: the morphism [inj], cancelling,
     products that are nonzero, and the data that [Add Field] wants. *)
 

@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** The vocabulary of the theorems: everything a reader has to believe besides
     the theorem itself.  Definitions only; all proofs are in the other files. *)
 

@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** Finite sums: changing the range, splitting off points, telescoping. *)
 
 Require Import ZArith Lia Bool List Ring Field.

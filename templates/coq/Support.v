@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** Everything that a generated proof uses.
 
     [Add Field] does not survive the end of a section, and no tactic can give it, so

@@ -1,3 +1,5 @@
+(* Support library of Sumwright. SPDX-License-Identifier: 0BSD *)
+
 (** [values]: everything at closed integer arguments is computed; a symbolic first
     argument of a product is left in explicit products.  [field] or [ring] ends it. *)
 

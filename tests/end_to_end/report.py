@@ -61,10 +61,10 @@ class Report:
             self.say("nothing was run")
             return 1
         for step, name, problem in self.failures:
-            self.say(f"failed: {step}: {name}: {first_line(problem)}")
+            self.say(f"failed: {step}: {name}: {one_line(problem)}")
         return 1 if self.failures else 0
 
 
-def first_line(text):
-    lines = [line for line in str(text).splitlines() if line.strip()]
-    return lines[0][:200] if lines else ""
+def one_line(text, most=220):
+    text = " ".join(str(text).split())
+    return text if len(text) <= most else text[:most] + " ..."

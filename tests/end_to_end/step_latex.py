@@ -16,7 +16,6 @@ PAPER = r"""\documentclass{amsart}
 \title{Several appendices}
 \author{A. Author}
 \maketitle
-\appendix
 %s
 \end{document}
 """
@@ -34,8 +33,8 @@ def typeset(folder, name):
         done = run(command, cwd=folder, env={**os.environ, "max_print_line": "1000"},
                    seconds=SECONDS)
         if done.status != 0:
-            said = complaints(done.stdout)
-            return f"pdflatex: exit status {done.status}: {said[0] if said else done.text()}"
+            errors = [line for line in complaints(done.stdout) if line.startswith("!")]
+            return f"pdflatex: exit status {done.status}: {errors[0] if errors else done.text()}"
     base = name[:-len(".tex")]
     with open(os.path.join(folder, base + ".log"), encoding="latin-1") as stream:
         found = complaints(stream.read())
@@ -44,7 +43,7 @@ def typeset(folder, name):
     return f"{len(found)} complaints: " + "; ".join(found[:3]) if found else None
 
 
-def paper(context, exports, name):
+def paper(context, exports, name, opening=""):
     folder = context.folder("latex", name)
     inputs = []
     for place, export in enumerate(exports):
@@ -52,7 +51,7 @@ def paper(context, exports, name):
         shutil.copy(os.path.join(export.folder, "appendix.tex"), os.path.join(folder, fragment))
         inputs.append(rf"\input{{{fragment}}}")
     with open(os.path.join(folder, "paper.tex"), "w", encoding="utf-8") as stream:
-        stream.write(PAPER % "\n".join(inputs))
+        stream.write(PAPER % "\n".join([opening, *inputs]))
     return typeset(folder, "paper.tex")
 
 
@@ -73,5 +72,5 @@ def latex(context):
     in_parallel(one, exports)
     report.start("appendices in one paper")
     if len(exports) >= 2:
-        report.case("two", paper(context, [exports[0], exports[-1]], "two"))
+        report.case("two", paper(context, [exports[0], exports[-1]], "two", r"\appendix"))
         report.case(f"all {len(exports)}", paper(context, exports, "all"))

@@ -260,6 +260,14 @@ TEST(Mutations, ABalanceOfSomethingElse) {
   proof.closed_recurrence->terms.clear();
   proof.closed_recurrence->groups.clear();
   expect_disagreement(proof, {"balance with the closed form"},
+                      "0 explicit terms in balance closed_recurrence for 1 explicit points");
+}
+
+TEST(Mutations, AnEndOfAnotherOrigin) {
+  // the balance stays true, but its upper end is not the one that telescoping leaves
+  proof::Proof proof = testing::halves_proof();
+  std::swap(proof.closed_recurrence->terms[0].origin, proof.closed_recurrence->terms[1].origin);
+  expect_disagreement(proof, {"balance with the closed form"},
                       "the upper end in balance closed_recurrence at n = 0");
 }
 
