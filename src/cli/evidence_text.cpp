@@ -27,6 +27,18 @@ constexpr std::size_t kLineWidth = 100;
   return "\"" + text + "\"";
 }
 
+// A whole text needs no brackets around it.
+[[nodiscard]] std::string without_outer_brackets(const std::string& text) {
+  if (!text.starts_with('(')) return text;
+  int depth = 0;
+  for (std::size_t at = 0; at + 1 < text.size(); ++at) {
+    if (text[at] == '(') ++depth;
+    if (text[at] == ')') --depth;
+    if (depth == 0) return text;
+  }
+  return text.substr(1, text.size() - 2);
+}
+
 [[nodiscard]] std::string recurrence_value(const EvidenceTexts& evidence, std::string_view line_end) {
   std::string out = "[";
   std::size_t longest = 0;
@@ -191,7 +203,9 @@ void check_outcome(const claim::Source& source, const std::string& text,
 
 EvidenceTexts evidence_of(const proof::Proof& proof) {
   EvidenceTexts out;
-  out.recurrence = proof.recurrence_text;
+  for (const std::string& text : proof.recurrence_text) {
+    out.recurrence.push_back(without_outer_brackets(text));
+  }
   out.right_side = proof.right_side_text.empty() ? "0" : proof.right_side_text;
   if (!proof.claim->sum.over.empty() && !proof.certificate_text.empty()) {
     out.index = proof.claim->sum.over[0].index;

@@ -134,6 +134,24 @@ void add_option(CLI::App& app, const OptionRow& row, Options& options) {
          std::string::npos;
 }
 
+[[nodiscard]] bool is_unknown_command(std::string_view word) {
+  const auto& rows = command_rows();
+  return !word.starts_with('-') && std::none_of(rows.begin(), rows.end(), [&](const CommandRow& row) {
+    return row.name == word;
+  });
+}
+
+[[nodiscard]] Arguments unknown_command(const std::string& word) {
+  std::vector<std::string> names;
+  for (const CommandRow& row : command_rows()) names.emplace_back(row.name);
+  const std::string hint = claim::suggestion(word, names);
+  fmt::print(stderr, "sumwright: no command {}; {}\n", claim::in_quotes(word),
+             hint.empty() ? "there are " + claim::alternatives(names) : hint);
+  Arguments out;
+  out.exit_status = static_cast<int>(Status::unusable);
+  return out;
+}
+
 }  // namespace
 
 const std::vector<OptionRow>& option_rows() {
@@ -172,6 +190,7 @@ const std::vector<CommandRow>& command_rows() {
 }
 
 Arguments read_arguments(int count, const char* const* arguments) {
+  if (count > 1 && is_unknown_command(arguments[1])) return unknown_command(arguments[1]);
   CLI::App app{"Sumwright proves summation identities and exports the proofs."};
   app.name("sumwright");
   app.set_version_flag("--version", "sumwright " SUMWRIGHT_VERSION);

@@ -93,7 +93,9 @@ class Replay {
     if (project == scripts_.end()) return;
     project_ = read_coq_project(project->second, (options_.input / "coq/_CoqProject").string());
     for (const std::string& file : project_.files) {
-      if (!scripts_.contains(file)) problems_.push_back("coq/" + file + " is not in record.json");
+      if (!scripts_.contains(file) && problems_.empty()) {
+        problems_.push_back("coq/" + file + " is not in record.json");
+      }
     }
     look_at_scripts();
   }

@@ -6,9 +6,9 @@
 
 #include <fmt/format.h>
 
-#include "claim/reader.hpp"
 #include "proof/argument.hpp"
 #include "proof/evidence.hpp"
+#include "proof/statement.hpp"
 #include "term/evaluation.hpp"
 #include "term/text.hpp"
 
@@ -21,13 +21,6 @@ using algebra::RationalFunction;
 namespace {
 
 constexpr long first_values = 12;
-
-Counterexample from_difference(const term::Difference& d, const std::string& what) {
-  const auto show = [](const term::Value& v) {
-    return v.number ? v.number->get_str() : "no value: " + v.why_not;
-  };
-  return {d.at, show(d.left), show(d.right), what};
-}
 
 class Builder {
  public:
@@ -46,8 +39,8 @@ class Builder {
                        "sum = sum (rule R8, common left multiple)");
     if (!make_terms()) return proof_;
     for (const claim::Assumption& a : claim_->assumptions)
-      if (names_running(*a.left) || names_running(*a.right))
-        return undecided("a condition on the running variable itself, at " + place_text(a.place),
+      if (names_symbol(*a.left, claim_->running) || names_symbol(*a.right, claim_->running))
+        return undecided("a condition on the running variable itself, at " + place_text(*claim_, a.place),
                          "R6: an induction that stays inside the condition");
     if (claim_->is_question()) return answer_question();
     if (claim_->is_equality()) return prove_equality();
@@ -90,64 +83,8 @@ class Builder {
 
   bool make_terms() {
     stage("terms");
-    term::Setting setting = term::make_setting(claim_);
-    proof_.symbols = setting.symbols;
-    std::optional<AuthorRange> range;
-    term::Facts region = setting.from(proof_.from);
-    if (setting.has_index) {
-      const claim::Range& r = claim_->sum.over[0];
-      for (const claim::Bound* b : {&r.low, &r.high})
-        if (b->kind != claim::Bound::Kind::finite) {
-          undecided("a range without a finite end needs a proved finite one",
-                    "R11: infinite ranges, at " + place_text(b->place));
-          return false;
-        }
-      const std::optional<term::End> low = term::make_end(setting, r.low, false);
-      const std::optional<term::End> high = term::make_end(setting, r.high, true);
-      if (!low || !high) {
-        undecided("an end of the range nests floor in a way that is not linear",
-                  "R9: residues, at " + place_text(r.place));
-        return false;
-      }
-      for (const term::End* end : {&*low, &*high})
-        if (end->inside.size() == 1)
-          for (const term::Affine& form : end->inside[0]) region.add(form);
-      range = AuthorRange{*low, *high};
-    }
-    term::Conversion summand = term::convert(setting, region, claim_->sum.summand);
-    std::optional<term::Conversion> closed;
-    if (claim_->closed) closed = term::convert(setting, setting.from(proof_.from), claim_->closed);
-    terms_ = std::make_unique<Terms>(Terms{std::move(setting), range, region, proof_.from,
-                                           std::move(summand), std::move(closed)});
-    return conversions_settled();
-  }
-
-  bool conversions_settled() {
-    const term::Requirement* open = terms_->summand.open();
-    const char* what = "summand";
-    if (open == nullptr && terms_->closed) {
-      open = terms_->closed->open();
-      what = "closed form";
-    }
-    if (open == nullptr) {
-      if (terms_->summand.products.empty()) {
-        undecided("the summand is identically zero", "nothing to sum");
-        return false;
-      }
-      return true;
-    }
-    assemble_conversion(*terms_, proof_);
-    const std::string condition = open->nonnegative
-                                      ? term::text(terms_->setting, *open->nonnegative) + " >= 0"
-                                      : open->nonzero->to_string() + " != 0";
-    undecided(fmt::format("the {} needs {} at {}", what, condition, place_text(open->place)),
-              "R3 or R4, or a hypothesis of the author");
-    return false;
-  }
-
-  [[nodiscard]] std::string place_text(claim::Place place) const {
-    const claim::Source::Position p = claim_->source->position(place.offset);
-    return fmt::format("{}:{}:{}", claim_->source->name, p.line, p.column);
+    terms_ = convert_terms(claim_, proof_);
+    return terms_ != nullptr;
   }
 
   // ------------------------------------------------------------ the three kinds of claim
@@ -165,7 +102,7 @@ class Builder {
     proof_.evidence_brought = true;
     if (brought.draft.right_side)
       if (const term::Requirement* open = brought.draft.right_side->open())
-        return undecided("the right side needs a condition at " + place_text(open->place),
+        return undecided("the right side needs a condition at " + place_text(*claim_, open->place),
                          "a hypothesis of the author");
     while (equality && brought.draft.coefficients.size() > 1 &&
            brought.draft.coefficients.back().is_zero())
@@ -191,7 +128,7 @@ class Builder {
       }
     }
     if (equality) return equality_from(brought.draft);
-    state_recurrence(brought);
+    if (const auto stated = cleared_statement(*terms_, *claim_, brought)) proof_.claim = stated;
     const Attempt tried = attempt(*terms_, brought.draft, false, options_.deadline);
     return report(tried, false);
   }
@@ -278,7 +215,7 @@ class Builder {
     // A first pass tells the right side; it fails at the ends when that is not 0.
     Attempt probe = attempt(*terms_, evidence, false, options_.deadline);
     if (probe.outcome == Attempt::Outcome::complete && probe.draft.right_side_text == "0") {
-      state_found(evidence, "0", nullptr);
+      proof_.claim = with_recurrence(*claim_, evidence.coefficients, "0");
       return probe;
     }
     if (probe.outcome == Attempt::Outcome::ends_fail ||
@@ -302,72 +239,17 @@ class Builder {
   }
 
   Attempt conclude_question(EvidenceDraft evidence, const std::string& right_side) {
-    const claim::ExpressionPtr b = parse(right_side);
-    evidence.right_side = term::convert(terms_->setting, terms_->setting.from(proof_.from), b);
+    const auto stated = with_recurrence(*claim_, evidence.coefficients, right_side);
+    evidence.right_side = term::convert(terms_->setting, terms_->setting.from(proof_.from),
+                                        stated->evidence.right_side);
     if (evidence.right_side->open() != nullptr) {
       Attempt stuck;
       stuck.why = "the right side " + right_side + " has no value on the whole range";
       stuck.rule = "R5: a recurrence from a later n on";
       return stuck;
     }
-    state_found(evidence, right_side, b);
+    proof_.claim = stated;
     return attempt(*terms_, evidence, false, options_.deadline);
-  }
-
-  [[nodiscard]] claim::ExpressionPtr parse(const std::string& text) const {
-    std::vector<std::string> names{claim_->running};
-    for (const claim::Parameter& p : claim_->parameters) names.push_back(p.name);
-    const claim::Source source{"recurrence", text};
-    return claim::parse_expression(source, {0, text.size()}, names);
-  }
-
-  /// The recurrence as the theorem states it.
-  void state_found(const EvidenceDraft& evidence, const std::string& right_side,
-                   const claim::ExpressionPtr& b) {
-    auto stated = std::make_shared<claim::Claim>(*claim_);
-    stated->evidence.recurrence.clear();
-    for (const Poly& a : evidence.coefficients)
-      stated->evidence.recurrence.push_back(parse(term::claim_text(algebra::factor(a))));
-    stated->evidence.right_side = b ? b : parse(right_side);
-    proof_.claim = stated;
-  }
-
-  /// A claimed recurrence with denominators is stated with them cleared.
-  void state_recurrence(BroughtEvidence& brought) {
-    bool divides = false;
-    for (const claim::ExpressionPtr& e : claim_->evidence.recurrence)
-      divides = divides || has_division(*e);
-    if (!divides) return;
-    auto stated = std::make_shared<claim::Claim>(*claim_);
-    stated->evidence.recurrence.clear();
-    for (const Poly& a : brought.draft.coefficients)
-      stated->evidence.recurrence.push_back(parse(term::claim_text(algebra::factor(a))));
-    if (claim_->evidence.right_side && !brought.cleared.is_one()) {
-      const std::string text = fmt::format("({})*({})", brought.cleared.to_string(),
-                                           claim::to_text(*claim_->evidence.right_side));
-      stated->evidence.right_side = parse(text);
-      brought.draft.right_side = term::convert(
-          terms_->setting, terms_->setting.from(proof_.from), stated->evidence.right_side);
-      if (brought.draft.right_side->products.empty()) brought.draft.right_side.reset();
-    }
-    proof_.claim = stated;
-  }
-
-  [[nodiscard]] bool names_running(const claim::Expression& e) const {
-    if (e.operation == claim::Operation::symbol && e.name == claim_->running) return true;
-    for (const claim::ExpressionPtr& c : e.children)
-      if (names_running(*c)) return true;
-    return false;
-  }
-
-  static bool has_division(const claim::Expression& e) {
-    if (e.operation == claim::Operation::divide) return true;
-    if (e.operation == claim::Operation::power &&
-        e.children[1]->operation == claim::Operation::negate)
-      return true;
-    for (const claim::ExpressionPtr& c : e.children)
-      if (has_division(*c)) return true;
-    return false;
   }
 
   /// Without an index the sum is the summand: order 0, or the order-1 recurrence of a question.
@@ -380,7 +262,7 @@ class Builder {
         return undecided("a question needs one hypergeometric term", "");
       const algebra::Factored q = pointwise_quotients().by_running;
       evidence.coefficients = {-q.numerator(ring), q.denominator(ring)};
-      state_found(evidence, "0", nullptr);
+      proof_.claim = with_recurrence(*claim_, evidence.coefficients, "0");
     }
     return report(attempt(*terms_, evidence, equality, options_.deadline), equality);
   }

@@ -25,13 +25,6 @@ RationalFunction rational(const Terms& terms, const claim::ExpressionPtr& e, con
   return *value;
 }
 
-Counterexample from_difference(const term::Difference& d, const std::string& what) {
-  const auto show = [](const term::Value& v) {
-    return v.number ? v.number->get_str() : "no value: " + v.why_not;
-  };
-  return {d.at, show(d.left), show(d.right), what};
-}
-
 std::string leading_monomials(const Polynomial& residue) {
   const std::vector<algebra::Monomial> all = residue.to_terms();
   const std::size_t shown = std::min<std::size_t>(3, all.size());
@@ -124,6 +117,13 @@ BroughtEvidence read_evidence(const Terms& terms, const claim::Claim& claim) {
   }
   out.draft.brought = true;
   return out;
+}
+
+Counterexample from_difference(const term::Difference& d, const std::string& what) {
+  const auto show = [](const term::Value& v) {
+    return v.number ? v.number->get_str() : "no value: " + v.why_not;
+  };
+  return {d.at, show(d.left), show(d.right), what};
 }
 
 claim::Claim as_recurrence_claim(const claim::Claim& claim) {

@@ -7,6 +7,7 @@
 
 #include "proof/argument.hpp"
 #include "search/search.hpp"
+#include "term/evaluation.hpp"
 
 namespace sumwright::proof::building {
 
@@ -31,6 +32,10 @@ struct BroughtEvidence {
 void diagnose_identity(const Terms& terms, const claim::Claim& claim, const EvidenceDraft& evidence,
                        const algebra::Polynomial& residue, const algebra::Deadline& deadline,
                        Proof& proof);
+
+/// A difference found by evaluation, as part of a Proof.
+[[nodiscard]] Counterexample from_difference(const term::Difference& difference,
+                                             const std::string& what);
 
 /// The claim with this recurrence as its claim (no equality), for evaluation at points.
 [[nodiscard]] claim::Claim as_recurrence_claim(const claim::Claim& claim);

@@ -87,7 +87,8 @@ TEST(Arguments, Refusals) {
     std::string message;
   } cases[] = {
       {{}, "A subcommand is required"},
-      {{"prove", "x.toml"}, "prove"},
+      {{"prove", "x.toml"}, "no command 'prove'; there are 'find', 'check', 'export' or 'replay'"},
+      {{"chekc", "x.toml"}, "no command 'chekc'; did you mean 'check'?"},
       {{"check"}, "FILE is required"},
       {{"check", "a.toml", "b.toml"}, "b.toml"},
       {{"check", "a.toml", "--out", "x"}, "--out"},

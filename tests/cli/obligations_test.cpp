@@ -72,9 +72,9 @@ TEST(Obligations, AlteredPartsAreNamed) {
   const TestFolder folder;
   folder.write("c.toml", squares_claim());
   const std::string text = obligations(folder, "c.toml");
-  expect_refused(folder, replaced(text, "coefficient 1 = n + 1", "coefficient 1 = n + 2"),
-                 "recurrence: `coefficient 1`: the file has 'n + 2', the claim gives 'n + 1'");
-  expect_refused(folder, replaced(text, "\nnormal form = n^3", "\nnormal form = 2*n^3"), "DO NOT HOLD");
+  expect_refused(folder, replaced(text, "\ncoefficient 1 = (n + 1)", "\ncoefficient 1 = (n + 2)"),
+                 "recurrence: `coefficient 1`: the file has '(n + 2)', the claim gives '(n + 1)'");
+  expect_refused(folder, replaced(text, "\nnormal form = 3*n^3", "\nnormal form = 2*n^3"), "DO NOT HOLD");
   expect_refused(folder, replaced(text, "c1: [factorial argument] n >= 0", "c1: [factorial argument] n >= 1"),
                  "conditions: `c1`");
 }

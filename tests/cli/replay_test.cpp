@@ -147,9 +147,14 @@ TEST_F(Replay, FilesThatAreNotListedAreNotRun) {
 // A whole export by a stranger: hashes are right, scripts reach out of the proof.
 TEST_F(Replay, ScriptsThatReachOutAreNotRun) {
   json record = json::parse(read_file(folder_.path() / "out/record.json"));
-  for (const std::string sentence :
-       {"Redirect \"/etc/x\" Print nat.", "Cd \"/\".", "Declare ML Module \"x\".",
-        "Add LoadPath \"/\" as X.", "Extraction (* *) \"x.ml\" plus.", "Load \"/etc/x\"."}) {
+  const std::pair<std::string, std::string> cases[] = {
+      {"Redirect \"/etc/x\" Print nat.", "Redirect"},
+      {"Cd (* *) \"/\".", "Cd \"...\""},
+      {"Declare ML Module \"x\".", "Declare ML"},
+      {"Add LoadPath \"/\" as X.", "LoadPath \"...\""},
+      {"Separate Extraction plus.", "Extraction"},
+      {"Load \"/etc/x\".", "Load \"...\""}};
+  for (const auto& [sentence, command] : cases) {
     const std::string text = "(* \"Redirect\" *) " + sentence + "\n";
     folder_.write("out/coq/Claim.v", text);
     for (json& file : record.at("files")) {
@@ -158,7 +163,7 @@ TEST_F(Replay, ScriptsThatReachOutAreNotRun) {
     folder_.write("out/record.json", record.dump());
     const Outcome outcome = replay();
     EXPECT_EQ(outcome.status, 1) << sentence;
-    EXPECT_NE(outcome.err.find("coq/Claim.v contains `" + sentence.substr(0, 2)), std::string::npos)
+    EXPECT_NE(outcome.err.find("coq/Claim.v contains `" + command + "`"), std::string::npos)
         << outcome.err;
   }
 }

@@ -73,4 +73,4 @@ def latex(context):
     report.start("appendices in one paper")
     if len(exports) >= 2:
         report.case("two", paper(context, [exports[0], exports[-1]], "two", r"\appendix"))
-        report.case(f"all {len(exports)}", paper(context, exports, "all"))
+        report.case(f"all {len(exports)}", paper(context, exports, "all", r"\raggedbottom"))

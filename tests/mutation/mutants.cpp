@@ -140,8 +140,9 @@ class Maker {
 
  private:
   template <typename Change>
-  void add(Part part, const std::string& change, const Change& edit) {
-    Mutant m{part, change, original_};
+  void add(Part part, const std::string& change, const ExpressionPtr& before,
+           const ExpressionPtr& after, const Change& edit) {
+    Mutant m{part, change, original_, before, after};
     edit(m.claim);
     out_.push_back(std::move(m));
   }
@@ -150,18 +151,17 @@ class Maker {
     const auto& all = original_.evidence.recurrence;
     for (std::size_t i = 0; i < all.size(); ++i)
       for (const Variant& v : all_variants(original_, all[i]))
-        add(Part::recurrence, "a_" + std::to_string(i) + ": " + v.change,
+        add(Part::recurrence, "a_" + std::to_string(i) + ": " + v.change, all[i], v.expression,
             [&](claim::Claim& c) { c.evidence.recurrence[i] = v.expression; });
     if (all.size() < 2) return;
-    add(Part::recurrence, "first two coefficients exchanged", [&](claim::Claim& c) {
-      std::swap(c.evidence.recurrence[0], c.evidence.recurrence[1]);
-    });
+    add(Part::recurrence, "first two coefficients exchanged", all[0], all[1],
+        [&](claim::Claim& c) { std::swap(c.evidence.recurrence[0], c.evidence.recurrence[1]); });
   }
 
   void certificate() {
     for (const auto& [index, r] : original_.evidence.certificate)
       for (const Variant& v : all_variants(original_, r))
-        add(Part::certificate, "R: " + v.change,
+        add(Part::certificate, "R: " + v.change, r, v.expression,
             [&](claim::Claim& c) { c.evidence.certificate[index] = v.expression; });
   }
 
@@ -177,14 +177,14 @@ class Maker {
       variants = {{"0 -> 1", literal(1)}, {"0 -> -1", literal(-1)}, {"0 -> n", n}};
     }
     for (const Variant& v : variants)
-      add(Part::right_side, "b: " + v.change,
+      add(Part::right_side, "b: " + v.change, original_.evidence.right_side, v.expression,
           [&](claim::Claim& c) { c.evidence.right_side = v.expression; });
   }
 
   void closed() {
     if (!original_.closed) return;
     for (const Variant& v : all_variants(original_, original_.closed))
-      add(Part::closed, "closed form: " + v.change,
+      add(Part::closed, "closed form: " + v.change, original_.closed, v.expression,
           [&](claim::Claim& c) { c.closed = v.expression; });
   }
 
@@ -200,7 +200,8 @@ class Maker {
           for (const long by : {1L, -1L})
             variants.push_back({by > 0 ? "one more" : "one less", plus(b.value, by)});
         for (const Variant& v : variants)
-          add(Part::range, (high ? "upper bound: " : "lower bound: ") + v.change,
+          add(Part::range, (high ? "upper bound: " : "lower bound: ") + v.change, b.value,
+              v.expression,
               [&](claim::Claim& c) {
                 claim::Range& changed = c.sum.over[i];
                 (high ? changed.high : changed.low).value = v.expression;
@@ -211,7 +212,7 @@ class Maker {
   void from() {
     for (const long by : {-2L, -1L, 1L, 2L})
       add(Part::from, "from " + std::string(by < 0 ? "- " : "+ ") + std::to_string(std::abs(by)),
-          [&](claim::Claim& c) { c.from += by; });
+          nullptr, nullptr, [&](claim::Claim& c) { c.from += by; });
   }
 
   const claim::Claim& original_;

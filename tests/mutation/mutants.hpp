@@ -15,8 +15,10 @@ inline constexpr std::size_t kParts = 6;
 
 struct Mutant {
   Part part = Part::recurrence;
-  std::string change;  ///< "a_1: literal 2 -> 3"
+  std::string change;  ///< "a_1: literal 2 + 1"
   claim::Claim claim;
+  claim::ExpressionPtr before;  ///< the changed expression; null when it was absent, or for `from`
+  claim::ExpressionPtr after;
 };
 
 /// One change each: a coefficient, a sign, an exponent, a shift of a symbol, a bound, `from`, the

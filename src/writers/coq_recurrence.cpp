@@ -1,0 +1,209 @@
+// Ranges and ends: the sum at n, n + 1, ... over one common range, explicit points, and the recurrence of
+// the sum with what remains.
+
+#include <fmt/format.h>
+
+#include "writers/coq_section_text.hpp"
+#include "writers/coq_statement.hpp"
+
+namespace sumwright::writers::coq {
+namespace {
+
+class RecurrenceText : private SectionText {
+ public:
+  explicit RecurrenceText(const proof::Proof& proof) : SectionText(proof) {}
+
+  std::string run() {
+    if (names_.index) {
+      out_ += "(** ** Ranges: the sum at n, n + 1, ... over one common range *)\n\n";
+      for (const proof::RangeStep& r : proof_.ranges) range(r);
+    } else {
+      coefficient_definitions();
+    }
+    remainder();
+    return out_;
+  }
+
+ private:
+  void coefficient_definitions() {
+    const Scope polynomials = polynomial_scope(proof_);
+    const claim::Evidence& evidence = proof_.claim->evidence;
+    if (equality_) {
+      out_ += fmt::format("Definition a0 ({} : K) : K := inj 1.\n\n", names_.n);
+      return;
+    }
+    // Without an index the coefficients are the claim's own.
+    for (std::size_t i = 0; i < evidence.recurrence.size(); ++i)
+      out_ += fmt::format("Definition a{} ({} : K) : K := ({})%K.\n", i, names_.n,
+                          polynomial_coefficient(*evidence.recurrence[i], polynomials));
+    out_ += "\n";
+  }
+
+  /// The author's coefficient as a polynomial in a variable of type K.
+  [[nodiscard]] std::string polynomial_coefficient(const claim::Expression& e, const Scope&) const {
+    std::string text = field_text(proof_, e);
+    const std::string old = fmt::format("(inj {})", names_.n);
+    for (std::size_t at = text.find(old); at != std::string::npos; at = text.find(old, at))
+      text.replace(at, old.size(), names_.n);
+    return text;
+  }
+
+  [[nodiscard]] std::string moved(proof::Affine form, long by) const {
+    form.constant += by;
+    return affine(form, scope_);
+  }
+
+  // ---------------------------------------------------------------- ranges
+
+  void range(const proof::RangeStep& r) {
+    const proof::Telescoping& t = *proof_.telescoping;
+    const claim::Range& author = proof_.claim->sum.over[0];
+    const std::string n = shifted(names_.n, r.shift);
+    const std::string low = affine(t.low, scope_);
+    const std::string high = affine(t.high, scope_);
+    const std::string lo = at_shift(*author.low.value, r.shift);
+    const std::string hi = at_shift(*author.high.value, r.shift);
+    const std::string wide_low = moved(t.low, -static_cast<long>(r.low_points));
+    const std::string wide_high = moved(t.high, static_cast<long>(r.high_points));
+    const std::string f = fmt::format("(fun {} : Z => {})%K", names_.k, f_pieces(n, names_.k));
+    std::string right = fmt::format("sum ({}) ({}) {}", low, high, f);
+    std::string split;
+    for (unsigned p = r.high_points; p >= 1; --p) {
+      const std::string rest_high = moved(t.high, static_cast<long>(p) - 1);
+      const std::string here = moved(t.high, static_cast<long>(p));
+      split += fmt::format("  rewrite (sum_last K ({0}) ({1}) ({2}) ({1}) {3}) by lia.\n", wide_low, here,
+                           rest_high, f);
+      right += fmt::format(" + ({})", f_pieces(n, bracketed(here)));
+    }
+    for (unsigned p = r.low_points; p >= 1; --p) {
+      const std::string rest_low = moved(t.low, 1 - static_cast<long>(p));
+      const std::string here = moved(t.low, -static_cast<long>(p));
+      split += fmt::format("  rewrite (sum_first K ({0}) ({1}) ({2}) ({0}) {3}) by lia.\n", here, high,
+                           rest_low, f);
+      right += fmt::format(" + ({})", f_pieces(n, bracketed(here)));
+    }
+    out_ += fmt::format("Lemma range_{0} ({1} : Z) : {2}\n  (left_side {3}%Z = {4})%K.\nProof.\n"
+                        "  intros Hn. unfold left_side.\n"
+                        "  transitivity (sum {5} {6} {7}).\n"
+                        "  {{ apply (sum_ext K); [lia | lia |]. intros {8} Hk. "
+                        "apply (summand_terms {3} {8}); index. }}\n",
+                        r.shift, names_.n, beyond_, n, right, lo, hi, f, names_.k);
+    if (r.below || r.above)
+      out_ += fmt::format("  rewrite (sum_same K {0} {1} ({2}) ({3}) {4}).\n  2:{{ {5} }}\n  2:{{ {6} }}\n",
+                          lo, hi, wide_low, wide_high, f, outside(r), outside(r));
+    else
+      out_ += fmt::format("  transitivity (sum ({0}) ({1}) {2}); [apply (sum_ext K); [lia | lia | "
+                          "reflexivity]|].\n", wide_low, wide_high, f);
+    out_ += split;
+    out_ += "  cbv beta. ring.\nQed.\n\n";
+  }
+
+  /// The author's bound with n shifted, as text.
+  [[nodiscard]] std::string at_shift(const claim::Expression& bound, unsigned by) const {
+    const std::string text = integer_text(proof_, bound);
+    if (by == 0) return text;
+    return replace_word(text, names_.n, shifted(names_.n, by));
+  }
+
+  /// A point in one range but not in the other: below or above, F vanishes or there is none.
+  [[nodiscard]] std::string outside(const proof::RangeStep& r) const {
+    return fmt::format("intros {} Hk Ho. destruct Ho as [Ho|Ho]; [{}|{}].", names_.k,
+                       vanish(r.below, r.shift), vanish(r.above, r.shift));
+  }
+
+  [[nodiscard]] std::string vanish(const std::optional<proof::Vanishing>& v, unsigned shift) const {
+    if (!v) return "exfalso; index";
+    std::string unfold;
+    std::string rewrites;
+    const Scope scope = shift == 0 ? scope_ : with(scope_, 0, fmt::format("{} + {}", names_.n, shift));
+    for (std::size_t j = 0; j < v->atoms.size(); ++j) {
+      unfold += fmt::format("{}F{}", j == 0 ? "" : ", ", j + 1);
+      const std::string argument = original_argument(v->atoms[j], j, shift, scope);
+      rewrites += fmt::format("rewrite (rfact_neg K {}) by index; ", argument);
+    }
+    return fmt::format("unfold {}; {}ring", unfold, rewrites);
+  }
+
+  /// The text that the shifted atom's argument has after unfolding the piece.
+  [[nodiscard]] std::string original_argument(const proof::Atom& image, std::size_t piece,
+                                              unsigned shift, const Scope& scope) const {
+    proof::Affine n;
+    n.coefficients.assign(proof_.symbols.size(), 0);
+    n.coefficients[0] = 1;
+    n.constant = static_cast<long>(shift);
+    for (const auto& [a, e] : proof_.summand.products[piece].atoms) {
+      if (a.kind != proof::AtomKind::reciprocal_factorial) continue;
+      const proof::Affine moved = substitute(a.argument, {{0, n}});
+      if (moved.coefficients == image.argument.coefficients && moved.constant == image.argument.constant)
+        return bracketed(affine(a.argument, scope));
+    }
+    return bracketed(affine(image.argument, scope_));
+  }
+
+  // ---------------------------------------------------------------- the recurrence of the sum
+
+  [[nodiscard]] std::vector<std::string> explicit_texts() const {
+    std::vector<std::string> out;
+    if (!names_.index) {
+      for (unsigned i = 0; i < coefficients_; ++i)
+        out.push_back(fmt::format("{} * ({})", scale(i), f_pieces(shifted(names_.n, i), "")));
+      return out;
+    }
+    const proof::Telescoping& t = *proof_.telescoping;
+    for (const proof::RangeStep& r : proof_.ranges) {
+      const std::string n = shifted(names_.n, r.shift);
+      for (unsigned p = 1; p <= r.low_points; ++p)
+        out.push_back(fmt::format("{} * ({})", scale(r.shift),
+                                  f_pieces(n, bracketed(moved(t.low, -static_cast<long>(p))))));
+      for (unsigned p = 1; p <= r.high_points; ++p)
+        out.push_back(fmt::format("{} * ({})", scale(r.shift),
+                                  f_pieces(n, bracketed(moved(t.high, static_cast<long>(p))))));
+    }
+    return out;
+  }
+
+  void remainder() {
+    out_ += "(** ** The recurrence of the sum, with what remains at the ends *)\n\n";
+    std::string body;
+    const bool ends = names_.index && !proof_.telescoping->certificate.terms.empty();
+    if (ends) {
+      const std::string low = bracketed(affine(proof_.telescoping->low, scope_));
+      const std::string high = bracketed(affine(proof_.telescoping->high, scope_));
+      body = fmt::format("up (inj {0}) (inj {1}) * c (inj {0}) (inj {1} + inj 1) * base {0} {1} - "
+                         "down (inj {0}) (inj {2}) * c (inj {0}) (inj {2}) * base {0} {2}",
+                         names_.n, high, low);
+    }
+    for (const std::string& t : explicit_texts()) body += (body.empty() ? "" : "\n   + ") + t;
+    if (body.empty()) body = "inj 0";
+    out_ += fmt::format("Definition remainder ({} : Z) : K :=\n  ({})%K.\n\n", names_.n, body);
+    std::string script;
+    if (names_.index) {
+      std::string summed;
+      std::string more;
+      for (const proof::RangeStep& r : proof_.ranges) {
+        script += fmt::format("  rewrite (range_{} {} Hn).\n", r.shift, names_.n);
+        summed += fmt::format("{}{} * sum ({}) ({}) (fun {} : Z => {})", summed.empty() ? "" : " + ",
+                              scale(r.shift), affine(proof_.telescoping->low, scope_),
+                              affine(proof_.telescoping->high, scope_), names_.k,
+                              f_pieces(shifted(names_.n, r.shift), names_.k));
+      }
+      for (const std::string& t : explicit_texts()) more += " + " + t;
+      script += fmt::format("  transitivity ({}{})%K; [ring|].\n  rewrite (summed {} Hn). unfold "
+                            "remainder{}. ring.\n", summed, more, names_.n, ends ? "" : ", c");
+    } else {
+      script = "  unfold left_side, remainder.\n";
+      for (unsigned i = 0; i < coefficients_; ++i)
+        script += fmt::format("  rewrite (summand_terms {}) by lia.\n", shifted(names_.n, i));
+      script += "  ring.\n";
+    }
+    out_ += fmt::format("Lemma left_recurrence ({0} : Z) : {1}\n  ({2} = remainder {0})%K.\nProof.\n"
+                        "  intros Hn.\n{3}Qed.\n\n",
+                        names_.n, beyond_, combination("left_side"), script);
+  }
+};
+
+}  // namespace
+
+std::string recurrence_section(const proof::Proof& proof) { return RecurrenceText(proof).run(); }
+
+}  // namespace sumwright::writers::coq

@@ -1,0 +1,89 @@
+// What the sections about the sum share: how its terms, coefficients and shifts are written.
+#pragma once
+
+#include <fmt/format.h>
+
+#include <cctype>
+#include <string>
+
+#include "proof/proof.hpp"
+#include "writers/coq_sections.hpp"
+#include "writers/coq_text.hpp"
+
+namespace sumwright::writers::coq {
+
+/// Base of the section writers: the names and texts that they have in common, and the text made so far.
+class SectionText {
+ protected:
+  explicit SectionText(const proof::Proof& proof)
+      : proof_(proof),
+        scope_(plain_scope(proof)),
+        names_(names(proof)),
+        threshold_(bracketed(std::to_string(proof.threshold))),
+        from_(bracketed(std::to_string(proof.from))),
+        beyond_(fmt::format("{} <= {} ->", threshold_, names_.n)),
+        equality_(proof.claim->is_equality()),
+        coefficients_(proof.order + 1) {}
+
+  /// `F1 n k + F2 n k + ...`
+  [[nodiscard]] std::string pieces(const std::string& name, std::size_t count,
+                                   const std::string& arguments) const {
+    std::string out;
+    for (std::size_t j = 0; j < count; ++j)
+      out += fmt::format("{}{}{} {}", out.empty() ? "" : " + ", name, j + 1, arguments);
+    return out.empty() ? "inj 0" : out;
+  }
+
+  [[nodiscard]] std::string f_pieces(const std::string& n, const std::string& k) const {
+    return pieces("F", proof_.summand.products.size(),
+                  names_.index ? fmt::format("{}%Z {}", n, k) : n + "%Z");
+  }
+
+  /// The factor of S(n+i) in the recurrence.
+  [[nodiscard]] std::string scale(unsigned i) const {
+    if (!names_.index) return fmt::format("a{} (inj {})", i, names_.n);
+    return fmt::format("weight (inj {0}) * a{1} (inj {0})", names_.n, i);
+  }
+
+  /// Its left side for a sequence.
+  [[nodiscard]] std::string combination(const std::string& side) const {
+    std::string out;
+    for (unsigned i = 0; i < coefficients_; ++i)
+      out += fmt::format("{}{} * {} {}{}", out.empty() ? "" : " + ", scale(i), side,
+                         shifted(names_.n, i), i == 0 ? "" : "%Z");
+    return out;
+  }
+
+  /// Every occurrence of the identifier `word`.
+  static std::string replace_word(const std::string& text, const std::string& word,
+                                  const std::string& with) {
+    std::string out;
+    std::string token;
+    const auto flush = [&] {
+      out += token == word ? with : token;
+      token.clear();
+    };
+    for (char ch : text) {
+      if (std::isalnum(static_cast<unsigned char>(ch)) != 0 || ch == '_') {
+        token += ch;
+        continue;
+      }
+      flush();
+      out += ch;
+    }
+    flush();
+    return out;
+  }
+
+  const proof::Proof& proof_;
+  Scope scope_;
+  Names names_;
+  std::string threshold_;
+  std::string from_;
+  std::string beyond_;
+  bool equality_ = false;
+  unsigned coefficients_ = 1;
+  std::string out_;
+};
+
+}  // namespace sumwright::writers::coq
