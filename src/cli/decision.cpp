@@ -26,6 +26,22 @@ class Stopwatch {
   std::chrono::steady_clock::time_point start_ = std::chrono::steady_clock::now();
 };
 
+// A run that ends before its terms are made has no symbols yet; exports list them all the same.
+void complete_symbols(proof::Proof& proof) {
+  if (!proof.symbols.empty()) return;
+  const claim::Claim& claim = *proof.claim;
+  proof.symbols.push_back({claim.running, proof::SymbolKind::running});
+  for (const claim::Range& range : claim.sum.over) {
+    proof.symbols.push_back({range.index, proof::SymbolKind::index});
+  }
+  if (claim.sum.over.empty()) proof.symbols.push_back({"", proof::SymbolKind::index});
+  for (const claim::Parameter& parameter : claim.parameters) {
+    proof.symbols.push_back({parameter.name, parameter.ring == claim::Parameter::Ring::integers
+                                                 ? proof::SymbolKind::integer_parameter
+                                                 : proof::SymbolKind::rational_parameter});
+  }
+}
+
 [[nodiscard]] proof::Proof stopped(const std::shared_ptr<const claim::Claim>& claim,
                                    const std::string& reason, const std::string& settle) {
   proof::Proof out;
@@ -34,6 +50,7 @@ class Stopwatch {
   out.verdict = proof::Verdict::undecided;
   out.reason = reason;
   out.would_settle = settle;
+  complete_symbols(out);
   return out;
 }
 
@@ -56,6 +73,7 @@ class Decider {
     build();
     if (out_.proof.verdict == proof::Verdict::established) audit();
     if (out_.proof.verdict == proof::Verdict::undecided && !claim_->is_question()) look_for_point();
+    complete_symbols(out_.proof);
     return std::move(out_);
   }
 
