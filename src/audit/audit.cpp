@@ -79,7 +79,7 @@ std::string find_counterexample(const claim::Claim& claim, const AuditOptions& o
     for (std::size_t sample = 0; sample < samples.size(); ++sample) {
       if (options.check_time) options.check_time();
       try {
-        const std::string found = difference_at(claim, author, sample, n);
+        std::string found = difference_at(claim, author, sample, n);
         if (!found.empty()) return found;
       } catch (const TooLarge&) {
         continue;  // beyond what is evaluated: no opinion at this point

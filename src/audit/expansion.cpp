@@ -10,6 +10,7 @@ namespace sumwright::audit {
 
 std::vector<GiNaC::ex> make_symbols(const std::vector<std::string>& names) {
   std::vector<GiNaC::ex> out;
+  out.reserve(names.size());
   for (const std::string& name : names) out.emplace_back(GiNaC::symbol(name.empty() ? "_" : name));
   return out;
 }
@@ -36,6 +37,7 @@ GiNaC::ex to_ex(const proof::Factored& factored, const std::vector<GiNaC::ex>& a
 std::string leading_monomials(const GiNaC::ex& expanded, const std::vector<GiNaC::ex>& symbols) {
   const auto degrees_of = [&](const GiNaC::ex& term) {
     std::vector<int> out;
+    out.reserve(symbols.size());
     for (const GiNaC::ex& symbol : symbols) out.push_back(term.degree(symbol));
     return out;
   };

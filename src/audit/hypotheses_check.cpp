@@ -124,7 +124,7 @@ void check_original(const Context& context, Check& check) {
   need(used.closed == original->closed && used.is_equality() == original->is_equality(),
        "the right side of the equality");
   need(hypothesis_texts(used) == hypothesis_texts(*original), "the hypotheses");
-  need(original->is_question() || used.evidence.recurrence.size() >= 1 || used.is_equality(),
+  need(original->is_question() || !used.evidence.recurrence.empty() || used.is_equality(),
        "the recurrence");
 }
 

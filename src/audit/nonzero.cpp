@@ -114,7 +114,7 @@ class Reason {
     }
     // factor = scale (x - value) for some nonzero scale
     const GiNaC::ex factor = to_ex(factor_.factor, symbols).expand();
-    const GiNaC::ex x_symbol = symbols[factor_.parameter];
+    const GiNaC::ex& x_symbol = symbols[factor_.parameter];
     const GiNaC::ex scale = factor.coeff(x_symbol, 1);
     if (!GiNaC::is_a<numeric>(scale) || scale.is_zero()) return "is not linear in the parameter";
     if (!(factor - scale * (x_symbol - value)).expand().is_zero())
@@ -175,7 +175,8 @@ void check_nonzero_at(const Context& context, Check& check, const proof::Nonzero
   }
   for (const proof::NonzeroFactor& factor : nonzero.factors) {
     const std::string flaw = Reason(context, factor).flaw();
-    check.expect(flaw.empty(), [&] { return what + ": a factor " + flaw; });
+    check.expect(flaw.empty(),
+                 [&] { return std::string(what).append(": a factor ").append(flaw); });
   }
   for (const Place& place : places)
     check.attempt([&] {

@@ -57,7 +57,7 @@ struct Search {
     found.back().set(parameter, value);
   }
 
-  void at(const claim::Expression& divisor, Point point) {
+  void at(const claim::Expression& divisor, const Point& point) {
     for (const claim::Parameter& parameter : claim.parameters) {
       if (parameter.ring != claim::Parameter::Ring::rationals || !mentions(divisor, parameter.name))
         continue;

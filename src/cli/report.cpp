@@ -33,6 +33,14 @@ using Json = nlohmann::ordered_json;
   return text.empty() ? "" : labelled(label, claim::printable(text));
 }
 
+// Long texts are for files, and for the lines that `find` prints.
+[[nodiscard]] std::string shortened(const std::string& text) {
+  constexpr std::size_t kShown = 400;
+  if (text.size() <= 2 * kShown) return text;
+  return fmt::format("{} ... ({} characters; `sumwright find` prints them all)", text.substr(0, kShown),
+                     text.size());
+}
+
 // Whether the text is a sum, which needs brackets as a factor.
 [[nodiscard]] bool is_sum(std::string_view text) {
   int depth = 0;
@@ -61,13 +69,13 @@ using Json = nlohmann::ordered_json;
 }
 
 [[nodiscard]] std::string recurrence_text(const proof::Proof& proof) {
-  std::string out = line("recurrence", recurrence_line(proof));
+  std::string out = line("recurrence", shortened(recurrence_line(proof)));
   if (out.empty() || proof.verdict == proof::Verdict::refuted) return out;
   std::string remark = proof.evidence_brought ? "brought by the author" : "found";
   if (proof.claim->is_equality()) {
     remark = fmt::format("for S({}), the sum on the left; {}", proof.claim->running, remark);
   }
-  return out + line("", remark) + line("certificate", proof.certificate_text);
+  return out + line("", remark) + line("certificate", shortened(proof.certificate_text));
 }
 
 [[nodiscard]] std::string audit_text(const audit::AuditReport& report) {

@@ -12,6 +12,7 @@
 #include <cstdio>
 #include <cstdlib>
 #include <cstring>
+#include <exception>
 #include <new>
 
 namespace sumwright::cli {
@@ -41,6 +42,22 @@ void* reallocate(void* old, std::size_t, std::size_t size) {
 }
 void release(void* memory, std::size_t) { std::free(memory); }
 
+// Whether a moderate piece of memory can still be had.
+[[nodiscard]] bool memory_is_short() {
+  void* probe = std::malloc(std::size_t{32} << 20U);
+  std::free(probe);
+  return probe == nullptr;
+}
+
+// An exception met code that lets none pass: most often memory that ran out inside a library.
+[[noreturn]] void on_terminate() {
+  const bool memory = memory_is_short();
+  std::fputs(memory ? "sumwright: memory limit reached\n"
+                    : "sumwright: this is a fault of Sumwright: an exception where none may pass\n",
+             stderr);
+  std::_Exit(static_cast<int>(memory ? Status::undecided : Status::fault));
+}
+
 [[nodiscard]] sigset_t ending_signals() {
   sigset_t set;
   sigemptyset(&set);
@@ -54,6 +71,7 @@ void release(void* memory, std::size_t) { std::free(memory); }
 void prepare_process() {
   mp_set_memory_functions(allocate, reallocate, release);
   algebra::install_abort_hook();
+  std::set_terminate(on_terminate);
   struct sigaction action {};
   action.sa_handler = on_signal;
   sigemptyset(&action.sa_mask);

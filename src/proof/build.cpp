@@ -113,7 +113,8 @@ class Builder {
           terms_->setting.ring, shift_quotients(*terms_), brought.draft.coefficients,
           options_.deadline);
       if (!brought.draft.certificate) {
-        if (equality) return search_and_prove(true);
+        if (equality)
+          return recurrence_settled(brought.draft) ? search_and_prove(true) : proof_;
         return undecided("the claimed recurrence is not a telescoper of the summand",
                          "sum = sum: deducing it from the recurrence that `find` gives");
       }
@@ -133,6 +134,25 @@ class Builder {
     return report(tried, false);
   }
 
+  /// An equality that is proved without the author's recurrence says nothing of it: it must follow from the
+  /// closed form. Otherwise the proof says that it fails, or that it is not decided.
+  bool recurrence_settled(const EvidenceDraft& brought) {
+    const auto point =
+        term::refute(as_recurrence_claim(*claim_), first_values, 6, {}, options_.deadline);
+    if (!point && holds_for_closed_form(*terms_, brought)) return true;
+    if (!point) {
+      undecided("the recurrence brought as evidence is not shown by the summand or by the closed form",
+                "leaving the evidence out: the equality may be decided without it");
+      return false;
+    }
+    proof_.verdict = Verdict::refuted;
+    proof_.subject = Subject::evidence;
+    proof_.counterexample = from_difference(*point, "the recurrence of the sum");
+    proof_.reason = fmt::format("the recurrence is wrong: it fails at {} = {}",
+                                point->at.front().first, point->at.front().second.get_str());
+    return false;
+  }
+
   /// The author's recurrence is checked as a claim of its own, right side included; then the equality is
   /// proved from it without its common factor, or from a recurrence that is found.
   Proof equality_from(const EvidenceDraft& brought) {
@@ -140,6 +160,8 @@ class Builder {
     if (checked.outcome == Attempt::Outcome::ends_fail ||
         checked.outcome == Attempt::Outcome::initial_fails)
       return ends_fail(checked, true);
+    if (checked.outcome != Attempt::Outcome::complete && !recurrence_settled(brought))
+      return proof_;
     EvidenceDraft reduced = brought;
     reduced.right_side.reset();
     Poly common(terms_->setting.ring);

@@ -126,6 +126,20 @@ Counterexample from_difference(const term::Difference& d, const std::string& wha
   return {d.at, show(d.left), show(d.right), what};
 }
 
+bool holds_for_closed_form(const Terms& terms, const EvidenceDraft& evidence) {
+  const Factored one;
+  std::vector<TermDraft> all =
+      closed_terms(terms.setting, one, evidence.coefficients, terms.closed->products);
+  for (TermDraft& term : all) term.product.coefficient.constant = -term.product.coefficient.constant;
+  if (evidence.right_side)
+    for (TermDraft& term : right_side_terms(terms.setting, one, evidence.right_side->products))
+      all.push_back(std::move(term));
+  const term::Facts facts = terms.setting.from(terms.from);
+  std::string why;
+  const std::optional<BalanceDraft> made = balance(terms.setting, facts, std::move(all), why);
+  return made && made->holds() && all_hold(terms.setting, facts, made->needs(), &why);
+}
+
 claim::Claim as_recurrence_claim(const claim::Claim& claim) {
   claim::Claim out = claim;
   out.closed = nullptr;

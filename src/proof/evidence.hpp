@@ -37,6 +37,10 @@ void diagnose_identity(const Terms& terms, const claim::Claim& claim, const Evid
 [[nodiscard]] Counterexample from_difference(const term::Difference& difference,
                                              const std::string& what);
 
+/// Whether sum_i a_i C(n+i) = b is shown for the closed form C and every n >= from: with the equality, the
+/// author's recurrence then holds, whatever its certificate. `false` decides nothing.
+[[nodiscard]] bool holds_for_closed_form(const Terms& terms, const EvidenceDraft& evidence);
+
 /// The claim with this recurrence as its claim (no equality), for evaluation at points.
 [[nodiscard]] claim::Claim as_recurrence_claim(const claim::Claim& claim);
 

@@ -1,6 +1,7 @@
 // One ingredient of a right proof is changed; the checks that must notice do, and no others.
 #include <gtest/gtest.h>
 
+#include <cstdlib>
 #include <functional>
 #include <iostream>
 #include <set>
