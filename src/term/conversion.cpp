@@ -147,6 +147,7 @@ class Converter {
     Denominator d;
     d.node = node;
     d.expression = divisor;
+    record_power_merges(parts[0], exponent, node->place);
     d.as_product.multiply(parts[0], static_cast<unsigned>(exponent));
     invert(d, divisor->place);
     for (const Denominator& known : out_.denominators)
@@ -242,16 +243,22 @@ class Converter {
   Products power(const Products& base, unsigned long exponent, const Expression& e) {
     Products one{Product{}};
     if (base.size() == 1) {
-      for (unsigned long i = 1; i < exponent; ++i) {
-        Product before;
-        before.multiply(powers_only(base[0]), static_cast<unsigned>(i));
-        record_merges(before, powers_only(base[0]), e.place);
-      }
+      record_power_merges(base[0], exponent, e.place);
       one[0].multiply(base[0], static_cast<unsigned>(exponent));
       return one;
     }
     for (unsigned long i = 0; i < exponent; ++i) one = product(one, base, e);
     return one;
+  }
+
+  /// base^exponent by repeated multiplication.
+  void record_power_merges(const Product& base, unsigned long exponent, claim::Place place) {
+    const Product powers = powers_only(base);
+    for (unsigned long i = 1; i < exponent; ++i) {
+      Product before;
+      before.multiply(powers, static_cast<unsigned>(i));
+      record_merges(before, powers, place);
+    }
   }
 
   static Product powers_only(const Product& p) {

@@ -282,9 +282,10 @@ Requirement interval_nonvanishing(const Setting& setting, const Facts& facts, co
   Requirement r;
   r.kind = ConditionKind::nonvanishing;
   r.place = place;
-  Factored f;
-  f.multiply(interval_factor(atom, atom.low), 1);
-  r.nonzero = f;
+  const Polynomial first = interval_factor(atom, atom.low);
+  r.nonzero = algebra::factor(first);
+  if (first.is_zero()) return r;  // zero unless the product is empty
+  const Factored f = *r.nonzero;
   if (atom.base.is_constant()) {
     // A proper fraction plus an integer is never 0; an integer product is nonzero when it lies on one
     // side of 0.

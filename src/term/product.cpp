@@ -178,20 +178,9 @@ int compare(const Atom& a, const Atom& b) {
 
 bool operator==(const Atom& a, const Atom& b) { return compare(a, b) == 0; }
 
-void Product::multiply(const Atom& atom, unsigned exponent) {
-  if (exponent == 0) return;
-  if (atom.kind == AtomKind::power) {
-    for (auto it = atoms.begin(); it != atoms.end(); ++it) {
-      if (it->first.kind != AtomKind::power || !(it->first.base == atom.base)) continue;
-      Atom merged = it->first;
-      merged.argument = static_cast<long>(it->second) * it->first.argument +
-                        static_cast<long>(exponent) * atom.argument;
-      atoms.erase(it);
-      if (merged.argument.is_constant() && merged.argument.constant == 0) return;
-      multiply(merged, 1);
-      return;
-    }
-  }
+namespace {
+
+void insert(std::vector<std::pair<Atom, unsigned>>& atoms, const Atom& atom, unsigned exponent) {
   const auto place = std::lower_bound(
       atoms.begin(), atoms.end(), atom,
       [](const auto& entry, const Atom& value) { return compare(entry.first, value) < 0; });
@@ -199,6 +188,30 @@ void Product::multiply(const Atom& atom, unsigned exponent) {
     place->second += exponent;
   else
     atoms.insert(place, {atom, exponent});
+}
+
+/// One power per base, its exponent all in the argument: (b^L)^e is b^(e L).
+void insert_power(std::vector<std::pair<Atom, unsigned>>& atoms, Atom atom, unsigned exponent) {
+  atom.argument = static_cast<long>(exponent) * atom.argument;
+  const auto known = std::find_if(atoms.begin(), atoms.end(), [&](const auto& entry) {
+    return entry.first.kind == AtomKind::power && entry.first.base == atom.base;
+  });
+  if (known != atoms.end()) {
+    atom.argument = static_cast<long>(known->second) * known->first.argument + atom.argument;
+    atoms.erase(known);
+    if (atom.argument.is_constant() && atom.argument.constant == 0) return;
+  }
+  insert(atoms, atom, 1);
+}
+
+}  // namespace
+
+void Product::multiply(const Atom& atom, unsigned exponent) {
+  if (exponent == 0) return;
+  if (atom.kind == AtomKind::power)
+    insert_power(atoms, atom, exponent);
+  else
+    insert(atoms, atom, exponent);
 }
 
 void Product::multiply(const Product& other, unsigned exponent) {

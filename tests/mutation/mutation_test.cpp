@@ -132,7 +132,7 @@ std::vector<Original> originals(std::vector<std::string>& without) {
     if (again.verdict == Verdict::established)
       out.push_back({name, complete, kAllParts});
     else
-      without.push_back(name + " with its own evidence: " + again.reason + "\n" + text);
+      without.push_back(name + " with its own evidence: " + again.reason);
   }
   return out;
 }

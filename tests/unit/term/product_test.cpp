@@ -26,8 +26,7 @@ bool canonical(const Product& p) {
     if (p.atoms[i].second == 0) return false;
     if (i > 0 && compare(p.atoms[i - 1].first, p.atoms[i].first) >= 0) return false;
     if (p.atoms[i].first.kind != AtomKind::power) continue;
-    if (p.atoms[i].first.argument == Affine::zero(p.atoms[i].first.argument.coefficients.size()))
-      return false;
+    if (p.atoms[i].second != 1) return false;
     for (std::size_t j = 0; j < i; ++j)
       if (p.atoms[j].first.kind == AtomKind::power && p.atoms[j].first.base == p.atoms[i].first.base)
         return false;
