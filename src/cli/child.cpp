@@ -1,6 +1,7 @@
 // From a request to a finished process.
 //
-// Between fork and exec only functions that are safe after fork are called, on memory prepared before.
+// Between fork and exec only functions that are safe after fork are called, on memory prepared
+// before.
 #include "cli/child.hpp"
 
 #include <fcntl.h>

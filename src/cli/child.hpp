@@ -25,17 +25,18 @@ struct ChildRequest {
 };
 
 struct ChildResult {
-  int status = -1;       ///< exit status; -1 when a signal ended it
+  int status = -1;  ///< exit status; -1 when a signal ended it
   int signal = 0;
   bool timed_out = false;
   double seconds = 0;
-  std::string output;    ///< the first 64 KiB
+  std::string output;  ///< the first 64 KiB
 
   [[nodiscard]] bool succeeded() const { return status == 0 && !timed_out; }
 };
 
-/// A running child. It gets an environment of PATH, HOME and TMPDIR (the last two its working folder) and
-/// the C locale, a process group of its own, and dies with its parent; the destructor ends it.
+/// A running child. It gets an environment of PATH, HOME and TMPDIR (the last two its working
+/// folder) and the C locale, a process group of its own, and dies with its parent; the destructor
+/// ends it.
 class Child {
  public:
   /// Starts it. Throws Fault when no process can be made.

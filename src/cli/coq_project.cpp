@@ -164,8 +164,8 @@ std::vector<std::string> assumptions_in_summary(const std::string& coqchk_output
   std::string heading;
   std::size_t headings = 0;
   bool axioms_seen = false;
-  std::istringstream in(coqchk_output.substr(std::min(coqchk_output.find("CONTEXT SUMMARY"),
-                                                      coqchk_output.size())));
+  std::istringstream in(
+      coqchk_output.substr(std::min(coqchk_output.find("CONTEXT SUMMARY"), coqchk_output.size())));
   for (std::string line; std::getline(in, line);) {
     std::string text = trimmed(line);
     if (text.starts_with("* ")) {

@@ -11,7 +11,7 @@ namespace sumwright::cli {
 
 /// A project: load-path options and scripts.
 struct CoqProject {
-  std::vector<std::string> load_path;           ///< `-Q FOLDER NAME`..., ready to be arguments
+  std::vector<std::string> load_path;            ///< `-Q FOLDER NAME`..., ready to be arguments
   std::map<std::string, std::string> libraries;  ///< folder (`.` or a plain name) -> logical name
   std::vector<std::string> files;  ///< `Name.v` or `Folder/Name.v`, in the order listed
 

@@ -21,9 +21,10 @@ constexpr double kShortSeconds = 30;
 
 std::optional<CoqTools> find_coq_tools(std::string& missing) {
   CoqTools out;
-  for (const auto& [name, place] : {std::pair<std::string, std::filesystem::path*>{"coqc", &out.compiler},
-                                    {"coqchk", &out.checker},
-                                    {"coqdep", &out.sorter}}) {
+  for (const auto& [name, place] :
+       {std::pair<std::string, std::filesystem::path*>{"coqc", &out.compiler},
+        {"coqchk", &out.checker},
+        {"coqdep", &out.sorter}}) {
     const auto found = find_program(name);
     if (!found) {
       missing = name;
@@ -61,8 +62,8 @@ std::vector<std::string> CoqRun::ready() const {
   std::vector<std::string> out;
   for (const std::string& file : project_.files) {
     const std::set<std::string>& needed = needs_.at(file);
-    if (!begun_.contains(file) && std::includes(finished_.begin(), finished_.end(), needed.begin(),
-                                                needed.end())) {
+    if (!begun_.contains(file) &&
+        std::includes(finished_.begin(), finished_.end(), needed.begin(), needed.end())) {
       out.push_back(file);
     }
   }

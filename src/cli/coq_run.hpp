@@ -49,8 +49,9 @@ class CoqRun {
   CoqRun(const CoqTools& tools, const CoqProject& project, std::filesystem::path folder,
          const CoqLimits& limits, CoqStepStart start, CoqStepDone done);
 
-  /// Compiles every script after those that it needs; stops at the first that fails. Gives whether all
-  /// were accepted. Throws Unusable when coqdep cannot order them, algebra::TimeUp on interruption.
+  /// Compiles every script after those that it needs; stops at the first that fails. Gives whether
+  /// all were accepted. Throws Unusable when coqdep cannot order them, algebra::TimeUp on
+  /// interruption.
   [[nodiscard]] bool compile();
 
   /// Checks one module with all it depends on.

@@ -39,7 +39,8 @@ constexpr std::size_t kLineWidth = 100;
   return text.substr(1, text.size() - 2);
 }
 
-[[nodiscard]] std::string recurrence_value(const EvidenceTexts& evidence, std::string_view line_end) {
+[[nodiscard]] std::string recurrence_value(const EvidenceTexts& evidence,
+                                           std::string_view line_end) {
   std::string out = "[";
   std::size_t longest = 0;
   for (const std::string& text : evidence.recurrence) {
@@ -189,7 +190,8 @@ void check_outcome(const claim::Source& source, const std::string& text,
     for (std::size_t i = 0; good && i < evidence.recurrence.size(); ++i) {
       good = recurrence->value.items[i].text.text == evidence.recurrence[i];
     }
-    good = good && (right_side == nullptr ? "0" : right_side->value.text.text) == evidence.right_side;
+    good =
+        good && (right_side == nullptr ? "0" : right_side->value.text.text) == evidence.right_side;
     if (good && !evidence.index.empty()) {
       const claim::Entry* value =
           certificate == nullptr ? nullptr : certificate->value.find(evidence.index);
@@ -215,7 +217,8 @@ EvidenceTexts evidence_of(const proof::Proof& proof) {
 }
 
 std::string evidence_lines(const EvidenceTexts& evidence, std::string_view line_end) {
-  std::string out = fmt::format("recurrence  = {}{}", recurrence_value(evidence, line_end), line_end);
+  std::string out =
+      fmt::format("recurrence  = {}{}", recurrence_value(evidence, line_end), line_end);
   if (evidence.right_side != "0") {
     out += fmt::format("right_side  = {}{}", quoted(evidence.right_side), line_end);
   }

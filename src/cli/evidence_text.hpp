@@ -12,8 +12,8 @@ namespace sumwright::cli {
 /// Texts in the claim language, as a proof states what it found.
 struct EvidenceTexts {
   std::vector<std::string> recurrence;
-  std::string right_side;   ///< "0" when there is none
-  std::string index;        ///< empty: no certificate
+  std::string right_side;  ///< "0" when there is none
+  std::string index;       ///< empty: no certificate
   std::string certificate;
 };
 

@@ -30,7 +30,8 @@ void append(std::vector<NamedText>& files, std::vector<NamedText> more) {
 }
 
 // The deterministic files but record.json.
-[[nodiscard]] std::vector<NamedText> target_files(const Options& options, const proof::Proof& proof) {
+[[nodiscard]] std::vector<NamedText> target_files(const Options& options,
+                                                  const proof::Proof& proof) {
   const bool established = proof.verdict == proof::Verdict::established;
   std::vector<NamedText> files;
   if (wants(options, "obligations") || !established) {

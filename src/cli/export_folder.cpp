@@ -50,15 +50,17 @@ void remove_stale(const fs::path& folder, const ListedFile& file) {
   if (!is_plain_file(folder, file.path)) return;
   const fs::path path = folder / file.path;
   if (writers::sha256(read_whole_file(path, kFileBytes)) != file.sha256) {
-    fmt::print(stderr, "sumwright: warning: {} is of an earlier export and was changed by hand; "
-                       "it does not belong to this one\n",
+    fmt::print(stderr,
+               "sumwright: warning: {} is of an earlier export and was changed by hand; "
+               "it does not belong to this one\n",
                claim::printable(path.string()));
     return;
   }
   std::error_code code;
   fs::remove(path, code);
   if (code) {
-    throw writers::OutputError(fmt::format("{}: {}", claim::printable(path.string()), code.message()));
+    throw writers::OutputError(
+        fmt::format("{}: {}", claim::printable(path.string()), code.message()));
   }
   fs::remove(path.parent_path(), code);  // succeeds only when the folder is empty
 }
@@ -80,7 +82,8 @@ std::vector<ListedFile> listed_files(const std::string& record, const std::strin
     if (!good) refuse("a listed file without path or sha256");
     out.push_back({file["path"].get<std::string>(), file["sha256"].get<std::string>()});
     if (!is_inside(out.back().path)) {
-      refuse(fmt::format("lists {}, which is outside the export", claim::in_quotes(out.back().path)));
+      refuse(
+          fmt::format("lists {}, which is outside the export", claim::in_quotes(out.back().path)));
     }
   }
   return out;

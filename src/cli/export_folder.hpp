@@ -17,14 +17,16 @@ struct ListedFile {
 
 /// The files of a record.json. Throws Unusable when the text is not a record, or lists paths that
 /// leave the folder.
-[[nodiscard]] std::vector<ListedFile> listed_files(const std::string& record, const std::string& name);
+[[nodiscard]] std::vector<ListedFile> listed_files(const std::string& record,
+                                                   const std::string& name);
 
 /// Refuses a folder whose parent does not exist, or that is not a folder. Throws Unusable.
 void check_export_folder(const std::filesystem::path& folder);
 
-/// Writes the files, after removing those that an earlier export wrote, that are unchanged since, and
-/// that this one does not write: an old theorem must not stand beside a new verdict. What was
+/// Writes the files, after removing those that an earlier export wrote, that are unchanged since,
+/// and that this one does not write: an old theorem must not stand beside a new verdict. What was
 /// changed by hand stays, with a warning on stderr. Throws writers::OutputError.
-void write_export(const std::filesystem::path& folder, const std::vector<writers::NamedText>& files);
+void write_export(const std::filesystem::path& folder,
+                  const std::vector<writers::NamedText>& files);
 
 }  // namespace sumwright::cli

@@ -1,4 +1,5 @@
-// `find`: from a claim to a proved recurrence for its sum, and to a copy of the claim that carries it.
+// `find`: from a claim to a proved recurrence for its sum, and to a copy of the claim that carries
+// it.
 #include <fmt/format.h>
 
 #include <cstdio>

@@ -68,12 +68,12 @@ class Rebuilder {
             Progress& progress)
       : file_(file), options_(options), watch_(watch), progress_(progress) {}
 
-  // The evidence of the claim's own text is what the author claims or brought. Evidence that was found
-  // is taken from the file; an equality whose proof looks different then is searched for again, as
-  // the file was made.
+  // The evidence of the claim's own text is what the author claims or brought. Evidence that was
+  // found is taken from the file; an equality whose proof looks different then is searched for
+  // again, as the file was made.
   Rebuilt run() {
-    const claim::ReadClaim read = claim::read_claim_text(
-        "claim of " + options_.input.filename().string(), file_.claim_text);
+    const claim::ReadClaim read =
+        claim::read_claim_text("claim of " + options_.input.filename().string(), file_.claim_text);
     const auto claim = std::make_shared<const claim::Claim>(read.claim);
     const bool own = !claim->evidence.recurrence.empty() && says_brought(file_);
     if (file_.recurrence.empty() || own) return decided(claim);

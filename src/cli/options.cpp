@@ -120,8 +120,8 @@ void add_option(CLI::App& app, const OptionRow& row, Options& options) {
     }
   };
   if (row.value.empty()) {
-    app.add_flag_callback(std::string(row.name), [callback] { callback(""); },
-                          std::string(row.help));
+    app.add_flag_callback(
+        std::string(row.name), [callback] { callback(""); }, std::string(row.help));
     return;
   }
   app.add_option_function<std::string>(std::string(row.name), callback, std::string(row.help))
@@ -136,9 +136,9 @@ void add_option(CLI::App& app, const OptionRow& row, Options& options) {
 
 [[nodiscard]] bool is_unknown_command(std::string_view word) {
   const auto& rows = command_rows();
-  return !word.starts_with('-') && std::none_of(rows.begin(), rows.end(), [&](const CommandRow& row) {
-    return row.name == word;
-  });
+  return !word.starts_with('-') &&
+         std::none_of(rows.begin(), rows.end(),
+                      [&](const CommandRow& row) { return row.name == word; });
 }
 
 [[nodiscard]] Arguments unknown_command(const std::string& word) {
@@ -179,7 +179,8 @@ const std::vector<OptionRow>& option_rows() {
 
 const std::vector<CommandRow>& command_rows() {
   static const std::vector<CommandRow> rows{
-      {"find", "CLAIM", "a claim file", "find a recurrence for the claim's sum, and prove it", find},
+      {"find", "CLAIM", "a claim file", "find a recurrence for the claim's sum, and prove it",
+       find},
       {"check", "FILE", "a claim file, or an obligation file from an export",
        "the verdict on a claim, with its side conditions", check},
       {"export", "CLAIM", "a claim file",

@@ -20,23 +20,23 @@ struct Options {
   std::vector<std::string> targets{"latex", "coq", "obligations"};
   std::string coq_prefix = "Sumwright";
   unsigned max_order = 8;
-  double time_limit = 600;                             ///< seconds
+  double time_limit = 600;                               ///< seconds
   std::uint64_t memory_limit = std::uint64_t{4} << 30U;  ///< bytes
-  unsigned jobs = 0;                                   ///< 0: as many as there are processors
+  unsigned jobs = 0;                                     ///< 0: as many as there are processors
   bool json = false;
 };
 
 /// One option.
 struct OptionRow {
-  std::string_view name;         ///< "--max-order"
-  std::string_view value;        ///< what stands for the value in the help; empty for a flag
+  std::string_view name;   ///< "--max-order"
+  std::string_view value;  ///< what stands for the value in the help; empty for a flag
   std::string_view help;
-  std::string_view commands;     ///< names of the commands that have it, separated by blanks
+  std::string_view commands;  ///< names of the commands that have it, separated by blanks
   bool required = false;
   /// Takes the value; gives what is wrong with it, empty when nothing is.
   std::string (*take)(Options& options, const std::string& text) = nullptr;
-  std::string_view accepted;     ///< an example; empty for a flag
-  std::string_view refused;      ///< an example; empty for a flag
+  std::string_view accepted;  ///< an example; empty for a flag
+  std::string_view refused;   ///< an example; empty for a flag
 };
 
 [[nodiscard]] const std::vector<OptionRow>& option_rows();

@@ -15,8 +15,7 @@ Progress::Progress() : terminal_(::isatty(STDERR_FILENO) == 1) {}
 void Progress::show(const std::string& stage) {
   if (!terminal_) return;
   const std::chrono::duration<double> taken = std::chrono::steady_clock::now() - start_;
-  fmt::print(stderr, "\r\033[K{:6.1f} s  {}", taken.count(),
-             claim::printable(stage).substr(0, 60));
+  fmt::print(stderr, "\r\033[K{:6.1f} s  {}", taken.count(), claim::printable(stage).substr(0, 60));
   std::fflush(stderr);
   shown_ = true;
 }

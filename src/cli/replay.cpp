@@ -1,8 +1,8 @@
 // `replay`: from an export folder to what Coq says of it today.
 //
-// Only files whose hashes record.json states are run, from a copy that is thrown away, so that the export
-// stays as it is; run.json alone is replaced. Invariant: status 0 means that every script was accepted
-// and that the checker found no axiom under the theorem.
+// Only files whose hashes record.json states are run, from a copy that is thrown away, so that the
+// export stays as it is; run.json alone is replaced. Invariant: status 0 means that every script
+// was accepted and that the checker found no axiom under the theorem.
 #include <fmt/format.h>
 #include <unistd.h>
 
@@ -109,7 +109,8 @@ class Replay {
       return;
     }
     if (writers::sha256(text) != file.sha256) {
-      problems_.push_back(file.path + " is not the file that record.json describes (SHA-256 differs)");
+      problems_.push_back(file.path +
+                          " is not the file that record.json describes (SHA-256 differs)");
       return;
     }
     if (file.path.starts_with(kCoqFolder)) {
@@ -122,14 +123,16 @@ class Replay {
       if (!name.ends_with(".v")) continue;
       const std::string command = reaching_command(text);
       if (!command.empty()) {
-        problems_.push_back(fmt::format("coq/{} contains `{}`, which no export does", name, command));
+        problems_.push_back(
+            fmt::format("coq/{} contains `{}`, which no export does", name, command));
       }
     }
     const auto statement = scripts_.find("Statement.v");
     if (statement != scripts_.end() &&
         statement->second != writers::embedded_template("coq/Statement.v")) {
-      notes_.emplace_back("Statement.v is not that of this version; what the theorem says has to be "
-                          "read in it");
+      notes_.emplace_back(
+          "Statement.v is not that of this version; what the theorem says has to be "
+          "read in it");
     }
   }
 
@@ -141,7 +144,8 @@ class Replay {
       writers::FileSink().write(place, scripts_.at(file));
     }
     CoqLimits limits;
-    limits.jobs = options_.jobs > 0 ? options_.jobs : std::max(1U, std::thread::hardware_concurrency());
+    limits.jobs =
+        options_.jobs > 0 ? options_.jobs : std::max(1U, std::thread::hardware_concurrency());
     limits.memory = options_.memory_limit;
     limits.seconds = options_.time_limit;
     Progress progress;
@@ -158,8 +162,12 @@ class Replay {
   }
 
   void version(const CoqTools& tools, const fs::path& folder, const CoqLimits& limits) {
-    const ChildResult result = run_child({tools.compiler, {"--version"}, folder,
-                                          folder / "version.output", limits.memory, limits.seconds});
+    const ChildResult result = run_child({tools.compiler,
+                                          {"--version"},
+                                          folder,
+                                          folder / "version.output",
+                                          limits.memory,
+                                          limits.seconds});
     version_ = claim::printable(result.output.substr(0, result.output.find('\n')));
     say(version_ + "\n");
   }
@@ -226,9 +234,14 @@ class Replay {
   }
 
   [[nodiscard]] Json outcome(Status status) const {
-    return {{"time", utc_now()},        {"assistant", version_},     {"host", host_json()},
-            {"steps", steps_},          {"assumptions", assumptions_}, {"problems", problems_},
-            {"notes", notes_},          {"exit_status", static_cast<int>(status)}};
+    return {{"time", utc_now()},
+            {"assistant", version_},
+            {"host", host_json()},
+            {"steps", steps_},
+            {"assumptions", assumptions_},
+            {"problems", problems_},
+            {"notes", notes_},
+            {"exit_status", static_cast<int>(status)}};
   }
 
   void write_run_record(Status status) const {

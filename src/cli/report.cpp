@@ -37,8 +37,8 @@ using Json = nlohmann::ordered_json;
 [[nodiscard]] std::string shortened(const std::string& text) {
   constexpr std::size_t kShown = 400;
   if (text.size() <= 2 * kShown) return text;
-  return fmt::format("{} ... ({} characters; `sumwright find` prints them all)", text.substr(0, kShown),
-                     text.size());
+  return fmt::format("{} ... ({} characters; `sumwright find` prints them all)",
+                     text.substr(0, kShown), text.size());
 }
 
 // Whether the text is a sum, which needs brackets as a factor.
@@ -134,8 +134,9 @@ std::string verdict_text(const Decision& decision) {
   out += line("residue", proof.residue);
   if (proof.verdict == proof::Verdict::refuted && proof.subject == proof::Subject::evidence &&
       proof.claim->is_equality()) {
-    out += line("note", "the equality itself is not decided by this; `sumwright find` may give "
-                        "evidence that settles it");
+    out += line("note",
+                "the equality itself is not decided by this; `sumwright find` may give "
+                "evidence that settles it");
   }
   out += line("would settle", proof.would_settle);
   if (decision.audit) out += line("audit", audit_text(*decision.audit));
@@ -166,8 +167,8 @@ std::string decision_json(const Decision& decision) {
   if (decision.audit) {
     out["audit"] = Json::array();
     for (const audit::Finding& finding : decision.audit->findings) {
-      out["audit"].push_back({{"check", finding.check}, {"cases", finding.cases},
-                              {"agrees", finding.agrees}});
+      out["audit"].push_back(
+          {{"check", finding.check}, {"cases", finding.cases}, {"agrees", finding.agrees}});
     }
   }
   out["exit_status"] = static_cast<int>(decision.status());

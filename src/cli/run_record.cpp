@@ -21,8 +21,8 @@ constexpr int kRunFormat = 1;
 constexpr std::size_t kReplaysKept = 20;
 
 [[nodiscard]] Json libraries_json() {
-  return {{"FLINT", kFlintVersion},       {"GMP", gmp_version},   {"PPL", kPplVersion},
-          {"GiNaC", kGinacVersion},       {"CLN", kClnVersion},   {"OpenSSL", kOpensslVersion},
+  return {{"FLINT", kFlintVersion},      {"GMP", gmp_version}, {"PPL", kPplVersion},
+          {"GiNaC", kGinacVersion},      {"CLN", kClnVersion}, {"OpenSSL", kOpensslVersion},
           {"compiler", kCompilerVersion}};
 }
 

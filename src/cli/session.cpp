@@ -122,7 +122,8 @@ void Watch::wait(double seconds, bool json) {
   std::unique_lock<std::mutex> lock(mutex_);
   if (changed_.wait_for(lock, grace, [this] { return over_; })) return;
   if (json) {
-    std::fputs("{\n  \"verdict\": \"undecided\",\n  \"reason\": \"time limit reached\"\n}\n", stdout);
+    std::fputs("{\n  \"verdict\": \"undecided\",\n  \"reason\": \"time limit reached\"\n}\n",
+               stdout);
   } else {
     std::fputs("undecided: time limit reached\n", stdout);
   }

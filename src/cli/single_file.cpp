@@ -25,8 +25,8 @@ void write_single_file(const fs::path& path, const std::string& text) {
   if (fs::exists(status) && !fs::is_regular_file(status)) {
     throw writers::OutputError(shown + ": exists and is not a regular file");
   }
-  const fs::path temporary = path.parent_path() / fmt::format(".{}.part-{}", path.filename().string(),
-                                                              ::getpid());
+  const fs::path temporary =
+      path.parent_path() / fmt::format(".{}.part-{}", path.filename().string(), ::getpid());
   const SignalShield shield;
   try {
     writers::FileSink().write(temporary, text);

@@ -78,7 +78,8 @@ std::string table(const std::vector<std::size_t>& widths,
 }
 
 std::string labelled(std::string_view label, std::string_view text) {
-  return table({kLabelWidth - 2, kLineWidth - kLabelWidth}, {{std::string(label), std::string(text)}});
+  return table({kLabelWidth - 2, kLineWidth - kLabelWidth},
+               {{std::string(label), std::string(text)}});
 }
 
 }  // namespace sumwright::cli

@@ -67,6 +67,9 @@ search::ShiftQuotients shift_quotients(const Terms& terms) {
                               "as written, their factorials or powers do not match");
     total = total + RationalFunction(ring, *quotient);
   }
+  if (total.is_zero())
+    throw claim::InputError(*terms.setting.claim->source, terms.summand.expression->place,
+                            "the summand is identically zero: its terms cancel");
   search::ShiftQuotients out{term::shift_quotient(ring, f[0], term::running),
                              term::shift_quotient(ring, f[0], term::index)};
   if (f.size() > 1) {

@@ -274,6 +274,31 @@ Atom inverse_atom(const algebra::RingPtr& ring, const Atom& atom) {
   throw std::logic_error("unknown atom");
 }
 
+namespace {
+
+/// A parameter and the entry of its `not` that is a word ("integers", ...).
+using ExcludedByWord = std::pair<std::size_t, std::size_t>;
+
+/// The word that excludes the zero of a + t at t = `at`, when the zeros at t + 1, t + 2, ... differ from it
+/// by integers.
+std::optional<ExcludedByWord> excluded_by_word(const Setting& setting, const Facts& facts,
+                                               const Atom& atom, const Affine& at) {
+  const Factored f = algebra::factor(interval_factor(atom, at));
+  const std::optional<proof::Nonzero> why = decide_nonzero(setting, facts, f);
+  if (!why || why->factors.size() != 1) return std::nullopt;
+  const proof::NonzeroFactor& factor = why->factors[0];
+  if (factor.method != proof::NonzeroFactor::Method::excluded || factor.exponent != 1)
+    return std::nullopt;
+  const claim::Parameter& x = setting.claim->parameters.at(factor.parameter - index - 1);
+  if (x.excluded.at(factor.exclusion).kind == claim::Exclusion::Kind::constant) return std::nullopt;
+  // a + t = constant * scale * (x - value): one step of t moves the value by this quotient.
+  const mpz_class step = f.constant.get_num() * factor.scale;
+  if (atom.scale % step != 0) return std::nullopt;
+  return ExcludedByWord{factor.parameter, factor.exclusion};
+}
+
+}  // namespace
+
 Requirement interval_nonvanishing(const Setting& setting, const Facts& facts, const Atom& atom,
                                   claim::Place place) {
   // A factor a + t with low <= t < high: t gets the place of a fresh integer symbol, which no
@@ -297,13 +322,14 @@ Requirement interval_nonvanishing(const Setting& setting, const Facts& facts, co
     r.settled = r.why.has_value();
     return r;
   }
-  // a = x: one entry of `not` must exclude every x = -t.
+  // a = x: one word of `not` must exclude the zeros of all factors, which it does when they are integers
+  // and it excludes those of the first and the last.
   r.why = decide_nonzero(setting, facts, f);
-  Factored last;
-  last.multiply(interval_factor(atom, atom.high - 1), 1);
-  r.settled = r.why.has_value() &&
-              (facts.implies(atom.low - atom.high) ||
-               decide_nonzero(setting, facts.with(atom.high - atom.low - 1), last).has_value());
+  const std::optional<ExcludedByWord> low = excluded_by_word(setting, facts, atom, atom.low);
+  r.settled = low && (facts.implies(atom.low - atom.high) ||
+                      excluded_by_word(setting, facts.with(atom.high - atom.low - 1), atom,
+                                       atom.high - 1) == low);
+  if (!r.settled) r.why.reset();
   return r;
 }
 

@@ -25,7 +25,8 @@ TEST(Arguments, HelpNamesEveryCommand) {
   EXPECT_EQ(outcome.err, "");
   ASSERT_FALSE(cli::command_rows().empty());
   for (const cli::CommandRow& row : cli::command_rows()) {
-    EXPECT_NE(outcome.out.find("\n  " + std::string(row.name) + " "), std::string::npos) << row.name;
+    EXPECT_NE(outcome.out.find("\n  " + std::string(row.name) + " "), std::string::npos)
+        << row.name;
     EXPECT_NE(outcome.out.find(row.help), std::string::npos) << row.name;
   }
   EXPECT_NE(outcome.out.find("Exit status: 0 established; 1 refuted; 2"), std::string::npos);
@@ -102,7 +103,8 @@ TEST(Arguments, Refusals) {
     EXPECT_EQ(outcome.status, 2) << row.message;
     EXPECT_EQ(outcome.out, "") << row.message;
     EXPECT_NE(outcome.err.find(row.message), std::string::npos)
-        << "expected: " << row.message << "\n" << outcome.err;
+        << "expected: " << row.message << "\n"
+        << outcome.err;
   }
 }
 

@@ -38,14 +38,16 @@ TEST(Check, Established) {
       "audit         ";
   EXPECT_EQ(outcome.out.substr(0, head.size()), head);
   expect_says(outcome.out, "cases: all agree\n");
-  expect_says(outcome.out, "\nid    side condition                  where                 settled\n");
+  expect_says(outcome.out,
+              "\nid    side condition                  where                 settled\n");
   expect_says(outcome.out, "[leading");
   expect_narrow(outcome.out);
 }
 
 TEST(Check, RefutedClaimWithPoint) {
   const TestFolder folder;
-  folder.write("c.toml", replaced(squares_claim(), "binomial(2*n, n)", "binomial(2*n, n) + n*(n - 1)"));
+  folder.write("c.toml",
+               replaced(squares_claim(), "binomial(2*n, n)", "binomial(2*n, n) + n*(n - 1)"));
   const Outcome outcome = folder.sumwright({"check", "c.toml"});
   EXPECT_EQ(outcome.status, 1);
   EXPECT_EQ(outcome.err, "");
@@ -81,8 +83,9 @@ TEST(Check, UnusableInputIsPointedAt) {
 
 TEST(Check, NotHypergeometricIsUnusable) {
   const TestFolder folder;
-  folder.write("c.toml", replaced(replaced(squares_claim(), "binomial(n, k)^2", "1/(1 + binomial(n, k))"),
-                                  "[equals]\nclosed  = \"binomial(2*n, n)\"\n", ""));
+  folder.write("c.toml",
+               replaced(replaced(squares_claim(), "binomial(n, k)^2", "1/(1 + binomial(n, k))"),
+                        "[equals]\nclosed  = \"binomial(2*n, n)\"\n", ""));
   const Outcome outcome = folder.sumwright({"check", "c.toml"});
   EXPECT_EQ(outcome.status, 2);
   EXPECT_EQ(outcome.err.substr(0, 9), "c.toml:7:") << outcome.err;
@@ -146,7 +149,9 @@ TEST(Check, JsonOfARefutation) {
 // A title may carry anything TOML allows; a terminal must not see it raw.
 TEST(Check, HostileTitleIsHarmless) {
   const TestFolder folder;
-  folder.write("c.toml", replaced(squares_claim(), "Squares of one row", "a\xE2\x80\xAE" "b"));
+  folder.write("c.toml", replaced(squares_claim(), "Squares of one row",
+                                  "a\xE2\x80\xAE"
+                                  "b"));
   const Outcome outcome = folder.sumwright({"check", "c.toml"});
   EXPECT_EQ(outcome.out.find("\xE2\x80\xAE"), std::string::npos);
   EXPECT_EQ(outcome.err.find("\xE2\x80\xAE"), std::string::npos);
@@ -154,9 +159,9 @@ TEST(Check, HostileTitleIsHarmless) {
 
 TEST(Check, FullDiskIsReported) {
   const TestFolder folder;
-  const Outcome outcome = run_program(
-      {"sh", "-c", "exec \"$0\" check \"$1\" >/dev/full", SUMWRIGHT_PROGRAM, exemplar("equal-faults.toml")},
-      folder.path());
+  const Outcome outcome = run_program({"sh", "-c", "exec \"$0\" check \"$1\" >/dev/full",
+                                       SUMWRIGHT_PROGRAM, exemplar("equal-faults.toml")},
+                                      folder.path());
   EXPECT_EQ(outcome.status, 2);
   EXPECT_EQ(outcome.err, "sumwright: standard output: No space left on device\n");
 }

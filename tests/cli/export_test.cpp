@@ -18,14 +18,16 @@ bool has(const std::vector<std::string>& files, const std::string& name) {
 
 TEST(Export, EstablishedHasEverything) {
   const TestFolder folder;
-  const Outcome outcome = folder.sumwright({"export", exemplar("equal-faults.toml"), "--out", "out"});
+  const Outcome outcome =
+      folder.sumwright({"export", exemplar("equal-faults.toml"), "--out", "out"});
   EXPECT_EQ(outcome.status, 0);
   EXPECT_EQ(outcome.err, "");
   EXPECT_NE(outcome.out.find("\nwritten to out:\n  obligations.txt "), std::string::npos);
   const auto files = folder.files();
-  for (const std::string name : {"out/obligations.txt", "out/appendix.tex", "out/appendix-standalone.tex",
-                                 "out/coq/_CoqProject", "out/coq/Claim.v", "out/coq/Statement.v",
-                                 "out/record.json", "out/run.json"}) {
+  for (const std::string name :
+       {"out/obligations.txt", "out/appendix.tex", "out/appendix-standalone.tex",
+        "out/coq/_CoqProject", "out/coq/Claim.v", "out/coq/Statement.v", "out/record.json",
+        "out/run.json"}) {
     EXPECT_TRUE(has(files, name)) << name;
   }
   const json record = json::parse(read_file(folder.path() / "out/record.json"));
@@ -75,7 +77,9 @@ TEST(Export, RunRecordHoldsWhatDiffers) {
 
 TEST(Export, Targets) {
   const TestFolder folder;
-  EXPECT_EQ(folder.sumwright({"export", exemplar("equal-faults.toml"), "--out", "out", "--as", "obligations"})
+  EXPECT_EQ(folder
+                .sumwright({"export", exemplar("equal-faults.toml"), "--out", "out", "--as",
+                            "obligations"})
                 .status,
             0);
   EXPECT_EQ(folder.files(),
@@ -84,8 +88,9 @@ TEST(Export, Targets) {
 
 TEST(Export, CoqPrefix) {
   const TestFolder folder;
-  EXPECT_EQ(folder.sumwright({"export", exemplar("equal-faults.toml"), "--out", "out", "--as", "coq",
-                              "--coq-prefix", "EqualFaults"})
+  EXPECT_EQ(folder
+                .sumwright({"export", exemplar("equal-faults.toml"), "--out", "out", "--as", "coq",
+                            "--coq-prefix", "EqualFaults"})
                 .status,
             0);
   EXPECT_TRUE(has(folder.files(), "out/coq/EqualFaults/Claim.v"));
@@ -113,7 +118,10 @@ TEST(Export, RefutedHasNoProof) {
 TEST(Export, UndecidedHasNoProofEvenIfNotAskedForObligations) {
   const TestFolder folder;
   folder.write("c.toml", squares_claim());
-  EXPECT_EQ(folder.sumwright({"export", "c.toml", "--out", "out", "--max-order", "0", "--as", "latex"}).status, 3);
+  EXPECT_EQ(
+      folder.sumwright({"export", "c.toml", "--out", "out", "--max-order", "0", "--as", "latex"})
+          .status,
+      3);
   expect_no_proof(folder);
 }
 
@@ -121,7 +129,8 @@ TEST(Export, StoppedByTimeHasNoProof) {
   const TestFolder folder;
   folder.write("c.toml", replaced(replaced(squares_claim(), "binomial(n, k)^2", "binomial(n, k)^9"),
                                   "[equals]\nclosed  = \"binomial(2*n, n)\"\n", ""));
-  EXPECT_EQ(folder.sumwright({"export", "c.toml", "--out", "out", "--time-limit", "0.2"}).status, 3);
+  EXPECT_EQ(folder.sumwright({"export", "c.toml", "--out", "out", "--time-limit", "0.2"}).status,
+            3);
   expect_no_proof(folder);
 }
 
@@ -141,10 +150,12 @@ TEST(Export, WhatWasChangedByHandStaysWithAWarning) {
   folder.write("c.toml", squares_claim());
   EXPECT_EQ(folder.sumwright({"export", "c.toml", "--out", "out"}).status, 0);
   folder.write("out/appendix.tex", "mine now\n");
-  const Outcome outcome = folder.sumwright({"export", "c.toml", "--out", "out", "--as", "obligations"});
+  const Outcome outcome =
+      folder.sumwright({"export", "c.toml", "--out", "out", "--as", "obligations"});
   EXPECT_EQ(outcome.status, 0);
   EXPECT_EQ(outcome.err,
-            "sumwright: warning: out/appendix.tex is of an earlier export and was changed by hand; it does "
+            "sumwright: warning: out/appendix.tex is of an earlier export and was changed by hand; "
+            "it does "
             "not belong to this one\n");
   EXPECT_EQ(read_file(folder.path() / "out/appendix.tex"), "mine now\n");
 }
@@ -155,9 +166,10 @@ TEST(Export, RecordThatPointsOutsideRemovesNothing) {
   folder.write("c.toml", squares_claim());
   fs::create_directory(folder.path() / "out");
   folder.write("precious", "x");
-  folder.write("out/record.json",
-               R"({"files": [{"path": "../precious", "sha256": ")" + writers::sha256("x") + R"("}]})");
-  EXPECT_EQ(folder.sumwright({"export", "c.toml", "--out", "out", "--as", "obligations"}).status, 0);
+  folder.write("out/record.json", R"({"files": [{"path": "../precious", "sha256": ")" +
+                                      writers::sha256("x") + R"("}]})");
+  EXPECT_EQ(folder.sumwright({"export", "c.toml", "--out", "out", "--as", "obligations"}).status,
+            0);
   EXPECT_EQ(read_file(folder.path() / "precious"), "x");
 }
 

@@ -37,7 +37,8 @@ TEST(Find, AnswersAQuestionWithARightSide) {
 TEST(Find, NothingWithinTheOrder) {
   const TestFolder folder;
   folder.write("c.toml", squares_claim());
-  const Outcome outcome = folder.sumwright({"find", "c.toml", "--max-order", "0", "--write", "w.toml"});
+  const Outcome outcome =
+      folder.sumwright({"find", "c.toml", "--max-order", "0", "--write", "w.toml"});
   EXPECT_EQ(outcome.status, 3);
   EXPECT_NE(outcome.out.find("no recurrence of order up to 0 was found"), std::string::npos);
   EXPECT_EQ(outcome.err, "sumwright: nothing found, nothing written\n");
@@ -73,8 +74,7 @@ TEST(Find, KeepsTheLayoutOfEvidenceThatIsThere) {
   folder.write("c.toml", claim);
   const Outcome outcome = folder.sumwright({"find", "c.toml", "--write", "c.toml"});
   EXPECT_EQ(outcome.status, 0) << outcome.err;
-  std::string expected =
-      replaced(claim, "\"k\" }", "\"-k^2*(3*n - 2*k + 3)/(n - k + 1)^2\" }");
+  std::string expected = replaced(claim, "\"k\" }", "\"-k^2*(3*n - 2*k + 3)/(n - k + 1)^2\" }");
   expected = replaced(expected, "[  # two of them\r\n    \"1\",\r\n    \"2\" ]",
                       "[\"-2*(2*n + 1)\", \"n + 1\"]");
   EXPECT_EQ(read_file(folder.path() / "c.toml"), expected);
@@ -109,7 +109,8 @@ TEST(Find, ReplacingAClaimedRecurrenceIsSaid) {
   folder.write("c.toml", claim);
   const Outcome outcome = folder.sumwright({"find", "c.toml", "--write", "w.toml"});
   EXPECT_EQ(outcome.status, 0);
-  EXPECT_NE(outcome.err.find("it replaces the recurrence that the file claimed"), std::string::npos);
+  EXPECT_NE(outcome.err.find("it replaces the recurrence that the file claimed"),
+            std::string::npos);
 }
 
 }  // namespace

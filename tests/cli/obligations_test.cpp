@@ -24,7 +24,8 @@ void expect_refused(const TestFolder& folder, const std::string& text, const std
     const char shown = c == '\n' ? ' ' : c;
     if (shown != ' ' || flat.empty() || flat.back() != ' ') flat += shown;
   }
-  EXPECT_NE(flat.find(message), std::string::npos) << "expected: " << message << "\n" << outcome.out;
+  EXPECT_NE(flat.find(message), std::string::npos) << "expected: " << message << "\n"
+                                                   << outcome.out;
 }
 
 TEST(Obligations, EveryExemplarReadsBack) {
@@ -49,8 +50,9 @@ TEST(Obligations, AnotherClaimsTextIsRefused) {
   folder.write("c.toml", squares_claim());
   std::string text = obligations(folder, "c.toml");
   // Another true claim of the same length, with its hash: the rest belongs to the first one.
-  const std::string other = replaced(replaced(squares_claim(), "binomial(n, k)^2", "binomial(n, k)  "),
-                                     "binomial(2*n, n)", "2^n             ");
+  const std::string other =
+      replaced(replaced(squares_claim(), "binomial(n, k)^2", "binomial(n, k)  "),
+               "binomial(2*n, n)", "2^n             ");
   text = replaced(text, writers::sha256(squares_claim()), writers::sha256(other));
   text = replaced(text, "| summand = \"binomial(n, k)^2\"", "| summand = \"binomial(n, k)  \"");
   text = replaced(text, "| closed  = \"binomial(2*n, n)\"", "| closed  = \"2^n             \"");
@@ -74,9 +76,11 @@ TEST(Obligations, AlteredPartsAreNamed) {
   const std::string text = obligations(folder, "c.toml");
   expect_refused(folder, replaced(text, "\ncoefficient 1 = (n + 1)", "\ncoefficient 1 = (n + 2)"),
                  "recurrence: `coefficient 1`: the file has '(n + 2)', the claim gives '(n + 1)'");
-  expect_refused(folder, replaced(text, "\nnormal form = 3*n^3", "\nnormal form = 2*n^3"), "DO NOT HOLD");
-  expect_refused(folder, replaced(text, "c1: [factorial argument] n >= 0", "c1: [factorial argument] n >= 1"),
-                 "conditions: `c1`");
+  expect_refused(folder, replaced(text, "\nnormal form = 3*n^3", "\nnormal form = 2*n^3"),
+                 "DO NOT HOLD");
+  expect_refused(
+      folder, replaced(text, "c1: [factorial argument] n >= 0", "c1: [factorial argument] n >= 1"),
+      "conditions: `c1`");
 }
 
 TEST(Obligations, NotEstablishedKeepsItsVerdict) {

@@ -15,9 +15,9 @@ struct Outcome {
 };
 
 /// Runs a program to its end without a shell, in `folder`; environment as here, with the changes.
-[[nodiscard]] Outcome run_program(const std::vector<std::string>& arguments,
-                                  const std::filesystem::path& folder,
-                                  const std::vector<std::pair<std::string, std::string>>& environment = {});
+[[nodiscard]] Outcome run_program(
+    const std::vector<std::string>& arguments, const std::filesystem::path& folder,
+    const std::vector<std::pair<std::string, std::string>>& environment = {});
 
 /// A folder that is removed at the end of a test.
 class TestFolder {
@@ -46,7 +46,8 @@ class TestFolder {
 [[nodiscard]] std::string exemplar(const std::string& name);
 
 /// `text` with the first `from` replaced; fails the test when there is none.
-[[nodiscard]] std::string replaced(std::string text, const std::string& from, const std::string& to);
+[[nodiscard]] std::string replaced(std::string text, const std::string& from,
+                                   const std::string& to);
 
 /// A true equality, by title, without evidence.
 [[nodiscard]] std::string squares_claim();

@@ -14,8 +14,8 @@ namespace {
 namespace fs = std::filesystem;
 
 struct Step {
-  std::vector<std::string> words;      // of the command
-  std::vector<std::string> shown;      // the output as README has it; `...` stands for any lines
+  std::vector<std::string> words;  // of the command
+  std::vector<std::string> shown;  // the output as README has it; `...` stands for any lines
 };
 
 std::string readme() { return read_file(std::string(SUMWRIGHT_SOURCE_DIR) + "/README.md"); }
@@ -112,7 +112,8 @@ TEST(Readme, NamesEveryCommandAndOption) {
 TEST(Readme, NamesNoOptionThatIsNotThere) {
   const std::string text = readme();
   static const std::regex kOption("`(--[a-z-]+)");
-  for (std::sregex_iterator at(text.begin(), text.end(), kOption); at != std::sregex_iterator(); ++at) {
+  for (std::sregex_iterator at(text.begin(), text.end(), kOption); at != std::sregex_iterator();
+       ++at) {
     const std::string name = (*at)[1];
     bool known = name == "--help" || name == "--version";
     for (const cli::OptionRow& row : cli::option_rows()) known = known || row.name == name;
@@ -121,7 +122,8 @@ TEST(Readme, NamesNoOptionThatIsNotThere) {
 }
 
 TEST(Readme, HasTheHashOfTheVocabulary) {
-  EXPECT_NE(readme().find(writers::sha256(writers::embedded_template("coq/Statement.v"))), std::string::npos)
+  EXPECT_NE(readme().find(writers::sha256(writers::embedded_template("coq/Statement.v"))),
+            std::string::npos)
       << "SHA-256 of templates/coq/Statement.v";
 }
 

@@ -24,13 +24,15 @@ constexpr const char* kSummary =
 class Replay : public ::testing::Test {
  protected:
   void SetUp() override {
-    ASSERT_EQ(folder_.sumwright({"export", exemplar("equal-faults.toml"), "--out", "out", "--as", "coq"})
-                  .status,
-              0);
+    ASSERT_EQ(
+        folder_.sumwright({"export", exemplar("equal-faults.toml"), "--out", "out", "--as", "coq"})
+            .status,
+        0);
     fs::create_directory(folder_.path() / "bin");
     stand_in("coqdep", "for f; do case $f in *.v) echo \"${f%.v}.vo: $f\";; esac; done");
-    stand_in("coqc", "if [ \"$1\" = --version ]; then echo 'Stand-in 1.0'; exit; fi\n"
-                     "for f; do :; done; [ -f \"$f\" ] && echo \"$f\" >>\"$LOG_FILE\" 2>/dev/null; exit 0");
+    stand_in("coqc",
+             "if [ \"$1\" = --version ]; then echo 'Stand-in 1.0'; exit; fi\n"
+             "for f; do :; done; [ -f \"$f\" ] && echo \"$f\" >>\"$LOG_FILE\" 2>/dev/null; exit 0");
     stand_in("coqchk", "cat <<'END'" + std::string(kSummary) + "END");
   }
 
@@ -72,19 +74,23 @@ TEST_F(Replay, LeavesTheExportAsItIs) {
 }
 
 TEST_F(Replay, RefusedByTheCompiler) {
-  stand_in("coqc", "for f; do :; done; case $f in Sums.v) echo 'Error: no such lemma'; exit 1;; esac");
+  stand_in("coqc",
+           "for f; do :; done; case $f in Sums.v) echo 'Error: no such lemma'; exit 1;; esac");
   const Outcome outcome = replay();
   EXPECT_EQ(outcome.status, 1);
   EXPECT_NE(outcome.out.find("coqc    Sums.v  FAILED\n"), std::string::npos) << outcome.out;
   EXPECT_TRUE(outcome.out.ends_with("refused\n"));
-  EXPECT_NE(outcome.err.find("coqc does not accept Sums.v:\n    Error: no such lemma\n"), std::string::npos)
+  EXPECT_NE(outcome.err.find("coqc does not accept Sums.v:\n    Error: no such lemma\n"),
+            std::string::npos)
       << outcome.err;
   EXPECT_EQ(last_replay().at("exit_status"), 1);
 }
 
 TEST_F(Replay, AnAxiomUnderTheTheoremIsARefusal) {
-  stand_in("coqchk", "cat <<'END'" + replaced(kSummary, "* Axioms: <none>", "* Axioms:\n    Sumwright.Claim.trust_me") +
-                         "END");
+  stand_in("coqchk",
+           "cat <<'END'" +
+               replaced(kSummary, "* Axioms: <none>", "* Axioms:\n    Sumwright.Claim.trust_me") +
+               "END");
   const Outcome outcome = replay();
   EXPECT_EQ(outcome.status, 1);
   EXPECT_EQ(outcome.err, "sumwright: the theorem rests on Axioms: Sumwright.Claim.trust_me\n");
@@ -92,7 +98,9 @@ TEST_F(Replay, AnAxiomUnderTheTheoremIsARefusal) {
 }
 
 TEST_F(Replay, TypeInTypeIsARefusal) {
-  stand_in("coqchk", "cat <<'END'" + replaced(kSummary, "type-in-type: <none>", "type-in-type: \n    X") + "END");
+  stand_in(
+      "coqchk",
+      "cat <<'END'" + replaced(kSummary, "type-in-type: <none>", "type-in-type: \n    X") + "END");
   EXPECT_EQ(replay().status, 1);
 }
 
@@ -132,7 +140,8 @@ TEST_F(Replay, TamperedFilesAreNamedAndNothingIsRun) {
   fs::remove(folder_.path() / "out/coq/Sums.v");
   const Outcome outcome = replay();
   EXPECT_EQ(outcome.status, 1);
-  EXPECT_NE(outcome.err.find("coq/Claim.v is not the file that record.json describes"), std::string::npos);
+  EXPECT_NE(outcome.err.find("coq/Claim.v is not the file that record.json describes"),
+            std::string::npos);
   EXPECT_NE(outcome.err.find("coq/Sums.v: No such file"), std::string::npos) << outcome.err;
   EXPECT_EQ(outcome.out, "refused\n");
 }
@@ -169,7 +178,8 @@ TEST_F(Replay, ScriptsThatReachOutAreNotRun) {
 }
 
 TEST_F(Replay, ProjectFileThatPassesOptionsIsRefused) {
-  const std::string text = read_file(folder_.path() / "out/coq/_CoqProject") + "-arg -impredicative-set\n";
+  const std::string text =
+      read_file(folder_.path() / "out/coq/_CoqProject") + "-arg -impredicative-set\n";
   json record = json::parse(read_file(folder_.path() / "out/record.json"));
   for (json& file : record.at("files")) {
     if (file.at("path") == "coq/_CoqProject") file["sha256"] = writers::sha256(text);
@@ -178,7 +188,8 @@ TEST_F(Replay, ProjectFileThatPassesOptionsIsRefused) {
   folder_.write("out/record.json", record.dump());
   const Outcome outcome = replay();
   EXPECT_EQ(outcome.status, 2);
-  EXPECT_NE(outcome.err.find("'-arg' is not part of an exported project"), std::string::npos) << outcome.err;
+  EXPECT_NE(outcome.err.find("'-arg' is not part of an exported project"), std::string::npos)
+      << outcome.err;
 }
 
 TEST_F(Replay, Json) {
@@ -198,7 +209,9 @@ TEST(ReplayFolder, NoExport) {
 
 TEST(ReplayFolder, ExportWithoutScripts) {
   const TestFolder folder;
-  EXPECT_EQ(folder.sumwright({"export", exemplar("equal-faults.toml"), "--out", "out", "--as", "obligations"})
+  EXPECT_EQ(folder
+                .sumwright({"export", exemplar("equal-faults.toml"), "--out", "out", "--as",
+                            "obligations"})
                 .status,
             0);
   const Outcome outcome = folder.sumwright({"replay", "out"});

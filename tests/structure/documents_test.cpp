@@ -69,7 +69,8 @@ TEST(Documents, PathsThatAreNamedExist) {
   for (const std::string name : {"README.md", "DEVELOPERS.md"}) {
     const std::string text = text_of(kRoot / name);
     std::size_t found = 0;
-    for (std::sregex_iterator at(text.begin(), text.end(), kPath); at != std::sregex_iterator(); ++at) {
+    for (std::sregex_iterator at(text.begin(), text.end(), kPath); at != std::sregex_iterator();
+         ++at) {
       ++found;
       EXPECT_TRUE(fs::exists(kRoot / (*at)[1].str())) << name << ": " << (*at)[1];
     }
@@ -81,7 +82,8 @@ TEST(Documents, LinksLeadSomewhere) {
   static const std::regex kLink("\\]\\(([^)#:]+)\\)");
   for (const std::string name : {"README.md", "DEVELOPERS.md"}) {
     const std::string text = text_of(kRoot / name);
-    for (std::sregex_iterator at(text.begin(), text.end(), kLink); at != std::sregex_iterator(); ++at) {
+    for (std::sregex_iterator at(text.begin(), text.end(), kLink); at != std::sregex_iterator();
+         ++at) {
       EXPECT_TRUE(fs::exists(kRoot / (*at)[1].str())) << name << ": " << (*at)[1];
     }
   }
@@ -93,7 +95,8 @@ TEST(Licences, SupportLibrarySaysSo) {
   for (const auto& entry : fs::directory_iterator(kRoot / "templates/coq")) {
     if (entry.path().extension() != ".v") continue;
     ++files;
-    EXPECT_NE(text_of(entry.path()).substr(0, 600).find("SPDX-License-Identifier: "), std::string::npos)
+    EXPECT_NE(text_of(entry.path()).substr(0, 600).find("SPDX-License-Identifier: "),
+              std::string::npos)
         << entry.path();
   }
   EXPECT_GT(files, 5U);
