@@ -58,19 +58,31 @@ FactorialConstants common_constants(const std::vector<FactorialConstants>& parts
     }
     reduced.push_back(std::move(part));
   }
-  // Products with fewer factorials get units inserted: own factorials sit in the upper places, units
-  // in the lower ones, and the reciprocal factorials must reach as high as the units.
+  // Products with fewer factorials get units inserted at the lowest places; what they then have must not lie
+  // below the base, and their reciprocal factorials must reach as high as the units.
+  const auto with_units = [&](const FactorialConstants& part, const std::vector<long>& own) {
+    std::vector<long> out = own;
+    out.insert(out.end(), base.fact.begin(),
+               base.fact.begin() + static_cast<long>(facts - part.fact.size()));
+    std::sort(out.begin(), out.end());
+    return out;
+  };
+  for (bool changed = true; changed;) {
+    changed = false;
+    for (const FactorialConstants& part : reduced) {
+      if (part.fact.size() >= facts) continue;
+      const std::vector<long> have = with_units(part, part.fact);
+      for (std::size_t i = 0; i < facts; ++i) {
+        changed = changed || have[i] < base.fact[i];
+        base.fact[i] = std::min(base.fact[i], have[i]);
+      }
+    }
+  }
   for (const FactorialConstants& part : reduced) {
     if (part.fact.size() >= facts) continue;
-    const std::size_t missing = facts - part.fact.size();
-    for (std::size_t i = 0; i < part.fact.size(); ++i)
-      base.fact[missing + i] = std::min(base.fact[missing + i], part.fact[i]);
-    std::sort(base.fact.begin(), base.fact.end());
-    std::vector<long> own = part.rfact;
-    own.insert(own.end(), base.fact.begin(), base.fact.begin() + static_cast<long>(missing));
-    std::sort(own.begin(), own.end());
+    const std::vector<long> have = with_units(part, part.rfact);
     for (std::size_t i = 0; i < base.rfact.size(); ++i)
-      base.rfact[i] = std::max(base.rfact[i], own[i]);
+      base.rfact[i] = std::max(base.rfact[i], have[i]);
   }
   return base;
 }

@@ -146,11 +146,11 @@ bool is_literal(const Atom& atom) {
     case AtomKind::power:
       return atom.argument.is_constant() &&
              (atom.base.is_constant() || atom.argument.constant >= 0);
-    case AtomKind::interval_product: return (atom.high - atom.low).is_constant();
-    case AtomKind::reciprocal_interval_product: {
+    case AtomKind::interval_product: {
       const Affine length = atom.high - atom.low;
-      return length.is_constant() && length.constant <= 0;
+      return length.is_constant() && length.constant >= 0;
     }
+    case AtomKind::reciprocal_interval_product: return atom.high == atom.low;
     case AtomKind::reciprocal: return atom.base.is_constant();
   }
   return false;

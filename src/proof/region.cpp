@@ -112,50 +112,62 @@ class Chooser {
     for (unsigned i = 0; i <= order_; ++i) {
       RangeDraft range;
       range.shift = i;
-      if (!settle_end(region, i, true, range.high_points, range.above, why) ||
-          !settle_end(region, i, false, range.low_points, range.below, why))
+      bool high_known = false;
+      bool low_known = false;
+      if (!parallel_points(region, i, true, range.high_points, high_known, why) ||
+          !parallel_points(region, i, false, range.low_points, low_known, why))
         return std::nullopt;
+      if (!high_known && !settle_vanishing(region, range, true, range.above, why)) return std::nullopt;
+      if (!low_known && !settle_vanishing(region, range, false, range.below, why)) return std::nullopt;
       region.ranges.push_back(range);
     }
     return region;
   }
 
-  bool settle_end(const RegionDraft& region, unsigned i, bool upper, unsigned& points,
-                  std::optional<VanishingDraft>& vanish, std::string& why) const {
+  /// An author's end that stays a constant number of points beyond the common range: those points are kept
+  /// explicitly, and the end is `known`.
+  bool parallel_points(const RegionDraft& region, unsigned i, bool upper, unsigned& points, bool& known,
+                       std::string& why) const {
     const End end = term::shift(upper ? range_.high : range_.low, term::running, i);
     const Affine& common = upper ? region.high : region.low;
-    Affine target = common;
-    if (end.affine && (*end.affine - common).is_constant()) {
-      const long beyond = upper ? (*end.affine - common).constant : (common - *end.affine).constant;
-      if (beyond > most_points) {
-        why = "too many points beyond the common range";
-        return false;
-      }
-      if (beyond >= 0) {
-        points = static_cast<unsigned>(beyond);
-        return true;
-      }
+    if (!end.affine || !(*end.affine - common).is_constant()) return true;
+    const long beyond = upper ? (*end.affine - common).constant : (common - *end.affine).constant;
+    if (beyond > most_points) {
+      why = "too many points beyond the common range";
+      return false;
     }
-    vanish = vanishing(setting_.from(region.threshold), mismatches(region, end, target, upper),
-                       shifted_summand(i));
+    known = beyond >= 0;
+    if (known) points = static_cast<unsigned>(beyond);
+    return true;
+  }
+
+  bool settle_vanishing(const RegionDraft& region, const RangeDraft& range, bool upper,
+                        std::optional<VanishingDraft>& vanish, std::string& why) const {
+    const End end = term::shift(upper ? range_.high : range_.low, term::running, range.shift);
+    vanish = vanishing(setting_.from(region.threshold), mismatches(region, range, end, upper),
+                       shifted_summand(range.shift));
     if (!vanish)
       why = upper ? "the upper end of the range is not natural and does not run parallel to it"
                   : "the lower end of the range is not natural and does not run parallel to it";
     return vanish.has_value();
   }
 
-  /// Points in one of the two ranges (author's, common) but not in the other, beyond this end.
-  [[nodiscard]] static std::vector<Conjunction> mismatches(const RegionDraft& region, const End& end,
-                                                           const Affine& target, bool upper) {
-    const Affine k = Affine::symbol(target.coefficients.size(), term::index);
+  /// Points in one of the two ranges (the author's; the common one with its explicit points) but not in the
+  /// other, because of this end. The author's range may be empty or end before the explicit points do.
+  [[nodiscard]] static std::vector<Conjunction> mismatches(const RegionDraft& region,
+                                                           const RangeDraft& range, const End& end,
+                                                           bool upper) {
+    const Affine k = Affine::symbol(region.low.coefficients.size(), term::index);
+    const Affine low = region.low - static_cast<long>(range.low_points);
+    const Affine high = region.high + static_cast<long>(range.high_points);
     std::vector<Conjunction> out;
     for (Conjunction c : end.outside) {
-      c.push_back(region.high - k);
-      c.push_back(k - region.low);
+      c.push_back(high - k);
+      c.push_back(k - low);
       out.push_back(c);
     }
     for (Conjunction c : end.inside) {
-      c.push_back(upper ? k - target - 1 : target - k - 1);
+      c.push_back(upper ? k - high - 1 : low - k - 1);
       out.push_back(c);
     }
     return out;

@@ -167,6 +167,7 @@ class Drafter {
         out_{{}, coefficients, {}, {}, {}, Polynomial(setting.ring), {}, {}, Polynomial(setting.ring)} {}
 
   std::optional<TelescopingDraft> run() {
+    if (has_zero_product()) return std::nullopt;
     std::vector<Product> instances;
     for (std::size_t i = 0; i < out_.coefficients.size(); ++i)
       for (const Product& f : summand_)
@@ -182,6 +183,18 @@ class Drafter {
   }
 
  private:
+  /// 1/L! with a literal L < 0: such a term has no quotients.
+  [[nodiscard]] bool has_zero_product() const {
+    for (const Product& f : summand_)
+      for (const auto& [atom, e] : f.atoms)
+        if (atom.kind == AtomKind::reciprocal_factorial && atom.argument.is_constant() &&
+            atom.argument.constant < 0) {
+          why_ = "a term of the summand is identically zero";
+          return true;
+        }
+    return false;
+  }
+
   /// q0 = R F / B.
   [[nodiscard]] Factored q0() const {
     Factored out = certificate_.factored();

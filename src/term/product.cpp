@@ -117,13 +117,17 @@ std::optional<Factored> rational_value(const RingPtr& ring, const Signature& s) 
     if (net != 0 && !numeric) return std::nullopt;
     // Walk up the constants, carrying the running exponent across each gap.
     long carried = 0;
-    long previous = numeric ? 1 : exponents.begin()->first;
-    if (numeric) {  // Gamma(c) = (c-1)!: relative to Gamma(1) = 1; c <= 0 has no value
-      for (const auto& [constant, e] : exponents)
-        if (e != 0) {
-          if (constant <= 0) return std::nullopt;
-          multiply_gap(ring, out, key, 1, constant, e);
-        }
+    long previous = exponents.begin()->first;
+    if (numeric) {
+      // Gamma(c) = (c-1)! relative to Gamma(1) = 1. At c <= 0 only quotients have values: those are taken
+      // relative to c = 0, and their exponents must add up to 0.
+      long below = 0;
+      for (const auto& [constant, e] : exponents) {
+        if (e == 0) continue;
+        if (constant <= 0) below += e;
+        multiply_gap(ring, out, key, constant <= 0 ? 0 : 1, constant, e);
+      }
+      if (below != 0) return std::nullopt;
       continue;
     }
     for (const auto& [constant, e] : exponents) {

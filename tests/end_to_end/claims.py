@@ -59,6 +59,7 @@ class Context:
     work: str
     claims: list  # true ones: exemplars, corpus, and those of this folder
     false_root: str
+    undecided_root: str
     library: str
     report: object
     seed: int

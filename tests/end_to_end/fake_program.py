@@ -13,6 +13,7 @@ HERE = os.path.dirname(os.path.abspath(__file__))
 
 
 def prepared(path):
+    """The folder for a claim file, or for a copy of one under the name of its export."""
     name = os.path.basename(path).rsplit(".", 1)[0].removeprefix("Of_exemplars_")
     return os.path.join(HERE, "prepared", name)
 

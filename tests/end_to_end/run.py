@@ -22,6 +22,7 @@ from step_false_claims import false_claims
 from step_latex import latex
 from step_mutants import mutants
 from step_speed import speed
+from step_undecided import undecided
 
 STEPS = ("exports", "latex", "coq", "mutants", "coqchk", "false", "speed")
 MARK = "made-by-end-to-end-tests"
@@ -58,6 +59,7 @@ def run_steps(context, steps):
             coqchk(context, folder, accepted)
     if "false" in steps:
         false_claims(context)
+        undecided(context)
     if "speed" in steps:
         speed(context)
     report.say(f"   {time.monotonic() - start:.0f} s in all")
@@ -82,6 +84,7 @@ def main():
         sumwright=[os.path.abspath(options.sumwright)], work=emptied(options.work),
         claims=[c for c in claims if options.only in c.name],
         false_root=os.path.join(options.root, "tests", "false-claims"),
+        undecided_root=os.path.join(options.root, "tests", "undecided"),
         library=options.library, report=Report(), seed=environment_number("SUMWRIGHT_SEED", 20),
         mutants=environment_number("SUMWRIGHT_MUTANTS", 60))
     return run_steps(context, steps)

@@ -118,8 +118,9 @@ class World:
         context = Context(
             sumwright=[self.program], work=run.emptied(os.path.join(self.folder, "work")),
             claims=claims_in(self.folder, "exemplars/*.toml"),
-            false_root=os.path.join(self.folder, "false"), library=LIBRARY, report=Report(out),
-            seed=1, mutants=mutants)
+            false_root=os.path.join(self.folder, "false"),
+            undecided_root=os.path.join(self.folder, "undecided"), library=LIBRARY,
+            report=Report(out), seed=1, mutants=mutants)
         status = run.run_steps(context, steps)
         return status, out.getvalue()
 
@@ -260,14 +261,39 @@ class Coq(Steps):
         self.assertNotIn("failed: theorems: exemplars/Vandermonde", said)  # an axiom not used
 
 
-class FalseClaims(Steps):
-    CLAIM = dict(summand=BINOMIAL, closed="2^n + n")
+FALSE = dict(summand=BINOMIAL, closed="2^n + n")
 
+
+class Undecided(Steps):
+    OPEN = {"verdict": "undecided", "reason": "r", "would_settle": "R7"}
+
+    def test_undecided(self):
+        for answer, status, files, expected in (
+                (self.OPEN, 3, ["obligations.txt"], None),
+                (self.OPEN, 3, ["obligations.txt", "appendix.tex"], "exported: appendix.tex"),
+                ({**self.OPEN, "verdict": "established"}, 0, [], "belongs in the corpus"),
+                ({**self.OPEN, "would_settle": ""}, 3, ["obligations.txt"], "would settle it"),
+                (self.OPEN, 4, [], "exit status 4 in place of 3")):
+            shutil.rmtree(os.path.join(self.place.name, "prepared"), ignore_errors=True)
+            world = FalseClaims.false_world(self, POINT)
+            write(os.path.join(world.folder, "undecided", "open.toml"), claim_text(BINOMIAL))
+            world.answer("open", answer, status)
+            for name in files:
+                write(world.place("open", name), "text")
+            if not files:
+                os.makedirs(world.place("open"))
+            if expected:
+                self.fails(world, expected, "false")
+            else:
+                self.assertRegex(self.passes(world, "false"), r"undecided claims +1 cases +0 fail")
+
+
+class FalseClaims(Steps):
     def false_world(self, answer, status=1, kind="claims", claim=None):
         world = self.world()
         for folder in ("claims", "evidence", "disguised"):
             write(os.path.join(world.folder, "false", folder, folder + ".toml"),
-                  claim_text(**(claim if claim and folder == kind else self.CLAIM)))
+                  claim_text(**(claim if claim and folder == kind else FALSE)))
             world.answer(folder, POINT, 0 if folder == "disguised" else 1)
         world.answer(kind, answer, status)
         return world

@@ -87,15 +87,16 @@ std::string evidence(const claim::Evidence& e) {
 }  // namespace
 
 std::string claim_file_text(const claim::Claim& claim, const std::string& comment) {
-  std::string out = "# " + comment + "\nformat  = 1\ntitle   = \"Regression\"\nrunning = " +
-                    quoted(claim.running) + "\nfrom    = " + claim.from.get_str() + "\n";
+  std::string out = "# " + comment +
+                    "\nformat  = 1\ntitle   = \"Regression\"\nrunning = " + quoted(claim.running) +
+                    "\nfrom    = " + claim.from.get_str() + "\n";
   if (!claim.assumptions.empty()) {
     out += "assume  = [";
     for (std::size_t i = 0; i < claim.assumptions.size(); ++i) {
       const claim::Assumption& a = claim.assumptions[i];
-      out += (i == 0 ? "" : ", ") + quoted(claim::to_text(*a.left) + " " +
-                                           comparison(a.comparison) + " " +
-                                           claim::to_text(*a.right));
+      out +=
+          (i == 0 ? "" : ", ") + quoted(claim::to_text(*a.left) + " " + comparison(a.comparison) +
+                                        " " + claim::to_text(*a.right));
     }
     out += "]\n";
   }

@@ -97,8 +97,7 @@ void add_nodes(const ExpressionPtr& e, Variants& out) {
   for (std::size_t i = 0; i < e->children.size(); ++i) {
     Variants inner;
     add_nodes(e->children[i], inner);
-    for (Variant& v : inner)
-      out.push_back({std::move(v.change), with_child(*e, i, v.expression)});
+    for (Variant& v : inner) out.push_back({std::move(v.change), with_child(*e, i, v.expression)});
   }
 }
 
@@ -201,8 +200,7 @@ class Maker {
             variants.push_back({by > 0 ? "one more" : "one less", plus(b.value, by)});
         for (const Variant& v : variants)
           add(Part::range, (high ? "upper bound: " : "lower bound: ") + v.change, b.value,
-              v.expression,
-              [&](claim::Claim& c) {
+              v.expression, [&](claim::Claim& c) {
                 claim::Range& changed = c.sum.over[i];
                 (high ? changed.high : changed.low).value = v.expression;
               });

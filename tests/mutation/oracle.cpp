@@ -128,8 +128,8 @@ Opinion certificate_holds(const claim::Claim& claim, std::mt19937_64& random) {
   return out;
 }
 
-bool equal_values(const claim::Claim& claim, const claim::Expression& a,
-                  const claim::Expression& b, std::mt19937_64& random) {
+bool equal_values(const claim::Claim& claim, const claim::Expression& a, const claim::Expression& b,
+                  std::mt19937_64& random) {
   std::size_t compared = 0;
   for (int tries = 0; tries < 400 && compared < kEnoughPoints; ++tries) {
     const std::optional<Assignment> at = random_point(claim, random);

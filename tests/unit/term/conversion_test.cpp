@@ -1,4 +1,5 @@
-// From expressions to products of atoms: one canonical form, equal values, refusals with their place.
+// From expressions to products of atoms: one canonical form, equal values, refusals with their
+// place.
 #include "term/conversion.hpp"
 
 #include <gtest/gtest.h>
@@ -73,14 +74,14 @@ TEST(Conversion, EqualTermsHaveOneForm) {
 
 TEST(Conversion, DifferentTermsHaveDifferentForms) {
   const Setting setting = testing::usual_setting();
-  for (const auto& [a, b] : std::vector<std::pair<std::string, std::string>>{
-           {"binomial(n, k)", "binomial(n, k + 1)"},
-           {"binomial(n, k)", "binomial(n, k)^2"},
-           {"2^k", "3^k"},
-           {"2^k", "(-2)^k"},
-           {"rising(x, k)", "rising(x + 1, k)"},
-           {"factorial(n)", "1/factorial(n)"},
-           {"1/(2*k + 1)", "2*k + 1"}})
+  for (const auto& [a, b] :
+       std::vector<std::pair<std::string, std::string>>{{"binomial(n, k)", "binomial(n, k + 1)"},
+                                                        {"binomial(n, k)", "binomial(n, k)^2"},
+                                                        {"2^k", "3^k"},
+                                                        {"2^k", "(-2)^k"},
+                                                        {"rising(x, k)", "rising(x + 1, k)"},
+                                                        {"factorial(n)", "1/factorial(n)"},
+                                                        {"1/(2*k + 1)", "2*k + 1"}})
     EXPECT_NE(shown(setting, convert(setting, a)), shown(setting, convert(setting, b))) << a;
 }
 

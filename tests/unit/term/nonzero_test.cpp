@@ -19,8 +19,8 @@ struct Reason {
 
 Reason decide(const Setting& setting, const Facts& facts, const std::string& text) {
   Reason out;
-  out.why = decide_nonzero(setting, facts,
-                           algebra::factor(testing::polynomial_of(setting, text)), &out.undecided);
+  out.why = decide_nonzero(setting, facts, algebra::factor(testing::polynomial_of(setting, text)),
+                           &out.undecided);
   return out;
 }
 
@@ -34,16 +34,11 @@ TEST(Nonzero, NamesTheMethod) {
   const Setting setting = make_setting(testing::read_claim(parts));
   const Facts facts = testing::usual_facts(setting);
   const std::vector<std::pair<std::string, Method>> rows{
-      {"n + 1", Method::linear},
-      {"2*k + 1", Method::linear},
-      {"n - k + 1", Method::linear},
-      {"n^2 + n + 1", Method::positive},
-      {"n*k + m + 1", Method::positive},
-      {"2*x - 1", Method::excluded},
-      {"x + n + 1", Method::excluded},
-      {"x + k + 3", Method::excluded},
-      {"y - n", Method::excluded},
-      {"3*x - 3*y", Method::assumed},
+      {"n + 1", Method::linear},         {"2*k + 1", Method::linear},
+      {"n - k + 1", Method::linear},     {"n^2 + n + 1", Method::positive},
+      {"n*k + m + 1", Method::positive}, {"2*x - 1", Method::excluded},
+      {"x + n + 1", Method::excluded},   {"x + k + 3", Method::excluded},
+      {"y - n", Method::excluded},       {"3*x - 3*y", Method::assumed},
   };
   for (const auto& [text, method] : rows) {
     const Reason r = decide(setting, facts, text);
@@ -51,19 +46,19 @@ TEST(Nonzero, NamesTheMethod) {
     ASSERT_EQ(r.why->factors.size(), 1U) << text;
     EXPECT_EQ(r.why->factors[0].method, method) << text;
   }
-  for (const auto& [text, named] : std::vector<std::pair<std::string, std::string>>{
-           {"n", "n"},
-           {"(n + 1)*(k - 2)", "k - 2"},
-           {"x", "x"},
-           {"x - 1", "x - 1"},
-           {"x + n", "n + x"},
-           {"2*x + 1", "2*x + 1"},
-           {"y + n", "n + y"},
-           {"x + y", "x + y"},
-           {"x^2 + 1", "x^2 + 1"},
-           {"n^2 - 2", "n^2 - 2"},
-           {"x*n + 1", "n*x + 1"},
-           {"0", "0"}}) {
+  for (const auto& [text, named] :
+       std::vector<std::pair<std::string, std::string>>{{"n", "n"},
+                                                        {"(n + 1)*(k - 2)", "k - 2"},
+                                                        {"x", "x"},
+                                                        {"x - 1", "x - 1"},
+                                                        {"x + n", "n + x"},
+                                                        {"2*x + 1", "2*x + 1"},
+                                                        {"y + n", "n + y"},
+                                                        {"x + y", "x + y"},
+                                                        {"x^2 + 1", "x^2 + 1"},
+                                                        {"n^2 - 2", "n^2 - 2"},
+                                                        {"x*n + 1", "n*x + 1"},
+                                                        {"0", "0"}}) {
     const Reason r = decide(setting, facts, text);
     EXPECT_FALSE(r.why) << text;
     EXPECT_EQ(r.undecided, named);

@@ -28,7 +28,8 @@ bool canonical(const Product& p) {
     if (p.atoms[i].first.kind != AtomKind::power) continue;
     if (p.atoms[i].second != 1) return false;
     for (std::size_t j = 0; j < i; ++j)
-      if (p.atoms[j].first.kind == AtomKind::power && p.atoms[j].first.base == p.atoms[i].first.base)
+      if (p.atoms[j].first.kind == AtomKind::power &&
+          p.atoms[j].first.base == p.atoms[i].first.base)
         return false;
   }
   return true;
@@ -154,6 +155,16 @@ TEST_F(ProductTest, DissimilarProductsHaveNoRatio) {
   EXPECT_EQ(ratio(ring_, power(2, "n + 3"), power(2, "n - 1"))->constant, 16);
   EXPECT_EQ(ratio(ring_, factorial("5"), factorial("3"))->constant, 20);
   EXPECT_FALSE(ratio(ring_, factorial("-1"), factorial("3"))) << "no value";
+  // (-9)(-8)(-7) has one, although Gamma has none at either end; (-1)(0)(1) is no quotient.
+  Product negative;
+  negative.multiply(interval_atom(Polynomial(ring_), 1, testing::affine(setting_, "-9"),
+                                  testing::affine(setting_, "-6"), false));
+  ASSERT_TRUE(ratio(ring_, negative, Product{}));
+  EXPECT_EQ(ratio(ring_, negative, Product{})->constant, -504);
+  Product zero;
+  zero.multiply(interval_atom(Polynomial(ring_), 1, testing::affine(setting_, "-1"),
+                              testing::affine(setting_, "2"), false));
+  EXPECT_FALSE(ratio(ring_, zero, Product{}));
 }
 
 TEST_F(ProductTest, FarApartIsRefused) {

@@ -74,7 +74,8 @@ TEST(Rational, ConstantsBecomePrimePowers) {
   EXPECT_EQ(atoms(1), "");
   EXPECT_EQ(atoms(360), "2^-3 3^-2 5^-1 ");
   EXPECT_EQ(atoms(97), "97^-1 ");
-  EXPECT_EQ(atoms(mpz_class("4295098369")), "4295098369^-1 ") << "65537^2 is above the primes tried";
+  EXPECT_EQ(atoms(mpz_class("4295098369")), "4295098369^-1 ")
+      << "65537^2 is above the primes tried";
 }
 
 TEST(Rational, PlainCopiesSayTheSame) {

@@ -54,9 +54,8 @@ TEST(Setting, AssumptionsBecomeFacts) {
 }
 
 TEST(Setting, ClaimsAboutNothingAreRefused) {
-  for (const char* assume :
-       {"\"a < b\", \"b < a\"", "\"a >= 5\", \"a <= 4\"", "\"a <= b\", \"b <= a\", \"a != b\"",
-        "\"2*a >= 3\", \"2*a <= 3\""}) {
+  for (const char* assume : {"\"a < b\", \"b < a\"", "\"a >= 5\", \"a <= 4\"",
+                             "\"a <= b\", \"b <= a\", \"a != b\"", "\"2*a >= 3\", \"2*a <= 3\""}) {
     ClaimParts parts;
     parts.parameters = "a = { in = \"integers\" }\nb = { in = \"integers\" }";
     parts.assume = assume;
@@ -82,15 +81,10 @@ bool holds(const std::vector<Conjunction>& alternatives, const Point& at) {
 
 // inside and outside are each other's complement, and mean what the bound says.
 TEST(Setting, EndsMeanTheirBounds) {
-  const char* const bounds[] = {"n",
-                                "2*n - m + 1",
-                                "floor(n/2)",
-                                "floor((2*n - m + 1)/3)",
-                                "min(n, m)",
-                                "max(n - 2, m)",
-                                "min(n, max(m, 3))",
-                                "max(floor(n/2), min(m, n - 1))",
-                                "5"};
+  const char* const bounds[] = {
+      "n",         "2*n - m + 1",   "floor(n/2)",        "floor((2*n - m + 1)/3)",
+      "min(n, m)", "max(n - 2, m)", "min(n, max(m, 3))", "max(floor(n/2), min(m, n - 1))",
+      "5"};
   std::size_t checked = 0;
   for (const char* bound : bounds)
     for (const bool upper : {false, true}) {

@@ -49,8 +49,7 @@ inline std::string claim_file(const ClaimParts& p) {
 }
 
 inline std::shared_ptr<const claim::Claim> read_claim(const ClaimParts& parts) {
-  return std::make_shared<claim::Claim>(
-      claim::read_claim_text("t.toml", claim_file(parts)).claim);
+  return std::make_shared<claim::Claim>(claim::read_claim_text("t.toml", claim_file(parts)).claim);
 }
 
 /// n, k, an integer parameter m >= 0, a rational parameter x that is no integer.
@@ -98,8 +97,7 @@ using Number = std::optional<mpq_class>;
 
 inline mpz_class value_of(const term::Affine& form, const Point& at) {
   mpq_class out = form.constant;
-  for (std::size_t i = 0; i < form.coefficients.size(); ++i)
-    out += form.coefficients[i] * at[i];
+  for (std::size_t i = 0; i < form.coefficients.size(); ++i) out += form.coefficients[i] * at[i];
   return out.get_num();
 }
 
@@ -204,7 +202,8 @@ inline unsigned long effort(unsigned long base) {
 
 class RandomTerms {
  public:
-  RandomTerms(const term::Setting& setting, std::uint64_t seed) : setting_(setting), random_(seed) {}
+  RandomTerms(const term::Setting& setting, std::uint64_t seed)
+      : setting_(setting), random_(seed) {}
 
   long pick(long low, long high) { return std::uniform_int_distribution<long>(low, high)(random_); }
 
@@ -215,18 +214,26 @@ class RandomTerms {
     return out;
   }
 
+  /// Never a number: factorials of negative numbers do not pass the conversion.
+  term::Affine symbolic_form(long constant) {
+    term::Affine out = form(constant);
+    if (out.is_constant()) out.coefficients[kN] = 1;
+    return out;
+  }
+
   term::Atom atom() {
     const algebra::RingPtr& ring = setting_.ring;
     switch (pick(0, 6)) {
       case 0:
-        return term::factorial_atom(ring, form(3));
+        return term::factorial_atom(ring, symbolic_form(3));
       case 1:
-        return term::reciprocal_factorial_atom(ring, form(3));
+        return term::reciprocal_factorial_atom(ring, symbolic_form(3));
       case 2:
         return term::power_atom(algebra::Polynomial(ring, pick(0, 1) == 0 ? -1 : pick(2, 3)),
-                                form(2));
+                                symbolic_form(2));
       case 3:
-        return term::power_atom(polynomial_of(setting_, pick(0, 1) == 0 ? "x" : "x + 2"), form(2));
+        return term::power_atom(polynomial_of(setting_, pick(0, 1) == 0 ? "x" : "x + 2"),
+                                symbolic_form(2));
       case 4:
         return term::reciprocal_atom(ring, polynomial_of(setting_, "2*k + 1"));
       default:
@@ -234,9 +241,11 @@ class RandomTerms {
     }
     const char* const bases[] = {"x", "1", "0"};
     const long which = pick(0, 2);
-    const term::Affine low = form(2);
-    // Of the base 0 only lengths that never turn negative.
-    const term::Affine high = which == 2 ? low + pick(0, 3) : form(2);
+    const term::Affine low = which == 2 ? symbolic_form(2) : form(2);
+    const term::Affine low = which == 2 ? symbolic_form(2) : form(2);
+    term::Affine high = form(2);
+    // Literal lengths are never negative, and of the base 0 there are no others.
+    if (which == 2 || (high - low).is_constant()) high = low + pick(0, 3);
     return term::interval_atom(polynomial_of(setting_, bases[which]), which == 1 ? 2 : 1, low, high,
                                pick(0, 1) == 0);
   }
