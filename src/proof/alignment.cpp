@@ -1,6 +1,6 @@
 // Matching factorial constants of one linear part.
-// Laws: fact moves down (to smaller constants), rfact moves up; a pair fact(c) rfact(d), d <= c, is a
-// polynomial and may be cancelled; a pair fact(c) rfact(c) may be inserted.
+// Laws: fact moves down (to smaller constants), rfact moves up; a pair fact(c) rfact(d), d <= c, is
+// a polynomial and may be cancelled; a pair fact(c) rfact(c) may be inserted.
 
 #include "proof/alignment.hpp"
 
@@ -58,8 +58,8 @@ FactorialConstants common_constants(const std::vector<FactorialConstants>& parts
     }
     reduced.push_back(std::move(part));
   }
-  // Products with fewer factorials get units inserted at the lowest places; what they then have must not lie
-  // below the base, and their reciprocal factorials must reach as high as the units.
+  // Products with fewer factorials get units inserted at the lowest places; what they then have
+  // must not lie below the base, and their reciprocal factorials must reach as high as the units.
   const auto with_units = [&](const FactorialConstants& part, const std::vector<long>& own) {
     std::vector<long> out = own;
     out.insert(out.end(), base.fact.begin(),

@@ -14,8 +14,8 @@ namespace sumwright::proof::building {
 /// The claim's terms converted on its own region.
 struct Terms {
   term::Setting setting;
-  std::optional<AuthorRange> range;      ///< none: no index
-  term::Facts region;                    ///< hypotheses, n >= from, index in the author's range
+  std::optional<AuthorRange> range;  ///< none: no index
+  term::Facts region;                ///< hypotheses, n >= from, index in the author's range
   long from = 0;
   term::Conversion summand;
   std::optional<term::Conversion> closed;
@@ -38,7 +38,7 @@ struct ArgumentDraft {
   std::optional<BalanceDraft> closed_recurrence;
   std::optional<algebra::Factored> leading;
   std::vector<InitialDraft> initial;
-  std::vector<term::Product> boundary;     ///< b as products, for printing
+  std::vector<term::Product> boundary;  ///< b as products, for printing
   std::string right_side_text = "0";
 };
 
@@ -46,9 +46,9 @@ struct ArgumentDraft {
 struct Attempt {
   enum class Outcome { complete, identity_fails, ends_fail, closed_fails, initial_fails, stuck };
   Outcome outcome = Outcome::stuck;
-  std::string why;           ///< stuck: what is missing
-  std::string rule;          ///< stuck: the rule that would settle it
-  long at = 0;               ///< initial_fails: the n
+  std::string why;   ///< stuck: what is missing
+  std::string rule;  ///< stuck: the rule that would settle it
+  long at = 0;       ///< initial_fails: the n
   ArgumentDraft draft;
 };
 

@@ -21,7 +21,8 @@ struct Place {
 
 class Assembler {
  public:
-  Assembler(const Terms& terms, Proof& proof) : terms_(terms), setting_(terms.setting), proof_(proof) {}
+  Assembler(const Terms& terms, Proof& proof)
+      : terms_(terms), setting_(terms.setting), proof_(proof) {}
 
   void conversions(const term::Conversion* right_side) {
     const std::string region = author_region();
@@ -153,8 +154,8 @@ class Assembler {
       out.leaves.push_back(std::move(plain));
     }
     for (const term::Denominator& d : c.denominators) {
-      Denominator plain{d.node, d.expression, term::plain(d.as_product), term::plain(d.reciprocal),
-                        {}, {}};
+      Denominator plain{
+          d.node, d.expression, term::plain(d.as_product), term::plain(d.reciprocal), {}, {}};
       for (const term::Unit& u : d.units) {
         plain.units.push_back(unit(u, place));
         if (!plain.units.back().condition.empty())
@@ -217,7 +218,8 @@ class Assembler {
     out.multiplicity = s.multiplicity;
     out.factor = term::plain(s.factor);
     for (const Need& need : s.needs) {
-      if (need.nonnegative) out.conditions.push_back(nonnegative(*need.nonnegative, place, need.kind));
+      if (need.nonnegative)
+        out.conditions.push_back(nonnegative(*need.nonnegative, place, need.kind));
       if (need.nonzero) {
         out.nonzero = nonzero(*need.nonzero, place, need.kind);
         if (!out.nonzero->condition.empty()) out.conditions.push_back(out.nonzero->condition);
@@ -275,10 +277,9 @@ class Assembler {
   void telescoping(const ArgumentDraft& d, const Place& beyond) {
     const TelescopingDraft& t = *d.telescoping;
     const Facts facts = d.region->facts(setting_);
-    const std::string region = fmt::format("{}, {} <= {} <= {}", beyond.region,
-                                           term::text(setting_, d.region->low),
-                                           setting_.symbols[term::index].name,
-                                           term::text(setting_, d.region->high));
+    const std::string region =
+        fmt::format("{}, {} <= {} <= {}", beyond.region, term::text(setting_, d.region->low),
+                    setting_.symbols[term::index].name, term::text(setting_, d.region->high));
     const Place place{facts, region};
     Telescoping out;
     out.base = {"B", term::plain(t.base)};
@@ -301,8 +302,7 @@ class Assembler {
     out.region.text = region;
     const term::Affine n = term::Affine::symbol(setting_.size(), term::running);
     const term::Affine k = term::Affine::symbol(setting_.size(), term::index);
-    for (const term::Affine& form :
-         {n - d.threshold, k - d.region->low, d.region->high - k})
+    for (const term::Affine& form : {n - d.threshold, k - d.region->low, d.region->high - k})
       out.region.nonnegative.push_back(term::plain(form));
     out.low = term::plain(d.region->low);
     out.high = term::plain(d.region->high);
@@ -316,8 +316,8 @@ class Assembler {
     const algebra::RingPtr& ring = setting_.ring;
     algebra::RationalFunction left(ring, mpq_class(0));
     for (std::size_t i = 0; i < t.coefficients.size(); ++i)
-      left = left + algebra::RationalFunction(t.coefficients[i]) *
-                        algebra::RationalFunction(ring, t.p[i]);
+      left = left +
+             algebra::RationalFunction(t.coefficients[i]) * algebra::RationalFunction(ring, t.p[i]);
     left = left * algebra::RationalFunction(ring, t.weight);
     const algebra::Polynomial& numerator = left.numerator();
     const algebra::Polynomial primitive = numerator.primitive_part();
@@ -331,8 +331,8 @@ class Assembler {
   Vanishing vanishing(const VanishingDraft& draft, const std::string& text, const Place& place) {
     Vanishing out;
     for (const term::Atom& atom : draft) out.atoms.push_back(term::plain(atom));
-    out.condition =
-        condition(ConditionKind::support, text, place.region, Settled::decided, "linear arithmetic");
+    out.condition = condition(ConditionKind::support, text, place.region, Settled::decided,
+                              "linear arithmetic");
     return out;
   }
 
@@ -346,10 +346,8 @@ class Assembler {
       step.high_points = r.high_points;
       const std::string f = r.shift == 0 ? fmt::format("F({}, {})", n, k)
                                          : fmt::format("F({} + {}, {})", n, r.shift, k);
-      if (r.below)
-        step.below = vanishing(*r.below, f + " = 0 between the two lower ends", place);
-      if (r.above)
-        step.above = vanishing(*r.above, f + " = 0 between the two upper ends", place);
+      if (r.below) step.below = vanishing(*r.below, f + " = 0 between the two lower ends", place);
+      if (r.above) step.above = vanishing(*r.above, f + " = 0 between the two upper ends", place);
       if (r.low_points + r.high_points > 0)
         condition(ConditionKind::explicit_point,
                   fmt::format("{} has {} point(s) outside the common range, kept explicitly", f,
@@ -362,7 +360,8 @@ class Assembler {
   InitialValue initial(const InitialDraft& draft) {
     InitialValue out;
     out.at = draft.at;
-    const std::string region = fmt::format("{} = {}", setting_.symbols[term::running].name, draft.at);
+    const std::string region =
+        fmt::format("{} = {}", setting_.symbols[term::running].name, draft.at);
     const Place place{setting_.hypotheses, region};
     for (const LiteralSumDraft& s : draft.sums) {
       LiteralSum sum;
@@ -376,8 +375,8 @@ class Assembler {
     }
     out.balance = balance(fmt::format("initial_{}", draft.at), draft.balance, place);
     out.value = number(draft.balance);
-    condition(ConditionKind::initial_value,
-              fmt::format("both sides agree at {}", region), region, Settled::decided, "evaluation");
+    condition(ConditionKind::initial_value, fmt::format("both sides agree at {}", region), region,
+              Settled::decided, "evaluation");
     return out;
   }
 

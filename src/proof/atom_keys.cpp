@@ -1,6 +1,7 @@
-// Sorting a product's atoms into groups that the laws can bring together, and the base of such groups:
-// rfact at its largest shift, fact at its smallest, powers at the smallest exponent, interval products
-// at the shortest, reciprocal interval products at the longest, denominators at the highest power.
+// Sorting a product's atoms into groups that the laws can bring together, and the base of such
+// groups: rfact at its largest shift, fact at its smallest, powers at the smallest exponent,
+// interval products at the shortest, reciprocal interval products at the longest, denominators at
+// the highest power.
 
 #include "proof/atom_keys.hpp"
 
@@ -32,7 +33,7 @@ void check_literal(const mpz_class& size) {
 
 template <typename Map>
 std::set<typename Map::key_type, typename Map::key_compare> all_keys(
-    const std::vector<AtomGroups>& groups, Map AtomGroups::* member) {
+    const std::vector<AtomGroups>& groups, Map AtomGroups::*member) {
   std::set<typename Map::key_type, typename Map::key_compare> out;
   for (const AtomGroups& g : groups)
     for (const auto& [key, value] : g.*member) out.insert(key);
@@ -129,7 +130,9 @@ AtomGroups::AtomGroups(const RingPtr& ring, const Product& product) {
         list.insert(list.end(), exponent, atom);
         break;
       }
-      case AtomKind::reciprocal: reciprocals[atom.base] += exponent; break;
+      case AtomKind::reciprocal:
+        reciprocals[atom.base] += exponent;
+        break;
     }
   }
 }
@@ -142,7 +145,8 @@ FactorialConstants AtomGroups::constants(const std::vector<long>& key) const {
 bool is_literal(const Atom& atom) {
   switch (atom.kind) {
     case AtomKind::factorial:
-    case AtomKind::reciprocal_factorial: return atom.argument.is_constant();
+    case AtomKind::reciprocal_factorial:
+      return atom.argument.is_constant();
     case AtomKind::power:
       return atom.argument.is_constant() &&
              (atom.base.is_constant() || atom.argument.constant >= 0);
@@ -150,8 +154,10 @@ bool is_literal(const Atom& atom) {
       const Affine length = atom.high - atom.low;
       return length.is_constant() && length.constant >= 0;
     }
-    case AtomKind::reciprocal_interval_product: return atom.high == atom.low;
-    case AtomKind::reciprocal: return atom.base.is_constant();
+    case AtomKind::reciprocal_interval_product:
+      return atom.high == atom.low;
+    case AtomKind::reciprocal:
+      return atom.base.is_constant();
   }
   return false;
 }
@@ -191,7 +197,8 @@ Factored literal_value(const RingPtr& ring, const Atom& atom) {
       }
       return out;
     }
-    case AtomKind::reciprocal_interval_product: return out;
+    case AtomKind::reciprocal_interval_product:
+      return out;
     case AtomKind::reciprocal:
       if (atom.base.is_zero()) throw std::domain_error("a denominator vanishes");
       out.multiply(atom.base, -1);

@@ -46,8 +46,8 @@ struct AtomGroups {
   [[nodiscard]] FactorialConstants constants(const std::vector<long>& key) const;
 };
 
-/// An atom whose value needs no law: factorials of numbers, numeric bases to literal exponents, interval
-/// products of literal length >= 0, reciprocals of constants.
+/// An atom whose value needs no law: factorials of numbers, numeric bases to literal exponents,
+/// interval products of literal length >= 0, reciprocals of constants.
 [[nodiscard]] bool is_literal(const term::Atom& atom);
 /// Its value: a polynomial with a rational constant (0 for rfact of a negative number).
 [[nodiscard]] algebra::Factored literal_value(const algebra::RingPtr& ring, const term::Atom& atom);

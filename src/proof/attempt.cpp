@@ -5,6 +5,7 @@
 #include <fmt/format.h>
 
 #include "proof/argument.hpp"
+#include "term/simplify.hpp"
 #include "term/text.hpp"
 
 namespace sumwright::proof::building {
@@ -25,10 +26,7 @@ class Attempter {
  public:
   Attempter(const Terms& terms, const EvidenceDraft& evidence, bool as_equality,
             const Deadline& deadline)
-      : terms_(terms),
-        setting_(terms.setting),
-        as_equality_(as_equality),
-        deadline_(deadline) {
+      : terms_(terms), setting_(terms.setting), as_equality_(as_equality), deadline_(deadline) {
     out_.draft.evidence = evidence;
   }
 
@@ -67,7 +65,8 @@ class Attempter {
     return false;
   }
 
-  /// The least n from which the weight (and for equalities the leading coefficient) is nonzero (R5).
+  /// The least n from which the weight (and for equalities the leading coefficient) is nonzero
+  /// (R5).
   bool threshold() {
     Factored must = weight();
     if (as_equality_) {
@@ -146,8 +145,8 @@ class Attempter {
     describe_right_side(facts);
     std::vector<TermDraft> ends = left_terms();
     if (!as_equality_) return recurrence_balance(std::move(ends), facts);
-    for (TermDraft& t : closed_terms(setting_, weight(), d.evidence.coefficients,
-                                     terms_.closed->products))
+    for (TermDraft& t :
+         closed_terms(setting_, weight(), d.evidence.coefficients, terms_.closed->products))
       ends.push_back(std::move(t));
     d.closed_recurrence = balanced(std::move(ends), facts);
     if (!d.closed_recurrence) return false;
@@ -182,6 +181,7 @@ class Attempter {
       Factored value = group.total.factored();
       value.multiply(weight(), -1);
       Product product = group.base;
+      term::simplify(setting_.ring, value, product);
       const std::string part = term::claim_text(value, product);
       if (text.empty())
         text = part;
@@ -201,8 +201,9 @@ class Attempter {
     const std::vector<Product>& right =
         as_equality_ ? terms_.closed->products
                      : (d.evidence.right_side ? d.evidence.right_side->products : none);
-    const InitialContext context{setting_, terms_.range, terms_.summand.products,
-                                 d.evidence.coefficients, right, as_equality_};
+    const InitialContext context{
+        setting_, terms_.range, terms_.summand.products, d.evidence.coefficients,
+        right,    as_equality_};
     const long end = d.threshold + (as_equality_ ? static_cast<long>(order()) : 0);
     for (long n = terms_.from; n < end; ++n) {
       deadline_.check();

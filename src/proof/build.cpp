@@ -1,6 +1,6 @@
 // The ladder: terms, refutation, evidence, argument, Proof.
-// Invariant: `established` is set in one place, after a complete attempt; everything else is refuted with
-// a point, or undecided with a reason.
+// Invariant: `established` is set in one place, after a complete attempt; everything else is
+// refuted with a point, or undecided with a reason.
 
 #include "proof/build.hpp"
 
@@ -40,8 +40,9 @@ class Builder {
     if (!make_terms()) return proof_;
     for (const claim::Assumption& a : claim_->assumptions)
       if (names_symbol(*a.left, claim_->running) || names_symbol(*a.right, claim_->running))
-        return undecided("a condition on the running variable itself, at " + place_text(*claim_, a.place),
-                         "R6: an induction that stays inside the condition");
+        return undecided(
+            "a condition on the running variable itself, at " + place_text(*claim_, a.place),
+            "R6: an induction that stays inside the condition");
     if (claim_->is_question()) return answer_question();
     if (claim_->is_equality()) return prove_equality();
     return prove_recurrence();
@@ -60,7 +61,8 @@ class Builder {
     return proof_;
   }
 
-  /// Values of the claim itself at small n and at the places where the argument met something special.
+  /// Values of the claim itself at small n and at the places where the argument met something
+  /// special.
   bool refuted_by_values(const std::vector<mpz_class>& also) {
     stage("values");
     const bool equality = claim_->is_equality();
@@ -109,12 +111,11 @@ class Builder {
       brought.draft.coefficients.pop_back();
     if (terms_->range && !brought.has_certificate) {
       stage("certificate");
-      brought.draft.certificate = search::find_certificate(
-          terms_->setting.ring, shift_quotients(*terms_), brought.draft.coefficients,
-          options_.deadline);
+      brought.draft.certificate =
+          search::find_certificate(terms_->setting.ring, shift_quotients(*terms_),
+                                   brought.draft.coefficients, options_.deadline);
       if (!brought.draft.certificate) {
-        if (equality)
-          return recurrence_settled(brought.draft) ? search_and_prove(true) : proof_;
+        if (equality) return recurrence_settled(brought.draft) ? search_and_prove(true) : proof_;
         return undecided("the claimed recurrence is not a telescoper of the summand",
                          "sum = sum: deducing it from the recurrence that `find` gives");
       }
@@ -124,7 +125,8 @@ class Builder {
           search::verify_identity(terms_->setting.ring, shift_quotients(*terms_),
                                   brought.draft.coefficients, *brought.draft.certificate);
       if (!check.holds) {
-        diagnose_identity(*terms_, *claim_, brought.draft, check.residue, options_.deadline, proof_);
+        diagnose_identity(*terms_, *claim_, brought.draft, check.residue, options_.deadline,
+                          proof_);
         return proof_;
       }
     }
@@ -134,15 +136,16 @@ class Builder {
     return report(tried, false);
   }
 
-  /// An equality that is proved without the author's recurrence says nothing of it: it must follow from the
-  /// closed form. Otherwise the proof says that it fails, or that it is not decided.
+  /// An equality that is proved without the author's recurrence says nothing of it: it must follow
+  /// from the closed form. Otherwise the proof says that it fails, or that it is not decided.
   bool recurrence_settled(const EvidenceDraft& brought) {
     const auto point =
         term::refute(as_recurrence_claim(*claim_), first_values, 6, {}, options_.deadline);
     if (!point && holds_for_closed_form(*terms_, brought)) return true;
     if (!point) {
-      undecided("the recurrence brought as evidence is not shown by the summand or by the closed form",
-                "leaving the evidence out: the equality may be decided without it");
+      undecided(
+          "the recurrence brought as evidence is not shown by the summand or by the closed form",
+          "leaving the evidence out: the equality may be decided without it");
       return false;
     }
     proof_.verdict = Verdict::refuted;
@@ -153,8 +156,8 @@ class Builder {
     return false;
   }
 
-  /// The author's recurrence is checked as a claim of its own, right side included; then the equality is
-  /// proved from it without its common factor, or from a recurrence that is found.
+  /// The author's recurrence is checked as a claim of its own, right side included; then the
+  /// equality is proved from it without its common factor, or from a recurrence that is found.
   Proof equality_from(const EvidenceDraft& brought) {
     const Attempt checked = attempt(*terms_, brought, false, options_.deadline);
     if (checked.outcome == Attempt::Outcome::ends_fail ||
@@ -167,8 +170,7 @@ class Builder {
     Poly common(terms_->setting.ring);
     for (const Poly& a : reduced.coefficients) common = gcd(common, a);
     for (Poly& a : reduced.coefficients) a = a.divide(common).first;
-    if (reduced.certificate)
-      reduced.certificate = *reduced.certificate / RationalFunction(common);
+    if (reduced.certificate) reduced.certificate = *reduced.certificate / RationalFunction(common);
     const Attempt tried = attempt(*terms_, reduced, true, options_.deadline);
     if (tried.outcome != Attempt::Outcome::stuck) return report(tried, true);
     const Proof found = search_and_prove(true);
@@ -182,9 +184,8 @@ class Builder {
   }
 
   Proof search_and_prove(bool equality) {
-    const search::ShiftQuotients quotients = terms_->range
-                                                 ? shift_quotients(*terms_)
-                                                 : pointwise_quotients();
+    const search::ShiftQuotients quotients =
+        terms_->range ? shift_quotients(*terms_) : pointwise_quotients();
     std::optional<Attempt> first;
     if (!terms_->range) return pointwise(equality);
     for (EvidenceDraft& evidence : fallback_last(quotients, equality)) {
@@ -204,7 +205,8 @@ class Builder {
   }
 
   /// Candidates, best first: the telescoper of least order; for summands free of n the difference
-  /// S(n+1) - S(n), whose certificate is 0 and whose leading coefficient never vanishes; the next order.
+  /// S(n+1) - S(n), whose certificate is 0 and whose leading coefficient never vanishes; the next
+  /// order.
   std::vector<EvidenceDraft> fallback_last(const search::ShiftQuotients& quotients, bool equality) {
     stage("search");
     const algebra::RingPtr& ring = terms_->setting.ring;
@@ -218,10 +220,13 @@ class Builder {
       };
     const auto found = search::find_telescoper(ring, quotients, options);
     if (found) out.push_back({found->coefficients, found->certificate, std::nullopt, false});
-    const bool free_of_n = quotients.by_running.factors.empty() && quotients.by_running.constant == 1;
+    const bool free_of_n =
+        quotients.by_running.factors.empty() && quotients.by_running.constant == 1;
     if (free_of_n)
       out.push_back({{Poly(ring, mpz_class(-1)), Poly(ring, mpz_class(1))},
-                     RationalFunction(ring, mpq_class(0)), std::nullopt, false});
+                     RationalFunction(ring, mpq_class(0)),
+                     std::nullopt,
+                     false});
     (void)equality;
     return out;
   }
@@ -240,8 +245,7 @@ class Builder {
       proof_.claim = with_recurrence(*claim_, evidence.coefficients, "0");
       return probe;
     }
-    if (probe.outcome == Attempt::Outcome::ends_fail ||
-        probe.outcome == Attempt::Outcome::complete)
+    if (probe.outcome == Attempt::Outcome::ends_fail || probe.outcome == Attempt::Outcome::complete)
       return with_right_side(evidence, probe);
     return probe;
   }
@@ -298,13 +302,16 @@ class Builder {
         assemble(*terms_, tried.draft, equality, proof_);
         return established();
       case Attempt::Outcome::identity_fails:
-        diagnose_identity(*terms_, *claim_, tried.draft.evidence,
-                          tried.draft.telescoping->residue, options_.deadline, proof_);
+        diagnose_identity(*terms_, *claim_, tried.draft.evidence, tried.draft.telescoping->residue,
+                          options_.deadline, proof_);
         return proof_;
-      case Attempt::Outcome::ends_fail: return ends_fail(tried, equality);
+      case Attempt::Outcome::ends_fail:
+        return ends_fail(tried, equality);
       case Attempt::Outcome::closed_fails:
-      case Attempt::Outcome::initial_fails: return false_somewhere(tried);
-      case Attempt::Outcome::stuck: break;
+      case Attempt::Outcome::initial_fails:
+        return false_somewhere(tried);
+      case Attempt::Outcome::stuck:
+        break;
     }
     if (!claim_->is_question() && refuted_by_values(special_values(tried))) return proof_;
     assemble_conversion(*terms_, proof_);
@@ -344,10 +351,14 @@ class Builder {
     proof_.counterexample = from_difference(*point, "the recurrence of the sum");
     proof_.reason =
         tried.outcome == Attempt::Outcome::initial_fails
-            ? fmt::format("the certificate is right as an identity, but the recurrence of the sum fails "
-                          "at {} = {}", claim_->running, tried.at)
-            : fmt::format("the certificate is right as an identity, but the right side of the recurrence "
-                          "is not; the ends give {}", tried.draft.right_side_text);
+            ? fmt::format(
+                  "the certificate is right as an identity, but the recurrence of the sum fails "
+                  "at {} = {}",
+                  claim_->running, tried.at)
+            : fmt::format(
+                  "the certificate is right as an identity, but the right side of the recurrence "
+                  "is not; the ends give {}",
+                  tried.draft.right_side_text);
     return proof_;
   }
 

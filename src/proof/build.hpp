@@ -16,9 +16,10 @@ struct BuildOptions {
   std::function<void(const std::string& stage)> progress;  ///< for a terminal; may be empty
 };
 
-/// Decides the claim as far as the rules go. Never `established` unless every part of the argument is
-/// there. Throws claim::InputError for claims that cannot be used (not hypergeometric, contradictory
-/// hypotheses) and algebra::TimeUp.
-[[nodiscard]] Proof build(std::shared_ptr<const claim::Claim> claim, const BuildOptions& options = {});
+/// Decides the claim as far as the rules go. Never `established` unless every part of the argument
+/// is there. Throws claim::InputError for claims that cannot be used (not hypergeometric,
+/// contradictory hypotheses) and algebra::TimeUp.
+[[nodiscard]] Proof build(std::shared_ptr<const claim::Claim> claim,
+                          const BuildOptions& options = {});
 
 }  // namespace sumwright::proof

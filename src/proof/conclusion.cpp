@@ -63,8 +63,8 @@ class EndTerms {
     const algebra::RingPtr& ring = setting_.ring;
     const Affine& at = upper ? region_.high : region_.low;
     const Polynomial where = at.polynomial(ring);
-    const Polynomial c = upper ? telescoping_.certificate.shift(term::index, 1)
-                               : telescoping_.certificate;
+    const Polynomial c =
+        upper ? telescoping_.certificate.shift(term::index, 1) : telescoping_.certificate;
     TermDraft term;
     term.origin = upper ? Origin::upper_end : Origin::lower_end;
     term.at_upper = upper;
@@ -122,9 +122,10 @@ class LiteralRange {
 
   std::optional<LiteralSumDraft> run() {
     if (!settle(false, out_.low, out_.below) || !settle(true, out_.high, out_.above)) {
-      why_ = fmt::format("at {} = {} the range does not become literal by its ends or its support "
-                         "(rule R10: a sum over a range of parameter length)",
-                         setting_.symbols[term::running].name, out_.at);
+      why_ = fmt::format(
+          "at {} = {} the range does not become literal by its ends or its support "
+          "(rule R10: a sum over a range of parameter length)",
+          setting_.symbols[term::running].name, out_.at);
       return std::nullopt;
     }
     if (out_.high - out_.low > 2000) {
@@ -264,9 +265,8 @@ class InitialValueBuilder {
     term.product = term::substitute(setting_.ring, context_.summand[j], term::running, at);
     term.product = term::substitute(setting_.ring, term.product, term::index, *term.point);
     if (!context_.equality)
-      scale(term.product,
-            context_.coefficients[i].substitute(
-                term::running, Polynomial(setting_.ring, mpz_class(out_.at))));
+      scale(term.product, context_.coefficients[i].substitute(
+                              term::running, Polynomial(setting_.ring, mpz_class(out_.at))));
     terms_.push_back(std::move(term));
   }
 

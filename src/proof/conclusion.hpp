@@ -1,4 +1,5 @@
-// From the telescoped identity to the claim: ends, explicit points, right sides, values at literal n.
+// From the telescoped identity to the claim: ends, explicit points, right sides, values at literal
+// n.
 #pragma once
 
 #include <optional>
@@ -11,8 +12,8 @@
 
 namespace sumwright::proof::building {
 
-/// The terms that the telescoped sum leaves: value at the upper end, minus the one at the lower end, plus
-/// weight * a_i F(n+i, point) for the explicit points.
+/// The terms that the telescoped sum leaves: value at the upper end, minus the one at the lower
+/// end, plus weight * a_i F(n+i, point) for the explicit points.
 [[nodiscard]] std::vector<TermDraft> end_terms(const term::Setting& setting,
                                                const TelescopingDraft& telescoping,
                                                const RegionDraft& region,
@@ -50,15 +51,15 @@ struct InitialDraft {
 /// Everything that literal values need to be computed from.
 struct InitialContext {
   const term::Setting& setting;
-  const std::optional<AuthorRange>& range;       ///< none: no index
+  const std::optional<AuthorRange>& range;  ///< none: no index
   const std::vector<term::Product>& summand;
   const std::vector<algebra::Polynomial>& coefficients;  ///< recurrences
-  const std::vector<term::Product>& right;       ///< closed form, or b
+  const std::vector<term::Product>& right;               ///< closed form, or b
   bool equality = true;
 };
 
-/// The comparison at n = at; nothing, with `why`, when the range does not become literal (rule R10) or the
-/// laws do not reach. The balance may fail to hold: then the claim is false there.
+/// The comparison at n = at; nothing, with `why`, when the range does not become literal (rule R10)
+/// or the laws do not reach. The balance may fail to hold: then the claim is false there.
 [[nodiscard]] std::optional<InitialDraft> initial_value(const InitialContext& context, long at,
                                                         std::string& why);
 

@@ -40,8 +40,7 @@ std::string recurrence_of_certificate(const Terms& terms, const EvidenceDraft& e
   search::SearchOptions options;
   options.max_order = static_cast<unsigned>(evidence.coefficients.size());
   options.deadline = deadline;
-  const auto found =
-      search::find_telescoper(terms.setting.ring, shift_quotients(terms), options);
+  const auto found = search::find_telescoper(terms.setting.ring, shift_quotients(terms), options);
   if (!found || found->certificate.is_zero() || evidence.certificate->is_zero()) return "";
   const RationalFunction factor = *evidence.certificate / found->certificate;
   if (factor.numerator().depends_on(term::index) || factor.denominator().depends_on(term::index))
@@ -61,10 +60,11 @@ search::ShiftQuotients shift_quotients(const Terms& terms) {
   for (std::size_t j = 1; j < f.size(); ++j) {
     const std::optional<Factored> quotient = term::ratio(ring, f[j], f[0]);
     if (!quotient)
-      throw claim::InputError(*terms.setting.claim->source, terms.summand.expression->place,
-                              "the summand is not a hypergeometric term: it is a sum of terms whose "
-                              "quotient is not a rational function",
-                              "as written, their factorials or powers do not match");
+      throw claim::InputError(
+          *terms.setting.claim->source, terms.summand.expression->place,
+          "the summand is not a hypergeometric term: it is a sum of terms whose "
+          "quotient is not a rational function",
+          "as written, their factorials or powers do not match");
     total = total + RationalFunction(ring, *quotient);
   }
   if (total.is_zero())
@@ -104,8 +104,8 @@ BroughtEvidence read_evidence(const Terms& terms, const claim::Claim& claim) {
     throw claim::InputError(*claim.source, claim.evidence.place,
                             "every coefficient of this recurrence is zero");
   if (claim.evidence.right_side) {
-    term::Conversion b = term::convert(terms.setting, terms.setting.from(terms.from),
-                                       claim.evidence.right_side);
+    term::Conversion b =
+        term::convert(terms.setting, terms.setting.from(terms.from), claim.evidence.right_side);
     if (!out.cleared.is_one())
       for (Product& p : b.products) p.coefficient.multiply(out.cleared, 1);
     if (!b.products.empty()) out.draft.right_side = std::move(b);
@@ -113,8 +113,8 @@ BroughtEvidence read_evidence(const Terms& terms, const claim::Claim& claim) {
   if (!claim.evidence.certificate.empty() && terms.range) {
     const auto entry = claim.evidence.certificate.find(terms.setting.symbols[term::index].name);
     if (entry != claim.evidence.certificate.end()) {
-      out.draft.certificate = rational(terms, entry->second, "the certificate") *
-                              RationalFunction(out.cleared);
+      out.draft.certificate =
+          rational(terms, entry->second, "the certificate") * RationalFunction(out.cleared);
       out.has_certificate = true;
     }
   }
@@ -133,7 +133,8 @@ bool holds_for_closed_form(const Terms& terms, const EvidenceDraft& evidence) {
   const Factored one;
   std::vector<TermDraft> all =
       closed_terms(terms.setting, one, evidence.coefficients, terms.closed->products);
-  for (TermDraft& term : all) term.product.coefficient.constant = -term.product.coefficient.constant;
+  for (TermDraft& term : all)
+    term.product.coefficient.constant = -term.product.coefficient.constant;
   if (evidence.right_side)
     for (TermDraft& term : right_side_terms(terms.setting, one, evidence.right_side->products))
       all.push_back(std::move(term));
@@ -163,21 +164,23 @@ void diagnose_identity(const Terms& terms, const claim::Claim& claim, const Evid
   if (!recurrence_point) {
     const auto other = search::find_certificate(terms.setting.ring, shift_quotients(terms),
                                                 evidence.coefficients, deadline);
-    proof.reason = "the certificate is wrong: it does not prove this recurrence, which holds at every "
-                   "value tried";
-    if (other)
-      proof.reason += "; a certificate for it is " + term::claim_text(other->factored());
+    proof.reason =
+        "the certificate is wrong: it does not prove this recurrence, which holds at every "
+        "value tried";
+    if (other) proof.reason += "; a certificate for it is " + term::claim_text(other->factored());
   } else {
     const std::string belongs = recurrence_of_certificate(terms, evidence, deadline);
     const std::string where = fmt::format("{} = {}", recurrence_point->at.front().first,
                                           recurrence_point->at.front().second.get_str());
     proof.reason = belongs.empty()
-                       ? fmt::format("the recurrence is wrong (it fails at {}), and the certificate "
-                                     "does not prove it",
-                                     where)
-                       : fmt::format("the recurrence is wrong (it fails at {}); the certificate "
-                                     "belongs to the recurrence {}",
-                                     where, belongs);
+                       ? fmt::format(
+                             "the recurrence is wrong (it fails at {}), and the certificate "
+                             "does not prove it",
+                             where)
+                       : fmt::format(
+                             "the recurrence is wrong (it fails at {}); the certificate "
+                             "belongs to the recurrence {}",
+                             where, belongs);
   }
 }
 

@@ -23,12 +23,12 @@ struct BroughtEvidence {
   algebra::Polynomial cleared;
 };
 
-/// Reads claim.evidence: coefficients cleared of denominators, right side converted (times the cleared
-/// denominator), certificate. Throws claim::InputError.
+/// Reads claim.evidence: coefficients cleared of denominators, right side converted (times the
+/// cleared denominator), certificate. Throws claim::InputError.
 [[nodiscard]] BroughtEvidence read_evidence(const Terms& terms, const claim::Claim& claim);
 
-/// Fills proof.reason, residue and counterexample for a certificate whose identity fails: says which part
-/// is wrong as far as that can be told.
+/// Fills proof.reason, residue and counterexample for a certificate whose identity fails: says
+/// which part is wrong as far as that can be told.
 void diagnose_identity(const Terms& terms, const claim::Claim& claim, const EvidenceDraft& evidence,
                        const algebra::Polynomial& residue, const algebra::Deadline& deadline,
                        Proof& proof);
@@ -37,8 +37,8 @@ void diagnose_identity(const Terms& terms, const claim::Claim& claim, const Evid
 [[nodiscard]] Counterexample from_difference(const term::Difference& difference,
                                              const std::string& what);
 
-/// Whether sum_i a_i C(n+i) = b is shown for the closed form C and every n >= from: with the equality, the
-/// author's recurrence then holds, whatever its certificate. `false` decides nothing.
+/// Whether sum_i a_i C(n+i) = b is shown for the closed form C and every n >= from: with the
+/// equality, the author's recurrence then holds, whatever its certificate. `false` decides nothing.
 [[nodiscard]] bool holds_for_closed_form(const Terms& terms, const EvidenceDraft& evidence);
 
 /// The claim with this recurrence as its claim (no equality), for evaluation at points.

@@ -1,6 +1,6 @@
 // The shift of a base term in the index: down(n,k+1) B(n,k+1) = up(n,k) B(n,k).
-// Both sides are brought to the same atoms: on the left and on the right each atom moves only in the
-// direction in which its law holds without division. Common factors of down(n,k+1) and up are
+// Both sides are brought to the same atoms: on the left and on the right each atom moves only in
+// the direction in which its law holds without division. Common factors of down(n,k+1) and up are
 // cancelled last, under a nonvanishing condition (factorials such as (2k)! beside k! need it).
 
 #include <algorithm>
@@ -43,7 +43,8 @@ class Shifter {
   IndexShift run() {
     const AtomGroups left(ring_, shifted_);
     const AtomGroups right(ring_, base_);
-    for (const auto& [key, constants] : right.factorials) factorials(key, left.constants(key), constants);
+    for (const auto& [key, constants] : right.factorials)
+      factorials(key, left.constants(key), constants);
     for (const auto& [b, exponent] : right.powers) powers(b, left.powers.at(b), exponent);
     for (const auto& [key, atoms] : right.intervals) intervals(left.intervals.at(key), atoms);
     reciprocals(left, right);
@@ -155,7 +156,9 @@ class Shifter {
       const Atom atom = term::reciprocal_atom(ring_, p);
       Factored single;
       single.multiply(p, 1);
-      UnitDraft unit{atom, atom, static_cast<unsigned>(std::abs(gap)),
+      UnitDraft unit{atom,
+                     atom,
+                     static_cast<unsigned>(std::abs(gap)),
                      {ConditionKind::nonvanishing, std::nullopt, single}};
       // The side that lacks 1/P gets P * 1/P.
       (gap < 0 ? up_ : down_next_).multiply(p, std::abs(gap));

@@ -42,7 +42,7 @@ enum class Settled { decided, given, open };
 
 /// A side condition: what must hold, where, and why it does.
 struct Condition {
-  std::string id;      ///< "c1", "c2", ... in order of the argument
+  std::string id;  ///< "c1", "c2", ... in order of the argument
   ConditionKind kind = ConditionKind::definedness;
   std::string text;    ///< "n - k >= 0"
   std::string region;  ///< "n >= 0, 0 <= k <= n"
@@ -54,9 +54,10 @@ struct Condition {
 
 /// How one function call or symbolic power of the claim becomes atoms.
 enum class LeafRule {
-  binomial_factorials,   ///< binomial(a,b) = fact(a) rfact(b) rfact(a-b), a >= 0
-  binomial_interval,     ///< binomial(a,b) = ip(x; u-b+1, u+1) rfact(b), a = x + u, any a (x = 0 for integers)
-  factorial,             ///< factorial(a) = fact(a)
+  binomial_factorials,  ///< binomial(a,b) = fact(a) rfact(b) rfact(a-b), a >= 0
+  binomial_interval,    ///< binomial(a,b) = ip(x; u-b+1, u+1) rfact(b), a = x + u, any a (x = 0 for
+                        ///< integers)
+  factorial,            ///< factorial(a) = fact(a)
   reciprocal_factorial,  ///< factorial(a) in a denominator = rfact(a)
   rising_interval,       ///< rising(x+u, m) = ip(x; u, u+m), m >= 0
   rising_factorials,     ///< rising(u, m) = fact(u+m-1) rfact(u-1), u >= 1, m >= 0
@@ -100,36 +101,38 @@ struct Conversion {
   std::string id;  ///< "summand", "closed", "right_side"
   claim::ExpressionPtr expression;
   Region region;
-  std::vector<Leaf> leaves;               ///< every call and symbolic power, each different one once
+  std::vector<Leaf> leaves;  ///< every call and symbolic power, each different one once
   std::vector<Denominator> denominators;  ///< innermost first
   std::vector<PowerMerge> merges;         ///< in the order in which they happened
   std::vector<Product> products;          ///< after cancelling units
   std::vector<std::vector<Unit>> units;   ///< per product: the units cancelled from it
-  /// Definedness of the author's text, for `claim_defined`: each entry names a node and why it has a value.
-  std::vector<std::string> definedness;   ///< condition ids
+  /// Definedness of the author's text, for `claim_defined`: each entry names a node and why it has
+  /// a value.
+  std::vector<std::string> definedness;  ///< condition ids
 };
 
 // ---------------------------------------------------------------- similarity: instances of a base
 
-/// One atom rewritten: from = factor * to, by `steps` applications of its law. A `literal` step has no
-/// `to`: the atom has a value that needs no law beyond its definition (arguments without symbols, an
-/// interval product of literal length), and from = factor.
-/// Steps are in an order in which a rewritten atom never meets a later step's `from`.
+/// One atom rewritten: from = factor * to, by `steps` applications of its law. A `literal` step has
+/// no `to`: the atom has a value that needs no law beyond its definition (arguments without
+/// symbols, an interval product of literal length), and from = factor. Steps are in an order in
+/// which a rewritten atom never meets a later step's `from`.
 struct AtomStep {
   enum class Side { left, right };
   Side side = Side::left;
   Atom from;
   Atom to;
-  unsigned steps = 0;  ///< 0: the two differ only in the way the argument is written
+  unsigned steps = 0;         ///< 0: the two differ only in the way the argument is written
   unsigned multiplicity = 1;  ///< how many of the copies of `from` are rewritten by this step
   bool literal = false;
-  Factored factor;     ///< product of the linear factors of the law; constant may be a fraction
+  Factored factor;  ///< product of the linear factors of the law; constant may be a fraction
   std::vector<std::string> conditions;
   std::optional<Nonzero> nonzero;  ///< for laws that need a nonzero base or factor
 };
 
 /// left = right as numbers on the region: left atoms and right atoms become the same by the steps
-/// and units, and then left.coefficient * factors = right.coefficient * factors is a polynomial identity.
+/// and units, and then left.coefficient * factors = right.coefficient * factors is a polynomial
+/// identity.
 struct Instance {
   std::string id;
   Region region;
@@ -138,12 +141,13 @@ struct Instance {
   std::vector<Unit> left_units;   ///< inserted into (multiplied to) the left side
   std::vector<Unit> right_units;  ///< inserted into the right side
   std::vector<AtomStep> steps;
-  std::optional<Nonzero> cancelled;  ///< both sides were multiplied by this and it is cancelled last
+  std::optional<Nonzero>
+      cancelled;  ///< both sides were multiplied by this and it is cancelled last
 };
 
 /// A product with coefficient 1 to which similar products are compared.
 struct Base {
-  std::string id;        ///< "B", "E1", "E2", ...
+  std::string id;  ///< "B", "E1", "E2", ...
   Product product;
 };
 
@@ -158,7 +162,8 @@ struct BalanceTerm {
   std::size_t piece = 0;  ///< which product of F, C or b
   Affine point;           ///< explicit_point and ends: the index value
   Product product;        ///< after substituting the index; in the remaining symbols
-  std::optional<std::string> zero;   ///< why it is 0: "polynomial factor", or the id of a support condition
+  std::optional<std::string>
+      zero;  ///< why it is 0: "polynomial factor", or the id of a support condition
   std::optional<Atom> zero_atom;     ///< the rfact with negative argument when that is the reason
   std::size_t group = 0;             ///< index into Balance::groups when not zero
   std::optional<Instance> instance;  ///< product = polynomial * base of the group
@@ -186,27 +191,28 @@ struct Balance {
 /// q0 = down * c, q1 = up * c(n,k+1), and down(n,k+1) B(n,k+1) = up(n,k) B(n,k).
 struct Telescoping {
   Base base;
-  std::vector<Factored> coefficients;       ///< a_0..a_J: polynomials free of the index
-  Nonzero weight;                           ///< d(n): free of the index; 1 in most cases
+  std::vector<Factored> coefficients;  ///< a_0..a_J: polynomials free of the index
+  Nonzero weight;                      ///< d(n): free of the index; 1 in most cases
   /// per shift i, per product of F: F_j(n+i,k) = p B
   std::vector<std::vector<Instance>> shifts;
-  std::vector<Factored> p;                  ///< per shift: the sum over the products of F
-  Polynomial certificate;                   ///< c(n,k)
+  std::vector<Factored> p;  ///< per shift: the sum over the products of F
+  Polynomial certificate;   ///< c(n,k)
   Factored down;
   Factored up;
-  std::optional<Instance> index_shift;      ///< down(n,k+1) B(n,k+1) = up B(n,k); none when c = 0
-  Region region;                            ///< n >= threshold, low <= k <= high
-  Affine low;                               ///< common range: low(n) <= k <= high(n)
+  std::optional<Instance> index_shift;  ///< down(n,k+1) B(n,k+1) = up B(n,k); none when c = 0
+  Region region;                        ///< n >= threshold, low <= k <= high
+  Affine low;                           ///< common range: low(n) <= k <= high(n)
   Affine high;
   std::vector<std::string> conditions;
 
   /// Normal form of the equality: left - right expanded is 0; for the record, the left side,
   /// primitive over Z with positive leading coefficient, and its sizes.
   Polynomial normal_form;
-  mpq_class normal_scale = 1;               ///< left side = normal_scale * normal_form
+  mpq_class normal_scale = 1;  ///< left side = normal_scale * normal_form
 };
 
-/// Why F(n+i, k) vanishes beyond an end: per product of F an rfact whose argument is negative there.
+/// Why F(n+i, k) vanishes beyond an end: per product of F an rfact whose argument is negative
+/// there.
 struct Vanishing {
   std::vector<Atom> atoms;  ///< per product of F, written at n+i
   std::string condition;
@@ -218,7 +224,8 @@ struct RangeStep {
   unsigned shift = 0;
   unsigned low_points = 0;
   unsigned high_points = 0;
-  std::optional<Vanishing> below;  ///< set when the author's lower end differs from low - low_points
+  std::optional<Vanishing>
+      below;  ///< set when the author's lower end differs from low - low_points
   std::optional<Vanishing> above;
 };
 
@@ -226,7 +233,7 @@ struct RangeStep {
 
 /// S at one literal n: the index runs over literal low..high after leaving out vanishing terms.
 struct LiteralSum {
-  long at = 0;                     ///< the n of S(n)
+  long at = 0;  ///< the n of S(n)
   long low = 0;
   long high = -1;                  ///< high < low: no nonzero terms
   std::optional<Vanishing> below;  ///< set when the author's end is not literally `low`
@@ -234,13 +241,14 @@ struct LiteralSum {
 };
 
 /// One n checked term by term: S(at) against the closed form (equalities: one sum), or
-/// sum_i a_i(at) S(at+i) against b(at) (recurrences: sums for i = 0..J). A balance in the parameters only.
-/// BalanceTerm::shift says to which of `sums` an explicit term belongs, BalanceTerm::point is the index value.
+/// sum_i a_i(at) S(at+i) against b(at) (recurrences: sums for i = 0..J). A balance in the
+/// parameters only. BalanceTerm::shift says to which of `sums` an explicit term belongs,
+/// BalanceTerm::point is the index value.
 struct InitialValue {
   long at = 0;
   std::vector<LiteralSum> sums;
   std::optional<mpq_class> value;  ///< both sides as a number, when free of parameters
-  Balance balance;                 ///< S(at) - right side = 0 (for recurrences: sum a_i S(at+i) - b(at))
+  Balance balance;  ///< S(at) - right side = 0 (for recurrences: sum a_i S(at+i) - b(at))
 };
 
 enum class Verdict { established, refuted, undecided };
@@ -249,14 +257,15 @@ enum class Subject { claim, evidence };
 /// A point at which the claim or the evidence fails, both sides exact.
 struct Counterexample {
   std::vector<std::pair<std::string, mpq_class>> values;  ///< symbol, value, in order of symbols
-  std::string left;   ///< exact number or "no value: <why>"
+  std::string left;                                       ///< exact number or "no value: <why>"
   std::string right;
-  std::string what;   ///< "the claimed equality", "the telescoping identity", ...
+  std::string what;  ///< "the claimed equality", "the telescoping identity", ...
 };
 
 struct Proof {
-  /// The claim with the evidence in use. For a question or a recurrence claim, evidence.recurrence and
-  /// right_side are the parse trees of the recurrence as stated in the theorem (denominators cleared).
+  /// The claim with the evidence in use. For a question or a recurrence claim, evidence.recurrence
+  /// and right_side are the parse trees of the recurrence as stated in the theorem (denominators
+  /// cleared).
   std::shared_ptr<const claim::Claim> claim;
   bool question = false;  ///< the author asked for a recurrence; it was found
   std::vector<Symbol> symbols;
@@ -266,33 +275,35 @@ struct Proof {
   std::string reason;                            ///< undecided, refuted: in a sentence or two
   std::string would_settle;                      ///< undecided: which rule, what would help
   std::optional<Counterexample> counterexample;  ///< refuted
-  std::string residue;                           ///< wrong certificate: leading monomials of the residue
+  std::string residue;  ///< wrong certificate: leading monomials of the residue
 
   /// The recurrence proved, as claim-language text: what `find` prints.
   std::vector<std::string> recurrence_text;
   std::string right_side_text;
   std::string certificate_text;
-  bool evidence_brought = false;                 ///< the author brought it (else found)
-  long from = 0;                                 ///< the claim's `from`
-  long threshold = 0;                            ///< n1: the telescoping argument holds for n >= n1
-  unsigned order = 0;                            ///< J after dropping zero coefficients at the end
+  bool evidence_brought = false;  ///< the author brought it (else found)
+  long from = 0;                  ///< the claim's `from`
+  long threshold = 0;             ///< n1: the telescoping argument holds for n >= n1
+  unsigned order = 0;             ///< J after dropping zero coefficients at the end
 
   Conversion summand;
-  std::optional<Conversion> right_side;          ///< b(n) of a claimed recurrence, if not 0
-  std::optional<Conversion> closed;              ///< the closed form of an equality
-  /// The right side that the ends give, grouped by similarity, for readers (printed as right_side_text).
+  std::optional<Conversion> right_side;  ///< b(n) of a claimed recurrence, if not 0
+  std::optional<Conversion> closed;      ///< the closed form of an equality
+  /// The right side that the ends give, grouped by similarity, for readers (printed as
+  /// right_side_text).
   std::vector<Product> boundary;
 
-  std::optional<Telescoping> telescoping;        ///< none only when the claim has no index
-  std::vector<RangeStep> ranges;                 ///< one per shift 0..J
+  std::optional<Telescoping> telescoping;  ///< none only when the claim has no index
+  std::vector<RangeStep> ranges;           ///< one per shift 0..J
   /// Recurrence claims: ends + explicit points - weight * b = 0, for n >= threshold, so that
   /// sum_i a_i S(n+i) = b.
   std::optional<Balance> ends;
-  /// Equalities: ends + explicit points - weight * sum_i a_i C(n+i) = 0, so that S and C satisfy the
-  /// same recurrence, whatever its right side. (Order 0: this is the whole conclusion.)
+  /// Equalities: ends + explicit points - weight * sum_i a_i C(n+i) = 0, so that S and C satisfy
+  /// the same recurrence, whatever its right side. (Order 0: this is the whole conclusion.)
   std::optional<Balance> closed_recurrence;
-  std::optional<Nonzero> leading;                ///< a_J(n) != 0 for n >= threshold (equalities)
-  std::vector<InitialValue> initial;             ///< from..threshold+J-1 (equalities), from..threshold-1 (recurrences)
+  std::optional<Nonzero> leading;  ///< a_J(n) != 0 for n >= threshold (equalities)
+  std::vector<InitialValue>
+      initial;  ///< from..threshold+J-1 (equalities), from..threshold-1 (recurrences)
 
   std::vector<Condition> conditions;
 };

@@ -1,8 +1,8 @@
 // Choosing the common range of the index (rules R1 and R5).
-// Candidates for each end come from the author's ends at n, ..., n+J and from the ends of the support
-// (rfact arguments); the widest pair on which every need is a theorem of linear arithmetic wins. Points of
-// the author's ranges beyond it are kept as explicit points; where it reaches beyond the author's
-// ranges, F must vanish there.
+// Candidates for each end come from the author's ends at n, ..., n+J and from the ends of the
+// support (rfact arguments); the widest pair on which every need is a theorem of linear arithmetic
+// wins. Points of the author's ranges beyond it are kept as explicit points; where it reaches
+// beyond the author's ranges, F must vanish there.
 
 #include "proof/region.hpp"
 
@@ -37,7 +37,12 @@ class Chooser {
  public:
   Chooser(const Setting& setting, const AuthorRange& range, const std::vector<Product>& summand,
           unsigned order, const std::vector<Need>& needs, std::string& why)
-      : setting_(setting), range_(range), summand_(summand), order_(order), needs_(needs), why_(why) {}
+      : setting_(setting),
+        range_(range),
+        summand_(summand),
+        order_(order),
+        needs_(needs),
+        why_(why) {}
 
   std::optional<RegionDraft> run(long threshold) {
     if (!free_needs_hold(threshold)) return std::nullopt;
@@ -117,17 +122,19 @@ class Chooser {
       if (!parallel_points(region, i, true, range.high_points, high_known, why) ||
           !parallel_points(region, i, false, range.low_points, low_known, why))
         return std::nullopt;
-      if (!high_known && !settle_vanishing(region, range, true, range.above, why)) return std::nullopt;
-      if (!low_known && !settle_vanishing(region, range, false, range.below, why)) return std::nullopt;
+      if (!high_known && !settle_vanishing(region, range, true, range.above, why))
+        return std::nullopt;
+      if (!low_known && !settle_vanishing(region, range, false, range.below, why))
+        return std::nullopt;
       region.ranges.push_back(range);
     }
     return region;
   }
 
-  /// An author's end that stays a constant number of points beyond the common range: those points are kept
-  /// explicitly, and the end is `known`.
-  bool parallel_points(const RegionDraft& region, unsigned i, bool upper, unsigned& points, bool& known,
-                       std::string& why) const {
+  /// An author's end that stays a constant number of points beyond the common range: those points
+  /// are kept explicitly, and the end is `known`.
+  bool parallel_points(const RegionDraft& region, unsigned i, bool upper, unsigned& points,
+                       bool& known, std::string& why) const {
     const End end = term::shift(upper ? range_.high : range_.low, term::running, i);
     const Affine& common = upper ? region.high : region.low;
     if (!end.affine || !(*end.affine - common).is_constant()) return true;
@@ -152,8 +159,9 @@ class Chooser {
     return vanish.has_value();
   }
 
-  /// Points in one of the two ranges (the author's; the common one with its explicit points) but not in the
-  /// other, because of this end. The author's range may be empty or end before the explicit points do.
+  /// Points in one of the two ranges (the author's; the common one with its explicit points) but
+  /// not in the other, because of this end. The author's range may be empty or end before the
+  /// explicit points do.
   [[nodiscard]] static std::vector<Conjunction> mismatches(const RegionDraft& region,
                                                            const RangeDraft& range, const End& end,
                                                            bool upper) {

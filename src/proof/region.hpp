@@ -1,5 +1,5 @@
-// Where the telescoping identity is summed: the common range of the index, the points left over, and the
-// threshold (design, rules R1 and R5).
+// Where the telescoping identity is summed: the common range of the index, the points left over,
+// and the threshold (design, rules R1 and R5).
 #pragma once
 
 #include <optional>
@@ -47,10 +47,11 @@ struct AuthorRange {
                                                        const AuthorRange& range,
                                                        const std::vector<term::Product>& summand,
                                                        unsigned order,
-                                                       const std::vector<Need>& needs, long threshold,
-                                                       std::string& why);
+                                                       const std::vector<Need>& needs,
+                                                       long threshold, std::string& why);
 
-/// Per product an rfact atom that is negative on each of the alternatives; nothing when some product has none.
+/// Per product an rfact atom that is negative on each of the alternatives; nothing when some
+/// product has none.
 [[nodiscard]] std::optional<VanishingDraft> vanishing(const term::Facts& facts,
                                                       const std::vector<term::Conjunction>& where,
                                                       const std::vector<term::Product>& summand);

@@ -98,8 +98,9 @@ class Bringer {
     for (const std::vector<long>& key : merged_keys(left.factorials, right.factorials)) {
       const Affine linear{key, 0};
       const std::optional<Alignment> aligned = align(left.constants(key), right.constants(key));
-      if (!aligned) return fail("factorials of " + linear.polynomial(ring_).to_string() +
-                                " are not brought together by the laws of factorials");
+      if (!aligned)
+        return fail("factorials of " + linear.polynomial(ring_).to_string() +
+                    " are not brought together by the laws of factorials");
       for (const auto& [fact, rfact] : aligned->cancelled) cancel_pair(linear, fact, rfact);
       for (long c : aligned->inserted) unit_pair(linear + c, out_.left_units);
       // Order: a rewritten atom must never be the source of a later step.

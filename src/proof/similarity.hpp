@@ -1,8 +1,9 @@
 // Similar products brought to a common base: the working forms behind Base and Instance.
 //
-// Base term (design, section 2): over all products of a class, every rfact form at its largest shift,
-// every fact form at its smallest, the longest reciprocal and the shortest interval products, the
-// smallest exponents. Then each product is a polynomial times the base, by one law per atom:
+// Base term (design, section 2): over all products of a class, every rfact form at its largest
+// shift, every fact form at its smallest, the longest reciprocal and the shortest interval
+// products, the smallest exponents. Then each product is a polynomial times the base, by one law
+// per atom:
 //   rfact(m-1) = m rfact(m) for every m;  fact(m+1) = (m+1) fact(m) for m >= 0;  and alike.
 #pragma once
 
@@ -29,7 +30,7 @@ struct Step {
   std::optional<term::Atom> to;  ///< none: a literal step
   unsigned steps = 0;
   unsigned multiplicity = 1;
-  algebra::Factored factor;      ///< of one copy
+  algebra::Factored factor;  ///< of one copy
   std::vector<Need> needs;
 };
 
@@ -49,13 +50,14 @@ struct Bringing {
   std::vector<UnitDraft> right_units;
   std::vector<Step> steps;
   std::optional<algebra::Factored> cancelled;  ///< both sides multiplied by it
-  term::Product right;   ///< base times `right` coefficient where the right side carries one
+  term::Product right;  ///< base times `right` coefficient where the right side carries one
 
   /// Every need of steps, units and the cancelled factor.
   [[nodiscard]] std::vector<Need> needs() const;
 };
 
-/// The base of products known to be similar; nothing (with `why`) when the laws cannot bring them together.
+/// The base of products known to be similar; nothing (with `why`) when the laws cannot bring them
+/// together.
 [[nodiscard]] std::optional<term::Product> common_base(const algebra::RingPtr& ring,
                                                        const std::vector<term::Product>& products,
                                                        std::string& why);
@@ -65,11 +67,12 @@ struct Bringing {
                                             const term::Product& product, const term::Product& base,
                                             std::string& why);
 
-/// down(k+1) base(k+1) = up base(k): the shift of a base in the index, with common factors cancelled.
+/// down(k+1) base(k+1) = up base(k): the shift of a base in the index, with common factors
+/// cancelled.
 struct IndexShift {
   algebra::Factored down;  ///< as a function of k (not k+1)
   algebra::Factored up;
-  Bringing bringing;       ///< left: down(k+1) * base(k+1), right: up * base(k)
+  Bringing bringing;  ///< left: down(k+1) * base(k+1), right: up * base(k)
 };
 [[nodiscard]] std::optional<IndexShift> index_shift(const algebra::RingPtr& ring,
                                                     const term::Product& base, std::string& why);

@@ -1,5 +1,6 @@
 // From the claim to its terms, and from a recurrence to the statement that the theorem makes of it.
-// Invariant: what a theorem states about a found or cleared recurrence is parsed from the printed text.
+// Invariant: what a theorem states about a found or cleared recurrence is parsed from the printed
+// text.
 
 #include "proof/statement.hpp"
 
@@ -111,8 +112,8 @@ std::unique_ptr<Terms> convert_terms(const std::shared_ptr<const claim::Claim>& 
   term::Conversion summand = term::convert(setting, region, claim->sum.summand);
   std::optional<term::Conversion> closed;
   if (claim->closed) closed = term::convert(setting, setting.from(proof.from), claim->closed);
-  auto out = std::make_unique<Terms>(Terms{std::move(setting), range, region, proof.from,
-                                           std::move(summand), std::move(closed)});
+  auto out = std::make_unique<Terms>(
+      Terms{std::move(setting), range, region, proof.from, std::move(summand), std::move(closed)});
   if (!settled(*out, proof)) return nullptr;
   return out;
 }
@@ -136,14 +137,13 @@ std::shared_ptr<const claim::Claim> cleared_statement(const Terms& terms, const 
   if (!divides) return nullptr;
   std::string right = "0";
   if (claim.evidence.right_side)
-    right = brought.cleared.is_one()
-                ? claim::to_text(*claim.evidence.right_side)
-                : fmt::format("({})*({})", brought.cleared.to_string(),
-                              claim::to_text(*claim.evidence.right_side));
+    right = brought.cleared.is_one() ? claim::to_text(*claim.evidence.right_side)
+                                     : fmt::format("({})*({})", brought.cleared.to_string(),
+                                                   claim::to_text(*claim.evidence.right_side));
   std::shared_ptr<const claim::Claim> stated =
       with_recurrence(claim, brought.draft.coefficients, right);
-  brought.draft.right_side = term::convert(terms.setting, terms.setting.from(terms.from),
-                                           stated->evidence.right_side);
+  brought.draft.right_side =
+      term::convert(terms.setting, terms.setting.from(terms.from), stated->evidence.right_side);
   if (brought.draft.right_side->products.empty()) brought.draft.right_side.reset();
   return stated;
 }

@@ -10,9 +10,9 @@
 
 namespace sumwright::proof::building {
 
-/// Converts summand and closed form on the claim's own region. Null when something is not settled: then
-/// proof.verdict is undecided, with the reason and the place. Fills proof.symbols.
-/// Throws claim::InputError when a factor is not hypergeometric.
+/// Converts summand and closed form on the claim's own region. Null when something is not settled:
+/// then proof.verdict is undecided, with the reason and the place. Fills proof.symbols. Throws
+/// claim::InputError when a factor is not hypergeometric.
 [[nodiscard]] std::unique_ptr<Terms> convert_terms(const std::shared_ptr<const claim::Claim>& claim,
                                                    Proof& proof);
 
@@ -21,8 +21,8 @@ namespace sumwright::proof::building {
     const claim::Claim& claim, const std::vector<algebra::Polynomial>& coefficients,
     const std::string& right_side);
 
-/// A claimed recurrence with denominators is stated with them cleared: the claim so stated (evidence's right
-/// side is converted anew), or null when it is stated as written.
+/// A claimed recurrence with denominators is stated with them cleared: the claim so stated
+/// (evidence's right side is converted anew), or null when it is stated as written.
 [[nodiscard]] std::shared_ptr<const claim::Claim> cleared_statement(const Terms& terms,
                                                                     const claim::Claim& claim,
                                                                     BroughtEvidence& brought);

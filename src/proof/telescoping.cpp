@@ -1,5 +1,5 @@
-// The polynomial equality (design, section 2, and rule R2 for the order in which denominators of the
-// certificate are absorbed): from F, a_i and R to
+// The polynomial equality (design, section 2, and rule R2 for the order in which denominators of
+// the certificate are absorbed): from F, a_i and R to
 //   weight * sum_i a_i p_i = up * c(n,k+1) - down * c(n,k).
 // Invariant: the equality is equivalent, as rational functions, to sum_i a_i F(n+i,k) = D_k (R F).
 
@@ -22,8 +22,9 @@ namespace {
 
 constexpr long farthest_absorption = 64;
 
-/// Tries to make the base smaller so that the denominator factor f of q0 goes: larger rfact arguments,
-/// then smaller fact arguments, interval ends, exponents (rule R2). The base is changed in place.
+/// Tries to make the base smaller so that the denominator factor f of q0 goes: larger rfact
+/// arguments, then smaller fact arguments, interval ends, exponents (rule R2). The base is changed
+/// in place.
 class Absorber {
  public:
   Absorber(const RingPtr& ring, Product& base) : ring_(ring), base_(base) {}
@@ -164,7 +165,9 @@ class Drafter {
         summand_(summand),
         certificate_(certificate),
         why_(why),
-        out_{{}, coefficients, {}, {}, {}, Polynomial(setting.ring), {}, {}, Polynomial(setting.ring)} {}
+        out_{{}, coefficients, {},
+             {}, {},           Polynomial(setting.ring),
+             {}, {},           Polynomial(setting.ring)} {}
 
   std::optional<TelescopingDraft> run() {
     if (has_zero_product()) return std::nullopt;
@@ -221,14 +224,15 @@ class Drafter {
         }
       if (factor == nullptr) return absorb_free_factors();
       const Polynomial f = *factor;
-      if (!Absorber(ring_, out_.base).absorb(f)) out_.base.multiply(term::reciprocal_atom(ring_, f));
+      if (!Absorber(ring_, out_.base).absorb(f))
+        out_.base.multiply(term::reciprocal_atom(ring_, f));
     }
     why_ = "the denominator of the certificate is not absorbed by the base term";
     return false;
   }
 
-  /// Denominators free of the index: into factorials free of the index where that costs nothing, else
-  /// into the weight.
+  /// Denominators free of the index: into factorials free of the index where that costs nothing,
+  /// else into the weight.
   bool absorb_free_factors() { return true; }
 
   bool bring_shifts() {

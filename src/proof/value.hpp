@@ -48,21 +48,21 @@ struct Affine {
 
 /// The building blocks of base terms. L, i, j are affine.
 enum class AtomKind {
-  factorial,                    ///< fact(L): L!, used only where L >= 0
-  reciprocal_factorial,         ///< rfact(L): 1/L! for L >= 0, 0 for L < 0
-  power,                        ///< base ^ L (zpow); base a prime, -1, or irreducible in rational parameters
-  interval_product,             ///< ip(a; i, j) = product of (a+t) for i <= t < j
+  factorial,             ///< fact(L): L!, used only where L >= 0
+  reciprocal_factorial,  ///< rfact(L): 1/L! for L >= 0, 0 for L < 0
+  power,             ///< base ^ L (zpow); base a prime, -1, or irreducible in rational parameters
+  interval_product,  ///< ip(a; i, j) = product of (a+t) for i <= t < j
   reciprocal_interval_product,  ///< 1 / ip(a; i, j)
   reciprocal                    ///< 1 / P, P a polynomial in any symbols
 };
 
 struct Atom {
   AtomKind kind = AtomKind::factorial;
-  Affine argument;       ///< L: factorial, reciprocal_factorial; the exponent for power
-  Polynomial base;       ///< power: the base; reciprocal: P; interval products: numerator of a
+  Affine argument;           ///< L: factorial, reciprocal_factorial; the exponent for power
+  Polynomial base;           ///< power: the base; reciprocal: P; interval products: numerator of a
   mpz_class base_scale = 1;  ///< interval products: a = base / base_scale
-  Affine low;            ///< interval products: i
-  Affine high;           ///< interval products: j
+  Affine low;                ///< interval products: i
+  Affine high;               ///< interval products: j
 };
 
 /// coefficient * product of atom ^ exponent (exponents > 0, atoms pairwise different).
@@ -72,8 +72,8 @@ struct Product {
   std::vector<std::pair<Atom, unsigned>> atoms;
 };
 
-/// Where a statement is claimed: the listed affine forms are all >= 0 (besides the hypotheses of the
-/// claim), as text for readers and as data for provers.
+/// Where a statement is claimed: the listed affine forms are all >= 0 (besides the hypotheses of
+/// the claim), as text for readers and as data for provers.
 struct Region {
   std::vector<Affine> nonnegative;
   std::string text;  ///< "n >= 2, 0 <= k <= n + 1"
@@ -82,39 +82,40 @@ struct Region {
 /// Why a polynomial is nonzero on a region, factor by factor.
 struct NonzeroFactor {
   enum class Method {
-    constant,    ///< a nonzero number
-    linear,      ///< affine in integer symbols; linear integer arithmetic on the region
-    positive,    ///< every coefficient is >= 0 and the constant one > 0 after symbol := symbol + shift
-    excluded,    ///< scale * (x - value): excluded by entry `exclusion` of rational parameter x
-    assumed      ///< entry `assumption` of `assume`, u != v: u - v = scale * factor
+    constant,  ///< a nonzero number
+    linear,    ///< affine in integer symbols; linear integer arithmetic on the region
+    positive,  ///< every coefficient is >= 0 and the constant one > 0 after symbol := symbol +
+               ///< shift
+    excluded,  ///< scale * (x - value): excluded by entry `exclusion` of rational parameter x
+    assumed    ///< entry `assumption` of `assume`, u != v: u - v = scale * factor
   };
   Polynomial factor;
   long exponent = 1;
   Method method = Method::linear;
-  std::vector<long> shift;     ///< positive: per symbol, its lower bound
-  Polynomial shifted;          ///< positive: +-factor in the variables symbol - shift, coefficients >= 0
-  bool negated = false;        ///< positive: the factor is minus a positive polynomial
-  std::size_t parameter = 0;   ///< excluded: symbol position of x
-  std::size_t exclusion = 0;   ///< excluded: index in Parameter::excluded
-  Affine value;                ///< excluded by an integer word: factor = scale * (x - value)
+  std::vector<long> shift;  ///< positive: per symbol, its lower bound
+  Polynomial shifted;    ///< positive: +-factor in the variables symbol - shift, coefficients >= 0
+  bool negated = false;  ///< positive: the factor is minus a positive polynomial
+  std::size_t parameter = 0;  ///< excluded: symbol position of x
+  std::size_t exclusion = 0;  ///< excluded: index in Parameter::excluded
+  Affine value;               ///< excluded by an integer word: factor = scale * (x - value)
   mpz_class scale = 1;
   std::size_t assumption = 0;
 };
 
 struct Nonzero {
-  Factored polynomial;                  ///< what is nonzero: constant * product of the factors
+  Factored polynomial;  ///< what is nonzero: constant * product of the factors
   std::vector<NonzeroFactor> factors;
-  std::string condition;                ///< id of the Condition that records it
+  std::string condition;  ///< id of the Condition that records it
 };
 
 /// A pair of atoms whose product is 1 where its condition holds: fact(L) rfact(L) with L >= 0;
 /// ip * 1/ip, P * 1/P with a nonvanishing condition; b^L b^-L with b nonzero.
 struct Unit {
   Atom left;
-  Atom right;       ///< for `reciprocal` in `right`, the left side is the polynomial right.base
+  Atom right;  ///< for `reciprocal` in `right`, the left side is the polynomial right.base
   unsigned exponent = 1;
-  std::string condition;            ///< id of the Condition
-  std::optional<Nonzero> nonzero;   ///< when the condition is a nonvanishing one
+  std::string condition;           ///< id of the Condition
+  std::optional<Nonzero> nonzero;  ///< when the condition is a nonvanishing one
 };
 
 }  // namespace sumwright::proof

@@ -37,7 +37,8 @@ bool has_factorial(const Expression& e) {
 bool is_polynomial(const Expression& e) {
   switch (e.operation) {
     case Operation::call:
-    case Operation::divide: return false;
+    case Operation::divide:
+      return false;
     case Operation::power: {
       const std::optional<mpz_class> c = claim::as_literal(*e.children[1]);
       return c && *c >= 0 && is_polynomial(*e.children[0]);
@@ -86,15 +87,22 @@ class Converter {
       return {from_factored(value->factored())};
     }
     switch (e->operation) {
-      case Operation::negate: return negated(expand(e->children[0]));
-      case Operation::add: return joined(expand(e->children[0]), expand(e->children[1]));
+      case Operation::negate:
+        return negated(expand(e->children[0]));
+      case Operation::add:
+        return joined(expand(e->children[0]), expand(e->children[1]));
       case Operation::subtract:
         return joined(expand(e->children[0]), negated(expand(e->children[1])));
-      case Operation::multiply: return product(expand(e->children[0]), expand(e->children[1]), *e);
-      case Operation::divide: return expand_quotient(e);
-      case Operation::power: return expand_power(e);
-      case Operation::call: return {leaf(e, false)};
-      default: throw std::logic_error("literals and symbols are polynomials");
+      case Operation::multiply:
+        return product(expand(e->children[0]), expand(e->children[1]), *e);
+      case Operation::divide:
+        return expand_quotient(e);
+      case Operation::power:
+        return expand_power(e);
+      case Operation::call:
+        return {leaf(e, false)};
+      default:
+        throw std::logic_error("literals and symbols are polynomials");
     }
   }
 
@@ -125,15 +133,18 @@ class Converter {
     switch (v->operation) {
       case Operation::multiply:
         return product(reciprocal(v->children[0]), reciprocal(v->children[1]), *v);
-      case Operation::divide: return product(reciprocal(v->children[0]), expand(v->children[1]), *v);
-      case Operation::negate: return negated(reciprocal(v->children[0]));
+      case Operation::divide:
+        return product(reciprocal(v->children[0]), expand(v->children[1]), *v);
+      case Operation::negate:
+        return negated(reciprocal(v->children[0]));
       case Operation::power: {
         const std::optional<mpz_class> c = claim::as_literal(*v->children[1]);
         if (c && *c >= 0 && *c <= highest_power)
           return power(reciprocal(v->children[0]), c->get_ui(), *v);
         return {divide(v, v, 1)};
       }
-      default: return {divide(v, v, 1)};
+      default:
+        return {divide(v, v, 1)};
     }
   }
 
@@ -142,8 +153,9 @@ class Converter {
     Products parts = merged(expand(divisor));
     if (parts.empty()) refuse(*divisor, "division by an expression that is identically zero");
     if (parts.size() != 1)
-      refuse(*divisor, "this denominator is a sum of terms that are not similar as written; "
-                       "expected a product of hypergeometric factors");
+      refuse(*divisor,
+             "this denominator is a sum of terms that are not similar as written; "
+             "expected a product of hypergeometric factors");
     Denominator d;
     d.node = node;
     d.expression = divisor;
@@ -201,7 +213,8 @@ class Converter {
         r.settled = facts_.implies(atom.argument);
         return r;
       case AtomKind::power:
-      case AtomKind::reciprocal: return nonvanishing(atom.base, ConditionKind::definedness, place);
+      case AtomKind::reciprocal:
+        return nonvanishing(atom.base, ConditionKind::definedness, place);
       case AtomKind::interval_product:
       case AtomKind::reciprocal_interval_product:
         return interval_nonvanishing(setting_, facts_, atom, place);
@@ -272,8 +285,8 @@ class Converter {
     for (const auto& [a, ea] : x.atoms)
       for (const auto& [b, eb] : y.atoms) {
         if (a.kind != AtomKind::power || b.kind != AtomKind::power || !(a.base == b.base)) continue;
-        PowerMerge merge{a.base, static_cast<long>(ea) * a.argument,
-                         static_cast<long>(eb) * b.argument, {}};
+        PowerMerge merge{
+            a.base, static_cast<long>(ea) * a.argument, static_cast<long>(eb) * b.argument, {}};
         const auto same = [&](const PowerMerge& m) {
           return m.base == merge.base && m.first == merge.first && m.second == merge.second;
         };
@@ -310,8 +323,8 @@ class Converter {
         out.push_back(std::move(p));
         continue;
       }
-      const Polynomial sum = same->coefficient.numerator(setting_.ring) +
-                             p.coefficient.numerator(setting_.ring);
+      const Polynomial sum =
+          same->coefficient.numerator(setting_.ring) + p.coefficient.numerator(setting_.ring);
       same->coefficient = algebra::factor(sum);
       if (sum.is_zero()) out.erase(same);
     }
@@ -353,8 +366,7 @@ class Converter {
     }
   }
 
-  void cancel_polynomial(Product& product, const Atom& atom, unsigned e,
-                         std::vector<Unit>& units) {
+  void cancel_polynomial(Product& product, const Atom& atom, unsigned e, std::vector<Unit>& units) {
     for (const auto& [p, f] : product.coefficient.factors) {
       if (!(p == atom.base)) continue;
       const unsigned times = std::min(e, static_cast<unsigned>(f));

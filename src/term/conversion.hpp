@@ -1,8 +1,9 @@
 // From the author's expression to a sum of products of atoms: the canonical form of a term.
 //
-// Each function call or symbolic power is a leaf with a rule and the conditions under which the rule
-// holds; each author's denominator gets its reciprocal. What is not hypergeometric is refused, naming
-// the factor. Canonical: binomial(n,k) and factorial(n)/(factorial(k)*factorial(n-k)) give one product.
+// Each function call or symbolic power is a leaf with a rule and the conditions under which the
+// rule holds; each author's denominator gets its reciprocal. What is not hypergeometric is refused,
+// naming the factor. Canonical: binomial(n,k) and factorial(n)/(factorial(k)*factorial(n-k)) give
+// one product.
 #pragma once
 
 #include <optional>
@@ -22,9 +23,9 @@ struct Requirement {
   proof::ConditionKind kind = proof::ConditionKind::factorial_argument;
   std::optional<Affine> nonnegative;
   std::optional<algebra::Factored> nonzero;
-  std::optional<proof::Nonzero> why;   ///< set when a nonvanishing is settled
+  std::optional<proof::Nonzero> why;  ///< set when a nonvanishing is settled
   bool settled = false;
-  claim::Place place;                  ///< of the expression that needs it
+  claim::Place place;  ///< of the expression that needs it
 };
 
 struct Leaf {
@@ -55,29 +56,30 @@ struct PowerMerge {
   algebra::Polynomial base;
   Affine first;
   Affine second;
-  std::vector<Requirement> requirements;  ///< none for numeric bases; else both exponents >= 0, or base != 0
+  std::vector<Requirement>
+      requirements;  ///< none for numeric bases; else both exponents >= 0, or base != 0
 };
 
 struct Conversion {
   claim::ExpressionPtr expression;
-  std::vector<PowerMerge> merges;   ///< in the order in which they happened
+  std::vector<PowerMerge> merges;  ///< in the order in which they happened
   std::vector<Leaf> leaves;
   std::vector<Denominator> denominators;
-  std::vector<Product> products;           ///< not similar in general (closed forms)
+  std::vector<Product> products;             ///< not similar in general (closed forms)
   std::vector<std::vector<Unit>> cancelled;  ///< per product
-  std::vector<Requirement> definedness;    ///< domains of calls and nonzero denominators
+  std::vector<Requirement> definedness;      ///< domains of calls and nonzero denominators
 
   /// The first condition that the facts do not settle.
   [[nodiscard]] const Requirement* open() const;
 };
 
-/// Converts on the region given by `facts`. Throws claim::InputError for expressions that are not sums of
-/// hypergeometric terms; std::length_error when the expansion grows past its limits.
+/// Converts on the region given by `facts`. Throws claim::InputError for expressions that are not
+/// sums of hypergeometric terms; std::length_error when the expansion grows past its limits.
 [[nodiscard]] Conversion convert(const Setting& setting, const Facts& facts,
                                  const claim::ExpressionPtr& expression);
 
-/// A rational function of the symbols: literals, symbols, + - * / and literal powers only; nothing when
-/// the expression is of another kind. Throws claim::InputError on a division by 0.
+/// A rational function of the symbols: literals, symbols, + - * / and literal powers only; nothing
+/// when the expression is of another kind. Throws claim::InputError on a division by 0.
 [[nodiscard]] std::optional<algebra::RationalFunction> to_rational_function(
     const Setting& setting, const claim::Expression& expression);
 

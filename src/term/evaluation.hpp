@@ -16,16 +16,17 @@ namespace sumwright::term {
 /// Values of symbols; integer symbols hold integers.
 using Assignment = std::map<std::string, mpq_class>;
 
-/// A number, or the reason why there is none ("division by 0", "factorial of -1", ...) and its place.
-/// A product with a factor 0 is 0 even where a factorial, rising or falling beside it has no value;
-/// a division by zero never has a value.
+/// A number, or the reason why there is none ("division by 0", "factorial of -1", ...) and its
+/// place. A product with a factor 0 is 0 even where a factorial, rising or falling beside it has no
+/// value; a division by zero never has a value.
 struct Value {
   std::optional<mpq_class> number;
   std::string why_not;
   claim::Place place;
 };
 
-/// Value of `expression`. Throws algebra::TimeUp; std::length_error when numbers grow past `max_bits`.
+/// Value of `expression`. Throws algebra::TimeUp; std::length_error when numbers grow past
+/// `max_bits`.
 [[nodiscard]] Value evaluate(const claim::Expression& expression, const Assignment& at);
 
 /// Value of the sum at the assignment (running variable and parameters).
@@ -38,15 +39,17 @@ struct Value {
 
 /// A point where the two sides of something differ or one has no value.
 struct Difference {
-  std::vector<std::pair<std::string, mpq_class>> at;  ///< running first, then index, then parameters
+  std::vector<std::pair<std::string, mpq_class>>
+      at;  ///< running first, then index, then parameters
   Value left;
   Value right;
 };
 
-/// Parameter assignments that satisfy `not`, `at_least` and `assume` (with the running variable set by
-/// the caller), small values first, deterministic; includes boundary values (at_least itself, 0, 1, -1,
-/// 1/2, ...). Empty result only if none was found within the search box.
-[[nodiscard]] std::vector<Assignment> sample_parameters(const claim::Claim& claim, std::size_t count);
+/// Parameter assignments that satisfy `not`, `at_least` and `assume` (with the running variable set
+/// by the caller), small values first, deterministic; includes boundary values (at_least itself, 0,
+/// 1, -1, 1/2, ...). Empty result only if none was found within the search box.
+[[nodiscard]] std::vector<Assignment> sample_parameters(const claim::Claim& claim,
+                                                        std::size_t count);
 
 /// Whether the assignment (running variable included when the assumption names it) satisfies every
 /// hypothesis of the claim.

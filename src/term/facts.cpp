@@ -4,9 +4,9 @@
 #include "term/facts.hpp"
 
 #include <gmpxx.h>
-#include <ppl.hh>
 
 #include <numeric>
+#include <ppl.hh>
 
 namespace sumwright::term {
 namespace {

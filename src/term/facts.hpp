@@ -1,8 +1,8 @@
 // What follows from a claim's hypotheses by linear arithmetic.
 //
-// Decisions are made over the rationals with integer tightening (exact simplex of the Parma Polyhedra
-// Library): `implies` is never wrong when it says yes, and everything it affirms is provable by a
-// decision procedure for linear integer arithmetic.
+// Decisions are made over the rationals with integer tightening (exact simplex of the Parma
+// Polyhedra Library): `implies` is never wrong when it says yes, and everything it affirms is
+// provable by a decision procedure for linear integer arithmetic.
 #pragma once
 
 #include <optional>

@@ -38,7 +38,8 @@ struct SplitArgument {
                                       claim::to_text(e).substr(0, 200), why));
 }
 
-/// Splits coefficient * monomial: into the integer part when it is an integer times one integer symbol.
+/// Splits coefficient * monomial: into the integer part when it is an integer times one integer
+/// symbol.
 bool takes_integer_part(const Setting& setting, const algebra::Monomial& m, const mpz_class& scale,
                         Affine& integer) {
   std::size_t at = 0;
@@ -68,8 +69,9 @@ SplitArgument split(const Setting& setting, const Expression& call, const Expres
     for (std::size_t i = 0; i < m.exponents.size(); ++i) {
       constant = constant && m.exponents[i] == 0;
       if (m.exponents[i] != 0 && i <= index)
-        refuse(setting, call, "its first argument must have integer slope in the running variable "
-                              "and the index");
+        refuse(setting, call,
+               "its first argument must have integer slope in the running variable "
+               "and the index");
     }
     if (constant) {
       mpz_class floor;
@@ -207,8 +209,7 @@ void multiply_power(Making& m, const Factored& value, const Affine& exponent) {
   };
   integer_base(value.constant.get_num(), 1);
   integer_base(value.constant.get_den(), -1);
-  for (const auto& [base, e] : value.factors)
-    m.leaf.value.multiply(power_atom(base, e * exponent));
+  for (const auto& [base, e] : value.factors) m.leaf.value.multiply(power_atom(base, e * exponent));
 }
 
 void make_power(Making& m) {
@@ -264,12 +265,23 @@ Leaf make_leaf(const Setting& setting, const Facts& facts, const ExpressionPtr& 
 Atom inverse_atom(const algebra::RingPtr& ring, const Atom& atom) {
   Atom out = atom;
   switch (atom.kind) {
-    case AtomKind::factorial: out.kind = AtomKind::reciprocal_factorial; return out;
-    case AtomKind::reciprocal_factorial: out.kind = AtomKind::factorial; return out;
-    case AtomKind::power: out.argument = -atom.argument; return out;
-    case AtomKind::interval_product: out.kind = AtomKind::reciprocal_interval_product; return out;
-    case AtomKind::reciprocal_interval_product: out.kind = AtomKind::interval_product; return out;
-    case AtomKind::reciprocal: return reciprocal_atom(ring, atom.base);
+    case AtomKind::factorial:
+      out.kind = AtomKind::reciprocal_factorial;
+      return out;
+    case AtomKind::reciprocal_factorial:
+      out.kind = AtomKind::factorial;
+      return out;
+    case AtomKind::power:
+      out.argument = -atom.argument;
+      return out;
+    case AtomKind::interval_product:
+      out.kind = AtomKind::reciprocal_interval_product;
+      return out;
+    case AtomKind::reciprocal_interval_product:
+      out.kind = AtomKind::interval_product;
+      return out;
+    case AtomKind::reciprocal:
+      return reciprocal_atom(ring, atom.base);
   }
   throw std::logic_error("unknown atom");
 }
@@ -279,8 +291,8 @@ namespace {
 /// A parameter and the entry of its `not` that is a word ("integers", ...).
 using ExcludedByWord = std::pair<std::size_t, std::size_t>;
 
-/// The word that excludes the zero of a + t at t = `at`, when the zeros at t + 1, t + 2, ... differ from it
-/// by integers.
+/// The word that excludes the zero of a + t at t = `at`, when the zeros at t + 1, t + 2, ... differ
+/// from it by integers.
 std::optional<ExcludedByWord> excluded_by_word(const Setting& setting, const Facts& facts,
                                                const Atom& atom, const Affine& at) {
   const Factored f = algebra::factor(interval_factor(atom, at));
@@ -312,8 +324,8 @@ Requirement interval_nonvanishing(const Setting& setting, const Facts& facts, co
   if (first.is_zero()) return r;  // zero unless the product is empty
   const Factored f = *r.nonzero;
   if (atom.base.is_constant()) {
-    // A proper fraction plus an integer is never 0; an integer product is nonzero when it lies on one
-    // side of 0.
+    // A proper fraction plus an integer is never 0; an integer product is nonzero when it lies on
+    // one side of 0.
     const bool fraction = !atom.base.is_zero();
     const bool positive = facts.implies(atom.low - 1);
     const bool negative = facts.implies(-atom.high);
@@ -322,8 +334,8 @@ Requirement interval_nonvanishing(const Setting& setting, const Facts& facts, co
     r.settled = r.why.has_value();
     return r;
   }
-  // a = x: one word of `not` must exclude the zeros of all factors, which it does when they are integers
-  // and it excludes those of the first and the last.
+  // a = x: one word of `not` must exclude the zeros of all factors, which it does when they are
+  // integers and it excludes those of the first and the last.
   r.why = decide_nonzero(setting, facts, f);
   const std::optional<ExcludedByWord> low = excluded_by_word(setting, facts, atom, atom.low);
   r.settled = low && (facts.implies(atom.low - atom.high) ||

@@ -52,12 +52,18 @@ std::optional<NonzeroFactor> positive(const Setting& setting, const Facts& facts
 bool word_excludes(claim::Exclusion::Kind kind, const Facts& facts, const Affine& value) {
   using Kind = claim::Exclusion::Kind;
   switch (kind) {
-    case Kind::constant: return false;
-    case Kind::integers: return true;
-    case Kind::positive_integers: return facts.implies(value - 1);
-    case Kind::negative_integers: return facts.implies(-value - 1);
-    case Kind::nonnegative_integers: return facts.implies(value);
-    case Kind::nonpositive_integers: return facts.implies(-value);
+    case Kind::constant:
+      return false;
+    case Kind::integers:
+      return true;
+    case Kind::positive_integers:
+      return facts.implies(value - 1);
+    case Kind::negative_integers:
+      return facts.implies(-value - 1);
+    case Kind::nonnegative_integers:
+      return facts.implies(value);
+    case Kind::nonpositive_integers:
+      return facts.implies(-value);
   }
   return false;
 }

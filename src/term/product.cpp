@@ -1,6 +1,6 @@
 // Products of atoms: canonical order, shifts, substitution, quotients as rational functions.
-// Invariant: atoms sorted by `compare`, pairwise different, exponents > 0; at most one power per base.
-// Quotients: every factorial and interval product is a quotient of Gamma values at arguments
+// Invariant: atoms sorted by `compare`, pairwise different, exponents > 0; at most one power per
+// base. Quotients: every factorial and interval product is a quotient of Gamma values at arguments
 // a + lambda + c (a: non-integer part, lambda: linear part); two products are similar when the net
 // exponents of each (a, lambda) agree and the exponents of powers differ by constants.
 
@@ -86,7 +86,8 @@ void add_product(const RingPtr& ring, Signature& s, const Product& product, long
     add_atom(ring, s, atom, sign * static_cast<long>(exponent));
 }
 
-/// Gamma(z + from) -> Gamma(z + to): multiplies by the product of (z + t), from <= t < to (or its inverse).
+/// Gamma(z + from) -> Gamma(z + to): multiplies by the product of (z + t), from <= t < to (or its
+/// inverse).
 void multiply_gap(const RingPtr& ring, Factored& out, const GammaKey& key, long from, long to,
                   long exponent) {
   if (from > to) {
@@ -111,16 +112,16 @@ std::optional<Factored> rational_value(const RingPtr& ring, const Signature& s) 
   for (const auto& [key, exponents] : s.gammas) {
     long net = 0;
     for (const auto& [constant, e] : exponents) net += e;
-    const bool numeric = std::all_of(key.linear.begin(), key.linear.end(),
-                                     [](long c) { return c == 0; }) &&
-                         key.base.is_zero();
+    const bool numeric =
+        std::all_of(key.linear.begin(), key.linear.end(), [](long c) { return c == 0; }) &&
+        key.base.is_zero();
     if (net != 0 && !numeric) return std::nullopt;
     // Walk up the constants, carrying the running exponent across each gap.
     long carried = 0;
     long previous = exponents.begin()->first;
     if (numeric) {
-      // Gamma(c) = (c-1)! relative to Gamma(1) = 1. At c <= 0 only quotients have values: those are taken
-      // relative to c = 0, and their exponents must add up to 0.
+      // Gamma(c) = (c-1)! relative to Gamma(1) = 1. At c <= 0 only quotients have values: those are
+      // taken relative to c = 0, and their exponents must add up to 0.
       long below = 0;
       for (const auto& [constant, e] : exponents) {
         if (e == 0) continue;
@@ -148,7 +149,11 @@ Atom factorial_atom(const RingPtr& ring, const Affine& argument) {
 }
 
 Atom reciprocal_factorial_atom(const RingPtr& ring, const Affine& argument) {
-  return {AtomKind::reciprocal_factorial, argument, Polynomial(ring), 1, zero_like(ring),
+  return {AtomKind::reciprocal_factorial,
+          argument,
+          Polynomial(ring),
+          1,
+          zero_like(ring),
           zero_like(ring)};
 }
 
@@ -237,7 +242,8 @@ Atom shift(const Atom& atom, std::size_t symbol, long by) {
 Product shift(const Product& product, std::size_t symbol, long by) {
   Product out;
   out.coefficient = product.coefficient.shift(symbol, by);
-  for (const auto& [atom, exponent] : product.atoms) out.multiply(shift(atom, symbol, by), exponent);
+  for (const auto& [atom, exponent] : product.atoms)
+    out.multiply(shift(atom, symbol, by), exponent);
   return out;
 }
 

@@ -1,8 +1,9 @@
 // Hypergeometric terms as products of atoms, and what can be read off them as functions.
 //
 // Atoms are the functions of the design: fact(L), rfact(L), powers, interval products
-// ip(a; i, j) = product of (a + t), i <= t < j, their reciprocals, and 1/P. At the level of rational
-// functions (this file) fact(L) rfact(L) = 1 always; at integer points the proof stage adds conditions.
+// ip(a; i, j) = product of (a + t), i <= t < j, their reciprocals, and 1/P. At the level of
+// rational functions (this file) fact(L) rfact(L) = 1 always; at integer points the proof stage
+// adds conditions.
 #pragma once
 
 #include <optional>
@@ -20,11 +21,11 @@ using proof::AtomKind;
 
 struct Atom {
   AtomKind kind = AtomKind::factorial;
-  Affine argument;            ///< L, or the exponent of a power
-  algebra::Polynomial base;   ///< power: base; reciprocal: P; interval products: numerator of a
-  mpz_class scale = 1;        ///< interval products: a = base / scale
-  Affine low;                 ///< interval products: i
-  Affine high;                ///< interval products: j
+  Affine argument;           ///< L, or the exponent of a power
+  algebra::Polynomial base;  ///< power: base; reciprocal: P; interval products: numerator of a
+  mpz_class scale = 1;       ///< interval products: a = base / scale
+  Affine low;                ///< interval products: i
+  Affine high;               ///< interval products: j
 };
 
 [[nodiscard]] Atom factorial_atom(const algebra::RingPtr& ring, const Affine& argument);
@@ -62,8 +63,8 @@ struct Product {
 /// a + t as a polynomial with its scale: (base + scale * t) / scale.
 [[nodiscard]] algebra::Polynomial interval_factor(const Atom& atom, const Affine& t);
 
-/// a / b as a rational function in factored form when the two are similar (their quotient is rational),
-/// else nothing. Neither may be 0.
+/// a / b as a rational function in factored form when the two are similar (their quotient is
+/// rational), else nothing. Neither may be 0.
 [[nodiscard]] std::optional<algebra::Factored> ratio(const algebra::RingPtr& ring, const Product& a,
                                                      const Product& b);
 

@@ -1,5 +1,5 @@
-// Rational expressions of a claim as rational functions, integer constants as prime powers, and plain
-// copies for the Proof value.
+// Rational expressions of a claim as rational functions, integer constants as prime powers, and
+// plain copies for the Proof value.
 
 #include <fmt/format.h>
 
@@ -44,8 +44,7 @@ std::optional<RationalFunction> power(const Setting& setting, const Expression& 
 }  // namespace
 
 std::optional<RationalFunction> to_rational_function(const Setting& setting, const Expression& e) {
-  if (e.operation == Operation::literal)
-    return RationalFunction(Polynomial(setting.ring, e.value));
+  if (e.operation == Operation::literal) return RationalFunction(Polynomial(setting.ring, e.value));
   if (e.operation == Operation::symbol) {
     const auto at = setting.position.find(e.name);
     if (at == setting.position.end()) return std::nullopt;
@@ -59,8 +58,10 @@ std::optional<RationalFunction> to_rational_function(const Setting& setting, con
   const std::optional<RationalFunction> b = to_rational_function(setting, *e.children[1]);
   if (!b) return std::nullopt;
   switch (e.operation) {
-    case Operation::add: return *a + *b;
-    case Operation::subtract: return *a - *b;
+    case Operation::add:
+      return *a + *b;
+    case Operation::subtract:
+      return *a - *b;
     case Operation::multiply:
       guard(setting, e, a->numerator().total_degree() + b->numerator().total_degree());
       return *a * *b;
@@ -69,7 +70,8 @@ std::optional<RationalFunction> to_rational_function(const Setting& setting, con
         throw claim::InputError(*setting.claim->source, e.children[1]->place,
                                 "division by an expression that is identically zero");
       return *a / *b;
-    default: throw std::logic_error("unknown operation");
+    default:
+      throw std::logic_error("unknown operation");
   }
 }
 
@@ -82,12 +84,11 @@ void divide_by_constant(Product& product, const algebra::RingPtr& ring, const mp
       ++multiplicity;
     }
     if (multiplicity > 0)
-      product.multiply(power_atom(Polynomial(ring, mpz_class(p)),
-                                  Affine::of(ring->size(), -multiplicity)));
+      product.multiply(
+          power_atom(Polynomial(ring, mpz_class(p)), Affine::of(ring->size(), -multiplicity)));
   }
   // A cofactor without small primes serves as a base of its own.
-  if (rest > 1)
-    product.multiply(power_atom(Polynomial(ring, rest), Affine::of(ring->size(), -1)));
+  if (rest > 1) product.multiply(power_atom(Polynomial(ring, rest), Affine::of(ring->size(), -1)));
 }
 
 proof::Atom plain(const Atom& atom) {

@@ -35,11 +35,20 @@ void add_assumption(Setting& setting, const claim::Assumption& a) {
   const Affine left = to_affine(setting, *a.left);
   const Affine right = to_affine(setting, *a.right);
   switch (a.comparison) {
-    case Comparison::less_equal: setting.hypotheses.add(right - left); break;
-    case Comparison::less: setting.hypotheses.add(right - left - 1); break;
-    case Comparison::greater_equal: setting.hypotheses.add(left - right); break;
-    case Comparison::greater: setting.hypotheses.add(left - right - 1); break;
-    case Comparison::not_equal: break;
+    case Comparison::less_equal:
+      setting.hypotheses.add(right - left);
+      break;
+    case Comparison::less:
+      setting.hypotheses.add(right - left - 1);
+      break;
+    case Comparison::greater_equal:
+      setting.hypotheses.add(left - right);
+      break;
+    case Comparison::greater:
+      setting.hypotheses.add(left - right - 1);
+      break;
+    case Comparison::not_equal:
+      break;
   }
 }
 
@@ -97,10 +106,10 @@ std::optional<End> end_of(const Setting& setting, const Expression& e, bool uppe
         continue;
       }
       out->affine.reset();
-      out->inside = conjunction ? combine(out->inside, next->inside)
-                                : unite(out->inside, next->inside);
-      out->outside = conjunction ? unite(out->outside, next->outside)
-                                 : combine(out->outside, next->outside);
+      out->inside =
+          conjunction ? combine(out->inside, next->inside) : unite(out->inside, next->inside);
+      out->outside =
+          conjunction ? unite(out->outside, next->outside) : combine(out->outside, next->outside);
       if (out->inside.size() + out->outside.size() > 64) return std::nullopt;
     }
     return out;
@@ -135,7 +144,8 @@ Setting make_setting(std::shared_ptr<const claim::Claim> claim) {
   using proof::SymbolKind;
   std::vector<proof::Symbol> symbols{{claim->running, SymbolKind::running}};
   const bool has_index = !claim->sum.over.empty();
-  symbols.push_back({has_index ? claim->sum.over[0].index : unused_name(*claim), SymbolKind::index});
+  symbols.push_back(
+      {has_index ? claim->sum.over[0].index : unused_name(*claim), SymbolKind::index});
   for (const claim::Parameter& p : claim->parameters)
     symbols.push_back({p.name, p.ring == claim::Parameter::Ring::integers
                                    ? SymbolKind::integer_parameter
@@ -146,13 +156,14 @@ Setting make_setting(std::shared_ptr<const claim::Claim> claim) {
     position[s.name] = names.size();
     names.push_back(s.name);
   }
-  Setting out{claim,    std::make_shared<algebra::Ring>(names), symbols, position, has_index,
-              Facts(symbols.size())};
+  Setting out{claim,     std::make_shared<algebra::Ring>(names),
+              symbols,   position,
+              has_index, Facts(symbols.size())};
   for (std::size_t i = 0; i < claim->parameters.size(); ++i)
     if (claim->parameters[i].at_least)
-      out.hypotheses.add(Affine::symbol(out.size(), i + 2) -
-                         checked_long(out, *claim->parameters[i].at_least,
-                                      claim->parameters[i].place));
+      out.hypotheses.add(
+          Affine::symbol(out.size(), i + 2) -
+          checked_long(out, *claim->parameters[i].at_least, claim->parameters[i].place));
   for (const claim::Assumption& a : claim->assumptions) add_assumption(out, a);
   refuse_contradiction(out);
   return out;

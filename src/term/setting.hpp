@@ -1,4 +1,5 @@
-// The symbols of a claim as ring variables, its hypotheses as facts, its ranges as linear constraints.
+// The symbols of a claim as ring variables, its hypotheses as facts, its ranges as linear
+// constraints.
 #pragma once
 
 #include <map>
@@ -20,10 +21,10 @@ inline constexpr std::size_t index = 1;    ///< position of the summation index
 struct Setting {
   std::shared_ptr<const claim::Claim> claim;
   algebra::RingPtr ring;
-  std::vector<proof::Symbol> symbols;       ///< one per ring variable
+  std::vector<proof::Symbol> symbols;  ///< one per ring variable
   std::map<std::string, std::size_t> position;
   bool has_index = false;
-  Facts hypotheses;                         ///< at_least and the integer-affine part of assume
+  Facts hypotheses;  ///< at_least and the integer-affine part of assume
 
   [[nodiscard]] std::size_t size() const { return symbols.size(); }
   [[nodiscard]] bool is_integer(std::size_t symbol) const {
@@ -33,8 +34,9 @@ struct Setting {
   [[nodiscard]] Facts from(long least) const;
 };
 
-/// Builds the setting of a single-sum claim (at most one index; the running variable of `other_sum` and
-/// its index are not part of it). Throws claim::InputError when the hypotheses are contradictory.
+/// Builds the setting of a single-sum claim (at most one index; the running variable of `other_sum`
+/// and its index are not part of it). Throws claim::InputError when the hypotheses are
+/// contradictory.
 [[nodiscard]] Setting make_setting(std::shared_ptr<const claim::Claim> claim);
 
 /// An expression known to be integer-affine in integer symbols.
@@ -61,12 +63,13 @@ struct End {
 
 /// Why a polynomial is nonzero wherever `facts` hold; nothing when that is not provable by the
 /// methods of proof::NonzeroFactor. `undecided` then names the first factor without a reason.
-[[nodiscard]] std::optional<proof::Nonzero> decide_nonzero(const Setting& setting, const Facts& facts,
+[[nodiscard]] std::optional<proof::Nonzero> decide_nonzero(const Setting& setting,
+                                                           const Facts& facts,
                                                            const algebra::Factored& polynomial,
                                                            std::string* undecided = nullptr);
 
-/// Whether a factor can vanish only through special values of rational parameters (rule R7), or through
-/// integer parameters (rule R6): for messages.
+/// Whether a factor can vanish only through special values of rational parameters (rule R7), or
+/// through integer parameters (rule R6): for messages.
 [[nodiscard]] bool involves_rational_parameter(const Setting& setting,
                                                const algebra::Polynomial& polynomial);
 

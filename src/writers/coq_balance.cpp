@@ -1,4 +1,5 @@
-// Balances: one lemma for each term (a polynomial times its base term, or 0), then one line of algebra.
+// Balances: one lemma for each term (a polynomial times its base term, or 0), then one line of
+// algebra.
 
 #include <fmt/format.h>
 
@@ -58,8 +59,8 @@ class BalanceText {
     const std::string& n = names_.n;
     switch (t.origin) {
       case Origin::upper_end:
-        return fmt::format("up (inj {0}) (inj {1}) * c (inj {0}) (inj {1} + inj 1) * base {0} {1}", n,
-                           at(t.point));
+        return fmt::format("up (inj {0}) (inj {1}) * c (inj {0}) (inj {1} + inj 1) * base {0} {1}",
+                           n, at(t.point));
       case Origin::lower_end:
         return fmt::format("- (down (inj {0}) (inj {1}) * c (inj {0}) (inj {1}) * base {0} {1})", n,
                            at(t.point));
@@ -67,13 +68,15 @@ class BalanceText {
         return fmt::format("{} * {}", scale(t.shift), piece_at(t, shifted(n, t.shift)));
       case Origin::right_side:
         if (literal_) return fmt::format("- b{} {}", t.piece + 1, point_of_value(t));
-        return fmt::format("- ({}b{} {})",
-                           proof_.telescoping ? fmt::format("weight (inj {}) * ", n) : std::string(),
-                           t.piece + 1, n);
+        return fmt::format(
+            "- ({}b{} {})",
+            proof_.telescoping ? fmt::format("weight (inj {}) * ", n) : std::string(), t.piece + 1,
+            n);
       case Origin::closed_form:
         if (literal_) return fmt::format("- C{} {}", t.piece + 1, point_of_value(t));
         return fmt::format("- ({} * C{} {}%Z)", scale(t.shift), t.piece + 1, shifted(n, t.shift));
-      case Origin::value: break;
+      case Origin::value:
+        break;
     }
     const std::string where =
         bracketed(std::to_string(std::stol(balance_.id.substr(8)) + static_cast<long>(t.shift)));
@@ -113,9 +116,15 @@ class BalanceText {
         u.by = {{1, t.point}};
         u.scope = with(scope_, 1, affine(t.point, scope_));
         return u;
-      case Origin::right_side: u.original = &proof_.right_side->products[t.piece]; break;
-      case Origin::closed_form: u.original = &proof_.closed->products[t.piece]; break;
-      default: u.original = &proof_.summand.products[t.piece]; break;
+      case Origin::right_side:
+        u.original = &proof_.right_side->products[t.piece];
+        break;
+      case Origin::closed_form:
+        u.original = &proof_.closed->products[t.piece];
+        break;
+      default:
+        u.original = &proof_.summand.products[t.piece];
+        break;
     }
     if (t.shift != 0 || literal_) {
       u.by[0] = n;
@@ -130,12 +139,15 @@ class BalanceText {
   }
 
   [[nodiscard]] std::string definitions(const proof::BalanceTerm& t) const {
-    const std::string factors = proof_.telescoping ? fmt::format("weight, a{}, ", t.shift)
-                                                   : fmt::format("a{}, ", t.shift);
+    const std::string factors =
+        proof_.telescoping ? fmt::format("weight, a{}, ", t.shift) : fmt::format("a{}, ", t.shift);
     switch (t.origin) {
-      case Origin::upper_end: return "up, c, base";
-      case Origin::lower_end: return "down, c, base";
-      case Origin::explicit_point: return factors + fmt::format("F{}", t.piece + 1);
+      case Origin::upper_end:
+        return "up, c, base";
+      case Origin::lower_end:
+        return "down, c, base";
+      case Origin::explicit_point:
+        return factors + fmt::format("F{}", t.piece + 1);
       case Origin::closed_form:
         return (literal_ ? std::string() : factors) + fmt::format("C{}", t.piece + 1);
       case Origin::right_side:
@@ -151,21 +163,21 @@ class BalanceText {
   void lemma(std::size_t i, const std::string& text) {
     const proof::BalanceTerm& t = balance_.terms[i];
     std::string right = "inj 0";
-    std::string script = fmt::format("  intros{}. unfold {}.\n", region_.empty() ? "" : " Hn",
-                                     definitions(t));
+    std::string script =
+        fmt::format("  intros{}. unfold {}.\n", region_.empty() ? "" : " Hn", definitions(t));
     if (t.zero) {
       script += zero_script(t);
     } else {
       const proof::BalanceGroup& g = balance_.groups[t.group];
-      right = fmt::format("({}) * {} {}", factored(t.instance->right.coefficient, scope_), g.base.id,
-                          literal_ ? "0" : names_.n);
+      right = fmt::format("({}) * {} {}", factored(t.instance->right.coefficient, scope_),
+                          g.base.id, literal_ ? "0" : names_.n);
       script = fmt::format("  intros{}. unfold {}, {}.\n", region_.empty() ? "" : " Hn",
                            definitions(t), g.base.id);
       script += instance_tactics(proof_, *t.instance, unfolded(t), {}, scope_);
     }
-    out_ += fmt::format("Lemma {}_term_{} {}: {}\n  ({} = {})%K.\nProof.\n{}Qed.\n\n", balance_.id, i + 1,
-                        literal_ ? std::string() : fmt::format("({} : Z) ", names_.n), region_, text,
-                        right, script);
+    out_ += fmt::format("Lemma {}_term_{} {}: {}\n  ({} = {})%K.\nProof.\n{}Qed.\n\n", balance_.id,
+                        i + 1, literal_ ? std::string() : fmt::format("({} : Z) ", names_.n),
+                        region_, text, right, script);
   }
 
   std::string zero_script(const proof::BalanceTerm& t) const {

@@ -2,9 +2,9 @@
 
 #include <fmt/format.h>
 
+#include "writers/coq_section_text.hpp"
 #include "writers/coq_sections.hpp"
 #include "writers/coq_statement.hpp"
-#include "writers/coq_section_text.hpp"
 #include "writers/coq_steps.hpp"
 
 namespace sumwright::writers::coq {
@@ -48,7 +48,8 @@ class ConclusionText : private SectionText {
                           : "right_side " + names_.n;
     }
     out_ += fmt::format(
-        "Lemma right_recurrence ({0} : Z) : {1}\n  ({2} = remainder {0})%K.\nProof.\n  intros Hn.\n{3}"
+        "Lemma right_recurrence ({0} : Z) : {1}\n  ({2} = remainder {0})%K.\nProof.\n  intros "
+        "Hn.\n{3}"
         "  assert (total : ({4} = inj 0)%K).\n  {{\n{5}  inj_norm. {6}. }}\n"
         "  symmetry. apply (eq_of_sub K). transitivity ({4})%K; [unfold remainder; ring|].\n"
         "  rewrite total. exact (inj_0 K).\nQed.\n\n",
@@ -69,8 +70,9 @@ class ConclusionText : private SectionText {
     } else {
       script += "  apply inj_neq0; lia.\n";
     }
-    out_ += fmt::format("Lemma leading ({} : Z) : {}\n  ({} <> 0)%K.\nProof.\n  intros Hn.\n{}Qed.\n\n",
-                        names_.n, beyond_, text, script);
+    out_ +=
+        fmt::format("Lemma leading ({} : Z) : {}\n  ({} <> 0)%K.\nProof.\n  intros Hn.\n{}Qed.\n\n",
+                    names_.n, beyond_, text, script);
   }
 
   // ---------------------------------------------------------------- starting values
@@ -100,23 +102,27 @@ class ConclusionText : private SectionText {
     }
     rewrites += fmt::format("  rewrite (right_side_terms {}) by lia.\n", at);
     out_ += script;
-    out_ += fmt::format("Lemma {0} : ({1} = right_side {2})%K.\nProof.\n{3}"
-                        "  assert (total : ({4} = inj 0)%K).\n  {{\n{5}  inj_norm. {6}. }}\n"
-                        "  apply (eq_of_sub K). transitivity ({4})%K; [ring|].\n"
-                        "  rewrite total. exact (inj_0 K).\nQed.\n\n",
-                        value_name(v.at), statement, at, rewrites, total,
-                        balance_rewrites(proof_, b, ""), balance_closing(b));
+    out_ += fmt::format(
+        "Lemma {0} : ({1} = right_side {2})%K.\nProof.\n{3}"
+        "  assert (total : ({4} = inj 0)%K).\n  {{\n{5}  inj_norm. {6}. }}\n"
+        "  apply (eq_of_sub K). transitivity ({4})%K; [ring|].\n"
+        "  rewrite total. exact (inj_0 K).\nQed.\n\n",
+        value_name(v.at), statement, at, rewrites, total, balance_rewrites(proof_, b, ""),
+        balance_closing(b));
   }
 
   static std::string tag(long at) { return at < 0 ? fmt::format("m{}", -at) : std::to_string(at); }
 
   /// S at a literal n, term by term.
-  void literal_sum(const proof::InitialValue& v, const proof::LiteralSum& s, std::string& out) const {
+  void literal_sum(const proof::InitialValue& v, const proof::LiteralSum& s,
+                   std::string& out) const {
     const std::size_t i = static_cast<std::size_t>(&s - v.sums.data());
     const std::string at = bracketed(std::to_string(s.at));
     if (!names_.index) {
-      out += fmt::format("Lemma literal_{}_{} : (left_side {} = {})%K.\nProof. unfold left_side. apply "
-                         "summand_terms; lia. Qed.\n\n", tag(v.at), i, at, f_pieces(at, ""));
+      out += fmt::format(
+          "Lemma literal_{}_{} : (left_side {} = {})%K.\nProof. unfold left_side. apply "
+          "summand_terms; lia. Qed.\n\n",
+          tag(v.at), i, at, f_pieces(at, ""));
       return;
     }
     const claim::Range& author = proof_.claim->sum.over[0];
@@ -133,23 +139,30 @@ class ConclusionText : private SectionText {
     if (right.empty()) right = "inj 0";
     const std::string low = bracketed(std::to_string(s.low));
     const std::string high = bracketed(std::to_string(s.high));
-    out += fmt::format("Lemma literal_{0}_{1} : (left_side {2} = {3})%K.\nProof.\n  unfold left_side.\n"
-                       "  transitivity (sum {4} {5} {6}).\n"
-                       "  {{ apply (sum_ext K); [lia | lia |]. intros {7} Hk. apply (summand_terms {2} {7}); "
-                       "index. }}\n",
-                       tag(v.at), i, at, right, lo, hi, f, names_.k);
+    out += fmt::format(
+        "Lemma literal_{0}_{1} : (left_side {2} = {3})%K.\nProof.\n  unfold left_side.\n"
+        "  transitivity (sum {4} {5} {6}).\n"
+        "  {{ apply (sum_ext K); [lia | lia |]. intros {7} Hk. apply (summand_terms {2} {7}); "
+        "index. }}\n",
+        tag(v.at), i, at, right, lo, hi, f, names_.k);
     if (s.below || s.above)
-      out += fmt::format("  rewrite (sum_same K {0} {1} {2} {3} {4}).\n  2:{{ {5} }}\n  2:{{ {5} }}\n", lo,
-                         hi, low, high, f, literal_outside(s));
+      out +=
+          fmt::format("  rewrite (sum_same K {0} {1} {2} {3} {4}).\n  2:{{ {5} }}\n  2:{{ {5} }}\n",
+                      lo, hi, low, high, f, literal_outside(s));
     else
-      out += fmt::format("  transitivity (sum {0} {1} {2}); [apply (sum_ext K); [index | index | "
-                         "reflexivity]|].\n", low, high, f);
+      out += fmt::format(
+          "  transitivity (sum {0} {1} {2}); [apply (sum_ext K); [index | index | "
+          "reflexivity]|].\n",
+          low, high, f);
     if (s.high < s.low)
-      out += fmt::format("  rewrite (sum_empty K {} {}) by lia. rewrite (inj_0 K). reflexivity.\nQed.\n\n",
-                         low, high);
+      out += fmt::format(
+          "  rewrite (sum_empty K {} {}) by lia. rewrite (inj_0 K). reflexivity.\nQed.\n\n", low,
+          high);
     else
-      out += fmt::format("  rewrite (sum_explicit K {} {} [{}] {}) by list_range. sum_terms_cbn. "
-                         "cbv beta. ring.\nQed.\n\n", low, high, points, f);
+      out += fmt::format(
+          "  rewrite (sum_explicit K {} {} [{}] {}) by list_range. sum_terms_cbn. "
+          "cbv beta. ring.\nQed.\n\n",
+          low, high, points, f);
   }
 
   [[nodiscard]] std::string literal_outside(const proof::LiteralSum& s) const {
@@ -157,7 +170,8 @@ class ConclusionText : private SectionText {
                        literal_vanish(s.below, s.at), literal_vanish(s.above, s.at));
   }
 
-  [[nodiscard]] std::string literal_vanish(const std::optional<proof::Vanishing>& v, long at) const {
+  [[nodiscard]] std::string literal_vanish(const std::optional<proof::Vanishing>& v,
+                                           long at) const {
     if (!v) return "exfalso; index";
     std::string unfold;
     std::string rewrites;
@@ -205,20 +219,23 @@ class ConclusionText : private SectionText {
     std::string list;
     for (unsigned i = 0; i < coefficients_; ++i)
       list += fmt::format("{}fun {} : Z => ({})%K", i == 0 ? "" : "; ", names_.n, scale(i));
-    out_ += fmt::format("Lemma initial ({0} : Z) : {1} <= {0} <= {2} -> left_side {0} = right_side {0}.\n"
-                        "Proof.\n  intros Hn.\n{3}Qed.\n\n",
-                        names_.n, from_, bracketed(std::to_string(last)),
-                        cases(proof_.from, last, "  exfalso; lia.\n"));
-    out_ += fmt::format("Lemma from_threshold : forall {0} : Z, {1} <= {0} -> left_side {0} = right_side {0}.\n"
-                        "Proof.\n  apply (same_recurrence K [{2}] {1} remainder).\n"
-                        "  - exact left_recurrence.\n  - exact right_recurrence.\n  - exact leading.\n"
-                        "  - intros {0} Hn. apply initial. cbn [length Z.of_nat Pos.of_succ_nat Pos.succ] in Hn. "
-                        "lia.\nQed.\n\n",
-                        names_.n, threshold_, list);
-    out_ += fmt::format("Lemma conclusion ({0} : Z) : {1} <= {0} -> left_side {0} = right_side {0}.\nProof.\n"
-                        "  intros Hn. destruct (Z_lt_le_dec {0} {2}) as [Hs|Hs].\n"
-                        "  - apply initial. lia.\n  - exact (from_threshold {0} Hs).\nQed.\n\n",
-                        names_.n, from_, threshold_);
+    out_ += fmt::format(
+        "Lemma initial ({0} : Z) : {1} <= {0} <= {2} -> left_side {0} = right_side {0}.\n"
+        "Proof.\n  intros Hn.\n{3}Qed.\n\n",
+        names_.n, from_, bracketed(std::to_string(last)),
+        cases(proof_.from, last, "  exfalso; lia.\n"));
+    out_ += fmt::format(
+        "Lemma from_threshold : forall {0} : Z, {1} <= {0} -> left_side {0} = right_side {0}.\n"
+        "Proof.\n  apply (same_recurrence K [{2}] {1} remainder).\n"
+        "  - exact left_recurrence.\n  - exact right_recurrence.\n  - exact leading.\n"
+        "  - intros {0} Hn. apply initial. cbn [length Z.of_nat Pos.of_succ_nat Pos.succ] in Hn. "
+        "lia.\nQed.\n\n",
+        names_.n, threshold_, list);
+    out_ += fmt::format(
+        "Lemma conclusion ({0} : Z) : {1} <= {0} -> left_side {0} = right_side {0}.\nProof.\n"
+        "  intros Hn. destruct (Z_lt_le_dec {0} {2}) as [Hs|Hs].\n"
+        "  - apply initial. lia.\n  - exact (from_threshold {0} Hs).\nQed.\n\n",
+        names_.n, from_, threshold_);
   }
 
   [[nodiscard]] std::string claimed(const std::string& side) const {
@@ -237,36 +254,45 @@ class ConclusionText : private SectionText {
       unfold += fmt::format("{}a{}", unfold.empty() ? "" : ", ", i);
     std::string script;
     if (names_.index) {
-      script = fmt::format("  apply (mul_cancel K (weight (inj {0}))).\n  - unfold weight. {1}.\n"
-                           "  - rewrite (right_recurrence {0} Hs), <- (left_recurrence {0} Hs).\n"
-                           "    unfold {2}. inj_norm. ring.\n",
-                           names_.n, nonzero_tactic(proof_, proof_.telescoping->weight, scope_), unfold);
+      script = fmt::format(
+          "  apply (mul_cancel K (weight (inj {0}))).\n  - unfold weight. {1}.\n"
+          "  - rewrite (right_recurrence {0} Hs), <- (left_recurrence {0} Hs).\n"
+          "    unfold {2}. inj_norm. ring.\n",
+          names_.n, nonzero_tactic(proof_, proof_.telescoping->weight, scope_), unfold);
     } else {
-      script = fmt::format("  rewrite (right_recurrence {0} Hs), <- (left_recurrence {0} Hs).\n"
-                           "  unfold {1}. inj_norm. ring.\n", names_.n, unfold);
+      script = fmt::format(
+          "  rewrite (right_recurrence {0} Hs), <- (left_recurrence {0} Hs).\n"
+          "  unfold {1}. inj_norm. ring.\n",
+          names_.n, unfold);
     }
-    out_ += fmt::format("Lemma from_threshold ({0} : Z) : {1} <= {0} ->\n  ({2} = right_side {0})%K.\nProof.\n"
-                        "  intros Hs.\n{3}Qed.\n\n",
-                        names_.n, threshold_, claimed("left_side"), script);
+    out_ += fmt::format(
+        "Lemma from_threshold ({0} : Z) : {1} <= {0} ->\n  ({2} = right_side {0})%K.\nProof.\n"
+        "  intros Hs.\n{3}Qed.\n\n",
+        names_.n, threshold_, claimed("left_side"), script);
     std::string small;
     for (long v = proof_.from; v < proof_.threshold; ++v) small += value_case(v);
-    out_ += fmt::format("Lemma conclusion ({0} : Z) : {1} <= {0} ->\n  ({2} = right_side {0})%K.\nProof.\n"
-                        "  intros Hn. destruct (Z_lt_le_dec {0} {3}) as [Hs|Hs]; "
-                        "[|exact (from_threshold {0} Hs)].\n{4}  exfalso; lia.\nQed.\n\n",
-                        names_.n, from_, claimed("left_side"), threshold_, small);
+    out_ += fmt::format(
+        "Lemma conclusion ({0} : Z) : {1} <= {0} ->\n  ({2} = right_side {0})%K.\nProof.\n"
+        "  intros Hn. destruct (Z_lt_le_dec {0} {3}) as [Hs|Hs]; "
+        "[|exact (from_threshold {0} Hs)].\n{4}  exfalso; lia.\nQed.\n\n",
+        names_.n, from_, claimed("left_side"), threshold_, small);
   }
 
   [[nodiscard]] std::string value_case(long v) const {
     std::string unfold;
-    for (unsigned i = 0; i < coefficients_; ++i) unfold += fmt::format("{}a{}", i == 0 ? "" : ", ", i);
-    return fmt::format("  destruct (Z.eq_dec {0} {1}) as [->|]; [rewrite <- {2}; unfold {3}; cbn [Z.add]; "
-                       "inj_norm; ring|].\n",
-                       names_.n, bracketed(std::to_string(v)), value_name(v), unfold);
+    for (unsigned i = 0; i < coefficients_; ++i)
+      unfold += fmt::format("{}a{}", i == 0 ? "" : ", ", i);
+    return fmt::format(
+        "  destruct (Z.eq_dec {0} {1}) as [->|]; [rewrite <- {2}; unfold {3}; cbn [Z.add]; "
+        "inj_norm; ring|].\n",
+        names_.n, bracketed(std::to_string(v)), value_name(v), unfold);
   }
 };
 
 }  // namespace
 
-std::string conclusion_section(const proof::Proof& proof) { return ConclusionText(proof).conclusion(); }
+std::string conclusion_section(const proof::Proof& proof) {
+  return ConclusionText(proof).conclusion();
+}
 
 }  // namespace sumwright::writers::coq

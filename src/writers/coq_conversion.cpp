@@ -1,5 +1,5 @@
-// From the author's vocabulary to products of atoms: one lemma per function call, one per denominator, and
-// the conversion that puts them together.
+// From the author's vocabulary to products of atoms: one lemma per function call, one per
+// denominator, and the conversion that puts them together.
 
 #include <fmt/format.h>
 
@@ -93,8 +93,8 @@ class ConversionText {
   }
 
   void lemma(const std::string& name, const std::string& statement, const std::string& script) {
-    out_ += fmt::format("Lemma {} {} : {}\n  {}.\nProof.\n  intros {}.\n{}Qed.\n\n", name, variables_,
-                        premises_, statement, hypotheses_, script);
+    out_ += fmt::format("Lemma {} {} : {}\n  {}.\nProof.\n  intros {}.\n{}Qed.\n\n", name,
+                        variables_, premises_, statement, hypotheses_, script);
   }
 
   // ---------------------------------------------------------------- leaves
@@ -123,8 +123,8 @@ class ConversionText {
     return bare(leaf_text(l)) == bare(product(l.value, scope_));
   }
 
-  /// Without brackets: equal for terms that differ in redundant brackets only (canonical forms have no
-  /// others).
+  /// Without brackets: equal for terms that differ in redundant brackets only (canonical forms have
+  /// no others).
   static std::string bare(std::string text) {
     std::erase_if(text, [](char ch) { return ch == '(' || ch == ')'; });
     return text;
@@ -149,7 +149,8 @@ class ConversionText {
         return rewrite(fmt::format("leaf_binomial K {} {} {} {} {}",
                                    integer_text(proof_, *e.children[0]), second, z(a), z(b),
                                    z(combine(a, -1, b, 0))));
-      case LeafRule::binomial_interval: return binomial_interval(l, second, b, rewrite);
+      case LeafRule::binomial_interval:
+        return binomial_interval(l, second, b, rewrite);
       case LeafRule::rising_factorials:
         return rewrite(fmt::format("leaf_rising_factorials K {} {} {} {} {}", field(), z(a), second,
                                    z(combine(a, 1, b, -1)), z(combine(a, 0, b, -1))));
@@ -158,12 +159,12 @@ class ConversionText {
         for (long& c : zero.coefficients) c = 0;
         zero.constant = 0;
         const proof::Affine minus = combine(zero, -1, a, 0);
-        return rewrite(fmt::format("leaf_rising_reflected K {} {} {} {} {} {}", field(), z(a), second,
-                                   z(b), z(minus), z(combine(minus, -1, b, 0))));
+        return rewrite(fmt::format("leaf_rising_reflected K {} {} {} {} {} {}", field(), z(a),
+                                   second, z(b), z(minus), z(combine(minus, -1, b, 0))));
       }
       case LeafRule::falling_factorials:
-        return rewrite(fmt::format("leaf_falling_factorials K {} {} {} {} {}", field(), z(a), second,
-                                   z(a), z(combine(a, -1, b, 0))));
+        return rewrite(fmt::format("leaf_falling_factorials K {} {} {} {} {}", field(), z(a),
+                                   second, z(a), z(combine(a, -1, b, 0))));
       case LeafRule::rising_interval:
       case LeafRule::falling_interval:
         if (const proof::Atom* ip = interval(l))
@@ -172,7 +173,8 @@ class ConversionText {
                                      field(), interval_base(*ip, scope_) + "%K", second, z(ip->low),
                                      z(ip->high)));
         break;
-      default: break;
+      default:
+        break;
     }
     return "  values. inj_norm. field.\n";
   }
@@ -186,8 +188,9 @@ class ConversionText {
     if (is_integer_argument(proof_, upper))
       return rewrite(fmt::format("leaf_binomial_ip K {} {} {} {} {}", integer_text(proof_, upper),
                                  second, z(ip->low), z(ip->high), z(b)));
-    return rewrite(fmt::format("leaf_gbinomial_ip K {}%K {}%K {} {} {} {}", field_text(proof_, upper),
-                               interval_base(*ip, scope_), second, z(ip->low), z(ip->high), z(b)));
+    return rewrite(fmt::format("leaf_gbinomial_ip K {}%K {}%K {} {} {} {}",
+                               field_text(proof_, upper), interval_base(*ip, scope_), second,
+                               z(ip->low), z(ip->high), z(b)));
   }
 
   // ---------------------------------------------------------------- powers
@@ -216,8 +219,9 @@ class ConversionText {
   }
 
   std::string side_conditions(const proof::Leaf& l) const {
-    std::string out = "reflexivity | index | right; index | left; numeric_neq0 | numeric_neq0 | "
-                      "left; split; numeric_neq0";
+    std::string out =
+        "reflexivity | index | right; index | left; numeric_neq0 | numeric_neq0 | "
+        "left; split; numeric_neq0";
     for (const proof::Nonzero& why : l.nonzero)
       if (!why.factors.empty()) {
         const std::string one = nonzero_tactic(proof_, why, scope_);
@@ -247,11 +251,13 @@ class ConversionText {
       zero.constant = 0;
       const std::string minus = z(combine(zero, -1, exponent, 0));
       out += fmt::format("  rewrite (zpow_div_base K {}%K ({})%K ({})%K {} {})", v,
-                         parts_text(above, 0), parts_text(below, 0), written, minus) + by;
+                         parts_text(above, 0), parts_text(below, 0), written, minus) +
+             by;
       out += split(below, minus, by);
     } else if (bare(v) != bare(parts_text(above, 0))) {
-      out += fmt::format("  rewrite (leaf_zpow K {}%K ({})%K {} {})", v, parts_text(above, 0), written,
-                         written) + by;
+      out += fmt::format("  rewrite (leaf_zpow K {}%K ({})%K {} {})", v, parts_text(above, 0),
+                         written, written) +
+             by;
     }
     if (above.empty())
       out += fmt::format("  rewrite (zpow_one_base K (inj 1) {}) by reflexivity.\n", written);
@@ -264,15 +270,19 @@ class ConversionText {
                            const std::string& by) {
     std::string out;
     for (std::size_t i = 0; i + 1 < parts.size(); ++i)
-      out += fmt::format("  rewrite (zpow_mul_base K ({})%K ({})%K ({})%K {})", parts_text(parts, i),
-                         part_text(parts[i]), parts_text(parts, i + 1), exponent) + by;
+      out +=
+          fmt::format("  rewrite (zpow_mul_base K ({})%K ({})%K ({})%K {})", parts_text(parts, i),
+                      part_text(parts[i]), parts_text(parts, i + 1), exponent) +
+          by;
     for (const Part& p : parts) {
       if (p.exponent == 1 && bare(exponent) == bare(p.to)) continue;
       if (p.exponent == 1)
-        out += fmt::format("  rewrite (leaf_zpow K {0}%K {0}%K {1} {2})", p.base, exponent, p.to) + by;
+        out +=
+            fmt::format("  rewrite (leaf_zpow K {0}%K {0}%K {1} {2})", p.base, exponent, p.to) + by;
       else
         out += fmt::format("  rewrite (zpow_pow_base K ({})%K {}%K {} {} {})", part_text(p), p.base,
-                           p.exponent, exponent, p.to) + by;
+                           p.exponent, exponent, p.to) +
+               by;
     }
     return out;
   }
@@ -322,8 +332,8 @@ class ConversionText {
     std::string out;
     for (std::size_t i = 0; i < c_.leaves.size(); ++i) {
       const proof::Leaf& l = c_.leaves[i];
-      const std::string key = claim::to_text(*l.expression) +
-                              (l.rule == LeafRule::reciprocal_factorial ? "|r" : "");
+      const std::string key =
+          claim::to_text(*l.expression) + (l.rule == LeafRule::reciprocal_factorial ? "|r" : "");
       if (found.contains(key) && !is_identity(l))
         out += fmt::format("  rewrite ({} {} {}).\n", leaf_name(i), arguments_, hypotheses_);
     }
@@ -333,7 +343,8 @@ class ConversionText {
   std::string inner_divisions(const proof::Denominator& outer) const {
     std::string out;
     for (std::size_t i = c_.denominators.size(); i-- > 0;)
-      if (&c_.denominators[i] != &outer && contains(*outer.expression, c_.denominators[i].node.get()))
+      if (&c_.denominators[i] != &outer &&
+          contains(*outer.expression, c_.denominators[i].node.get()))
         out += division_rewrite(i);
     return out;
   }
@@ -350,8 +361,8 @@ class ConversionText {
         d.node->operation == Operation::divide && d.expression == d.node->children[1];
     const std::string law = quotient ? "divide_by" : "invert_by";
     return fmt::format("  rewrite {}({} K {}%K ({})%K ({}_denominator_{} {} {})).\n",
-                       quotient ? "!" : "", law, divisor_text(d), product(d.reciprocal, scope_), what_,
-                       i + 1, arguments_, hypotheses_);
+                       quotient ? "!" : "", law, divisor_text(d), product(d.reciprocal, scope_),
+                       what_, i + 1, arguments_, hypotheses_);
   }
 
   void denominator(std::size_t i) {
@@ -390,8 +401,8 @@ class ConversionText {
       text += " * " + atom(a, scope_);
       powers = true;
     }
-    if (!powers && d.as_product.coefficient.constant == 1 && d.reciprocal.coefficient.constant == 1 &&
-        !d.units.empty())
+    if (!powers && d.as_product.coefficient.constant == 1 &&
+        d.reciprocal.coefficient.constant == 1 && !d.units.empty())
       return;
     script += fmt::format("  assert (unit0 : ({} = inj 1)%K) by (values; field).\n", text);
     pairs = "(" + text + ")";
@@ -431,8 +442,8 @@ class ConversionText {
       unfold += fmt::format("{}{}{}", j == 0 ? "" : ", ", piece_, j + 1);
     const std::string merges = merge_rewrites(script);
     if (any)
-      script += fmt::format("  transitivity ({})%K; [{}; {}inj_norm; ring|].\n  {}ring.\n", with_units,
-                            unfold.substr(2), merges, uses);
+      script += fmt::format("  transitivity ({})%K; [{}; {}inj_norm; ring|].\n  {}ring.\n",
+                            with_units, unfold.substr(2), merges, uses);
     else
       script += "  " + (c_.products.empty() ? "" : unfold.substr(2) + "; ") + merges +
                 "inj_norm; ring.\n";
@@ -449,9 +460,10 @@ class ConversionText {
       std::string side = "right; lia";
       if (is_constant(m.base)) side = "left; numeric_neq0";
       if (m.nonzero) side = "left; " + nonzero_tactic(proof_, *m.nonzero, scope_);
-      script += fmt::format("  assert (merge{0} : (zpow {1} {2} = zpow {1} {3} * zpow {1} {4})%K)\n"
-                            "    by (apply (zpow_add K); [{5} | lia]).\n",
-                            i + 1, b, total, z(m.first), z(m.second), side);
+      script += fmt::format(
+          "  assert (merge{0} : (zpow {1} {2} = zpow {1} {3} * zpow {1} {4})%K)\n"
+          "    by (apply (zpow_add K); [{5} | lia]).\n",
+          i + 1, b, total, z(m.first), z(m.second), side);
       out += fmt::format("try rewrite merge{}; ", i + 1);
     }
     return out;

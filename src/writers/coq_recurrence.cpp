@@ -1,5 +1,5 @@
-// Ranges and ends: the sum at n, n + 1, ... over one common range, explicit points, and the recurrence of
-// the sum with what remains.
+// Ranges and ends: the sum at n, n + 1, ... over one common range, explicit points, and the
+// recurrence of the sum with what remains.
 
 #include <fmt/format.h>
 
@@ -71,29 +71,33 @@ class RecurrenceText : private SectionText {
     for (unsigned p = r.high_points; p >= 1; --p) {
       const std::string rest_high = moved(t.high, static_cast<long>(p) - 1);
       const std::string here = moved(t.high, static_cast<long>(p));
-      split += fmt::format("  rewrite (sum_last K ({0}) ({1}) ({2}) ({1}) {3}) by lia.\n", wide_low, here,
-                           rest_high, f);
+      split += fmt::format("  rewrite (sum_last K ({0}) ({1}) ({2}) ({1}) {3}) by lia.\n", wide_low,
+                           here, rest_high, f);
       right += fmt::format(" + ({})", f_pieces(n, bracketed(here)));
     }
     for (unsigned p = r.low_points; p >= 1; --p) {
       const std::string rest_low = moved(t.low, 1 - static_cast<long>(p));
       const std::string here = moved(t.low, -static_cast<long>(p));
-      split += fmt::format("  rewrite (sum_first K ({0}) ({1}) ({2}) ({0}) {3}) by lia.\n", here, high,
-                           rest_low, f);
+      split += fmt::format("  rewrite (sum_first K ({0}) ({1}) ({2}) ({0}) {3}) by lia.\n", here,
+                           high, rest_low, f);
       right += fmt::format(" + ({})", f_pieces(n, bracketed(here)));
     }
-    out_ += fmt::format("Lemma range_{0} ({1} : Z) : {2}\n  (left_side {3}%Z = {4})%K.\nProof.\n"
-                        "  intros Hn. unfold left_side.\n"
-                        "  transitivity (sum {5} {6} {7}).\n"
-                        "  {{ apply (sum_ext K); [lia | lia |]. intros {8} Hk. "
-                        "apply (summand_terms {3} {8}); index. }}\n",
-                        r.shift, names_.n, beyond_, n, right, lo, hi, f, names_.k);
+    out_ += fmt::format(
+        "Lemma range_{0} ({1} : Z) : {2}\n  (left_side {3}%Z = {4})%K.\nProof.\n"
+        "  intros Hn. unfold left_side.\n"
+        "  transitivity (sum {5} {6} {7}).\n"
+        "  {{ apply (sum_ext K); [lia | lia |]. intros {8} Hk. "
+        "apply (summand_terms {3} {8}); index. }}\n",
+        r.shift, names_.n, beyond_, n, right, lo, hi, f, names_.k);
     if (r.below || r.above)
-      out_ += fmt::format("  rewrite (sum_same K {0} {1} ({2}) ({3}) {4}).\n  2:{{ {5} }}\n  2:{{ {6} }}\n",
-                          lo, hi, wide_low, wide_high, f, outside(r), outside(r));
+      out_ += fmt::format(
+          "  rewrite (sum_same K {0} {1} ({2}) ({3}) {4}).\n  2:{{ {5} }}\n  2:{{ {6} }}\n", lo, hi,
+          wide_low, wide_high, f, outside(r), outside(r));
     else
-      out_ += fmt::format("  transitivity (sum ({0}) ({1}) {2}); [apply (sum_ext K); [lia | lia | "
-                          "reflexivity]|].\n", wide_low, wide_high, f);
+      out_ += fmt::format(
+          "  transitivity (sum ({0}) ({1}) {2}); [apply (sum_ext K); [lia | lia | "
+          "reflexivity]|].\n",
+          wide_low, wide_high, f);
     out_ += split;
     out_ += "  cbv beta. ring.\nQed.\n\n";
   }
@@ -115,7 +119,8 @@ class RecurrenceText : private SectionText {
     if (!v) return "exfalso; index";
     std::string unfold;
     std::string rewrites;
-    const Scope scope = shift == 0 ? scope_ : with(scope_, 0, fmt::format("{} + {}", names_.n, shift));
+    const Scope scope =
+        shift == 0 ? scope_ : with(scope_, 0, fmt::format("{} + {}", names_.n, shift));
     for (std::size_t j = 0; j < v->atoms.size(); ++j) {
       unfold += fmt::format("{}F{}", j == 0 ? "" : ", ", j + 1);
       const std::string argument = original_argument(v->atoms[j], j, shift, scope);
@@ -134,7 +139,8 @@ class RecurrenceText : private SectionText {
     for (const auto& [a, e] : proof_.summand.products[piece].atoms) {
       if (a.kind != proof::AtomKind::reciprocal_factorial) continue;
       const proof::Affine moved = substitute(a.argument, {{0, n}});
-      if (moved.coefficients == image.argument.coefficients && moved.constant == image.argument.constant)
+      if (moved.coefficients == image.argument.coefficients &&
+          moved.constant == image.argument.constant)
         return bracketed(affine(a.argument, scope));
     }
     return bracketed(affine(image.argument, scope_));
@@ -169,9 +175,10 @@ class RecurrenceText : private SectionText {
     if (ends) {
       const std::string low = bracketed(affine(proof_.telescoping->low, scope_));
       const std::string high = bracketed(affine(proof_.telescoping->high, scope_));
-      body = fmt::format("up (inj {0}) (inj {1}) * c (inj {0}) (inj {1} + inj 1) * base {0} {1} - "
-                         "down (inj {0}) (inj {2}) * c (inj {0}) (inj {2}) * base {0} {2}",
-                         names_.n, high, low);
+      body = fmt::format(
+          "up (inj {0}) (inj {1}) * c (inj {0}) (inj {1} + inj 1) * base {0} {1} - "
+          "down (inj {0}) (inj {2}) * c (inj {0}) (inj {2}) * base {0} {2}",
+          names_.n, high, low);
     }
     for (const std::string& t : explicit_texts()) body += (body.empty() ? "" : "\n   + ") + t;
     if (body.empty()) body = "inj 0";
@@ -182,23 +189,26 @@ class RecurrenceText : private SectionText {
       std::string more;
       for (const proof::RangeStep& r : proof_.ranges) {
         script += fmt::format("  rewrite (range_{} {} Hn).\n", r.shift, names_.n);
-        summed += fmt::format("{}{} * sum ({}) ({}) (fun {} : Z => {})", summed.empty() ? "" : " + ",
-                              scale(r.shift), affine(proof_.telescoping->low, scope_),
-                              affine(proof_.telescoping->high, scope_), names_.k,
-                              f_pieces(shifted(names_.n, r.shift), names_.k));
+        summed += fmt::format(
+            "{}{} * sum ({}) ({}) (fun {} : Z => {})", summed.empty() ? "" : " + ", scale(r.shift),
+            affine(proof_.telescoping->low, scope_), affine(proof_.telescoping->high, scope_),
+            names_.k, f_pieces(shifted(names_.n, r.shift), names_.k));
       }
       for (const std::string& t : explicit_texts()) more += " + " + t;
-      script += fmt::format("  transitivity ({}{})%K; [ring|].\n  rewrite (summed {} Hn). unfold "
-                            "remainder{}. ring.\n", summed, more, names_.n, ends ? "" : ", c");
+      script += fmt::format(
+          "  transitivity ({}{})%K; [ring|].\n  rewrite (summed {} Hn). unfold "
+          "remainder{}. ring.\n",
+          summed, more, names_.n, ends ? "" : ", c");
     } else {
       script = "  unfold left_side, remainder.\n";
       for (unsigned i = 0; i < coefficients_; ++i)
         script += fmt::format("  rewrite (summand_terms {}) by lia.\n", shifted(names_.n, i));
       script += "  ring.\n";
     }
-    out_ += fmt::format("Lemma left_recurrence ({0} : Z) : {1}\n  ({2} = remainder {0})%K.\nProof.\n"
-                        "  intros Hn.\n{3}Qed.\n\n",
-                        names_.n, beyond_, combination("left_side"), script);
+    out_ += fmt::format(
+        "Lemma left_recurrence ({0} : Z) : {1}\n  ({2} = remainder {0})%K.\nProof.\n"
+        "  intros Hn.\n{3}Qed.\n\n",
+        names_.n, beyond_, combination("left_side"), script);
   }
 };
 

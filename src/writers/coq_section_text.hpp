@@ -12,7 +12,8 @@
 
 namespace sumwright::writers::coq {
 
-/// Base of the section writers: the names and texts that they have in common, and the text made so far.
+/// Base of the section writers: the names and texts that they have in common, and the text made so
+/// far.
 class SectionText {
  protected:
   explicit SectionText(const proof::Proof& proof)

@@ -12,7 +12,8 @@ namespace sumwright::writers::coq {
 [[nodiscard]] std::string header_section(const proof::Proof& proof);
 /// Sides of the claim, terms as products of atoms, the leaf lemmas and the conversions.
 [[nodiscard]] std::string terms_section(const proof::Proof& proof);
-/// One conversion: `what` is "summand", "closed" or "right_side"; the pieces are called `piece`_1, ...
+/// One conversion: `what` is "summand", "closed" or "right_side"; the pieces are called `piece`_1,
+/// ...
 [[nodiscard]] std::string conversion_text(const proof::Proof& proof, const proof::Conversion& c,
                                           const std::string& what, const std::string& piece,
                                           bool with_index);
@@ -20,23 +21,24 @@ namespace sumwright::writers::coq {
 [[nodiscard]] std::string telescoping_section(const proof::Proof& proof);
 /// Ranges, ends, explicit points: the recurrence of the sum with its remainder.
 [[nodiscard]] std::string recurrence_section(const proof::Proof& proof);
-/// Closed form or right side against the remainder, leading coefficient, starting values, conclusion.
+/// Closed form or right side against the remainder, leading coefficient, starting values,
+/// conclusion.
 [[nodiscard]] std::string conclusion_section(const proof::Proof& proof);
 /// After the section: Theorem claim, Theorem claim_defined.
 [[nodiscard]] std::string theorem_section(const proof::Proof& proof);
 
 /// What several sections share.
 struct Names {
-  std::string n;     ///< the running variable in the file
-  std::string k;     ///< the index
+  std::string n;  ///< the running variable in the file
+  std::string k;  ///< the index
   bool index = false;
 };
 [[nodiscard]] Names names(const proof::Proof& proof);
 
 /// `F (n + 2) k`-like application of the pieces of the summand, their sum for several.
 [[nodiscard]] std::string shifted(const std::string& n, unsigned by);
-/// Lemmas for the terms of a balance: each equals polynomial * base or 0. `term_texts` receives how each
-/// is written. `definitions` are unfolded.
+/// Lemmas for the terms of a balance: each equals polynomial * base or 0. `term_texts` receives how
+/// each is written. `definitions` are unfolded.
 [[nodiscard]] std::string balance_lemmas(const proof::Proof& proof, const proof::Balance& balance,
                                          const std::string& region,
                                          std::vector<std::string>& term_texts);

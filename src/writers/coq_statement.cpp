@@ -35,8 +35,8 @@ std::string paren(const std::string& text) { return "(" + text + ")"; }
 
 std::string infix(const proof::Proof& proof, const Expression& e, const char* sign,
                   std::string (*print)(const proof::Proof&, const Expression&)) {
-  return paren(fmt::format("{} {} {}", print(proof, *e.children[0]), sign,
-                           print(proof, *e.children[1])));
+  return paren(
+      fmt::format("{} {} {}", print(proof, *e.children[0]), sign, print(proof, *e.children[1])));
 }
 
 std::string call_text(const proof::Proof& proof, const Expression& e) {
@@ -55,8 +55,8 @@ std::string power_text(const proof::Proof& proof, const Expression& e) {
   const Expression& base = *e.children[0];
   const std::optional<mpz_class> exponent = claim::as_literal(*e.children[1]);
   if (!exponent)
-    return paren(fmt::format("zpow {} {}", field_text(proof, base),
-                             integer_text(proof, *e.children[1])));
+    return paren(
+        fmt::format("zpow {} {}", field_text(proof, base), integer_text(proof, *e.children[1])));
   const mpz_class size = abs(*exponent);
   if (*exponent >= 0) return paren(fmt::format("{} ^ {}", field_text(proof, base), size.get_str()));
   if (has_factorial(base))
@@ -66,11 +66,16 @@ std::string power_text(const proof::Proof& proof, const Expression& e) {
 
 std::string comparison_sign(claim::Comparison c) {
   switch (c) {
-    case claim::Comparison::less_equal: return "<=";
-    case claim::Comparison::less: return "<";
-    case claim::Comparison::greater_equal: return ">=";
-    case claim::Comparison::greater: return ">";
-    case claim::Comparison::not_equal: return "<>";
+    case claim::Comparison::less_equal:
+      return "<=";
+    case claim::Comparison::less:
+      return "<";
+    case claim::Comparison::greater_equal:
+      return ">=";
+    case claim::Comparison::greater:
+      return ">";
+    case claim::Comparison::not_equal:
+      return "<>";
   }
   return "";
 }
@@ -78,11 +83,16 @@ std::string comparison_sign(claim::Comparison c) {
 std::string word_condition(claim::Exclusion::Kind kind) {
   using Kind = claim::Exclusion::Kind;
   switch (kind) {
-    case Kind::positive_integers: return "0 < z -> ";
-    case Kind::negative_integers: return "z < 0 -> ";
-    case Kind::nonnegative_integers: return "0 <= z -> ";
-    case Kind::nonpositive_integers: return "z <= 0 -> ";
-    default: return "";
+    case Kind::positive_integers:
+      return "0 < z -> ";
+    case Kind::negative_integers:
+      return "z < 0 -> ";
+    case Kind::nonnegative_integers:
+      return "0 <= z -> ";
+    case Kind::nonpositive_integers:
+      return "z <= 0 -> ";
+    default:
+      return "";
   }
 }
 
@@ -97,7 +107,8 @@ std::string assumption_text(const proof::Proof& proof, const claim::Assumption& 
                             const std::string& field) {
   const std::string sign = comparison_sign(a.comparison);
   if (a.over_integers)
-    return fmt::format("{} {} {}", integer_text(proof, *a.left), sign, integer_text(proof, *a.right));
+    return fmt::format("{} {} {}", integer_text(proof, *a.left), sign,
+                       integer_text(proof, *a.right));
   return fmt::format("{}%K {} {}%K :> {}", paren(field_text(proof, *a.left)), sign,
                      paren(field_text(proof, *a.right)), field);
 }
@@ -123,8 +134,10 @@ std::string name_of(const std::string& symbol) { return safe_name(symbol); }
 
 bool is_integer_argument(const proof::Proof& proof, const Expression& e) {
   switch (e.operation) {
-    case Operation::literal: return true;
-    case Operation::symbol: return !is_rational(proof, e.name);
+    case Operation::literal:
+      return true;
+    case Operation::symbol:
+      return !is_rational(proof, e.name);
     case Operation::negate:
     case Operation::add:
     case Operation::subtract:
@@ -132,21 +145,31 @@ bool is_integer_argument(const proof::Proof& proof, const Expression& e) {
       return std::all_of(e.children.begin(), e.children.end(), [&](const claim::ExpressionPtr& c) {
         return is_integer_argument(proof, *c);
       });
-    default: return false;
+    default:
+      return false;
   }
 }
 
 std::string integer_text(const proof::Proof& proof, const Expression& e) {
   switch (e.operation) {
-    case Operation::literal: return bracketed(e.value.get_str());
-    case Operation::symbol: return name_of(e.name);
-    case Operation::negate: return paren("- " + integer_text(proof, *e.children[0]));
-    case Operation::add: return infix(proof, e, "+", integer_text);
-    case Operation::subtract: return infix(proof, e, "-", integer_text);
-    case Operation::multiply: return infix(proof, e, "*", integer_text);
-    case Operation::divide: return infix(proof, e, "/", integer_text);
-    case Operation::power: return infix(proof, e, "^", integer_text);
-    case Operation::call: break;
+    case Operation::literal:
+      return bracketed(e.value.get_str());
+    case Operation::symbol:
+      return name_of(e.name);
+    case Operation::negate:
+      return paren("- " + integer_text(proof, *e.children[0]));
+    case Operation::add:
+      return infix(proof, e, "+", integer_text);
+    case Operation::subtract:
+      return infix(proof, e, "-", integer_text);
+    case Operation::multiply:
+      return infix(proof, e, "*", integer_text);
+    case Operation::divide:
+      return infix(proof, e, "/", integer_text);
+    case Operation::power:
+      return infix(proof, e, "^", integer_text);
+    case Operation::call:
+      break;
   }
   if (e.name == "floor") return integer_text(proof, *e.children[0]);
   std::string out = integer_text(proof, *e.children[0]);
@@ -157,20 +180,27 @@ std::string integer_text(const proof::Proof& proof, const Expression& e) {
 
 std::string field_text(const proof::Proof& proof, const Expression& e) {
   switch (e.operation) {
-    case Operation::literal: return paren("inj " + bracketed(e.value.get_str()));
+    case Operation::literal:
+      return paren("inj " + bracketed(e.value.get_str()));
     case Operation::symbol:
       return is_rational(proof, e.name) ? name_of(e.name) : paren("inj " + name_of(e.name));
-    case Operation::negate: return paren("- " + field_text(proof, *e.children[0]));
-    case Operation::add: return infix(proof, e, "+", field_text);
-    case Operation::subtract: return infix(proof, e, "-", field_text);
-    case Operation::multiply: return infix(proof, e, "*", field_text);
+    case Operation::negate:
+      return paren("- " + field_text(proof, *e.children[0]));
+    case Operation::add:
+      return infix(proof, e, "+", field_text);
+    case Operation::subtract:
+      return infix(proof, e, "-", field_text);
+    case Operation::multiply:
+      return infix(proof, e, "*", field_text);
     case Operation::divide:
       if (has_factorial(*e.children[1]))
         return paren(fmt::format("{} * {}", field_text(proof, *e.children[0]),
                                  reciprocal_text(proof, *e.children[1])));
       return infix(proof, e, "/", field_text);
-    case Operation::power: return power_text(proof, e);
-    case Operation::call: return call_text(proof, e);
+    case Operation::power:
+      return power_text(proof, e);
+    case Operation::call:
+      return call_text(proof, e);
   }
   throw std::logic_error("unknown expression");
 }
@@ -184,8 +214,7 @@ std::string reciprocal_text(const proof::Proof& proof, const Expression& v) {
   if (v.operation == Operation::divide)
     return paren(fmt::format("{} * {}", reciprocal_text(proof, *v.children[0]),
                              field_text(proof, *v.children[1])));
-  if (v.operation == Operation::negate)
-    return paren("- " + reciprocal_text(proof, *v.children[0]));
+  if (v.operation == Operation::negate) return paren("- " + reciprocal_text(proof, *v.children[0]));
   if (v.operation == Operation::power) {
     const std::optional<mpz_class> c = claim::as_literal(*v.children[1]);
     if (c && *c >= 0)
@@ -194,7 +223,8 @@ std::string reciprocal_text(const proof::Proof& proof, const Expression& v) {
   return paren("/ " + field_text(proof, v));
 }
 
-std::string exclusion_name(const proof::Proof& proof, std::size_t parameter, std::size_t exclusion) {
+std::string exclusion_name(const proof::Proof& proof, std::size_t parameter,
+                           std::size_t exclusion) {
   return fmt::format("H_not_{}_{}", name_of(proof.symbols[parameter].name), exclusion + 1);
 }
 
@@ -259,7 +289,8 @@ std::string statement_text(const proof::Proof& proof, const std::string& field) 
     return out;
   }
   out += fmt::format("  (forall {} : Z, s {} = {}) ->\n", n, n, sum_text(proof));
-  out += fmt::format("  forall {} : Z, {} <= {} ->\n  {}", n, from, n, recurrence_equation(proof, field));
+  out += fmt::format("  forall {} : Z, {} <= {} ->\n  {}", n, from, n,
+                     recurrence_equation(proof, field));
   return out;
 }
 

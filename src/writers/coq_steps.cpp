@@ -1,5 +1,5 @@
-// Tactics for the recurring steps. Each rewriting step names its law and all of its arguments, so that a
-// reader sees which factor moves, and a wrong one fails where it stands.
+// Tactics for the recurring steps. Each rewriting step names its law and all of its arguments, so
+// that a reader sees which factor moves, and a wrong one fails where it stands.
 
 #include "writers/coq_steps.hpp"
 
@@ -27,14 +27,17 @@ std::string positive_tactic(const NonzeroFactor& f, const Scope& scope) {
   Scope shifted = scope;
   for (std::size_t i = 0; i < f.shift.size(); ++i)
     if (f.shift[i] != 0)
-      shifted.integer[i] = fmt::format("({} - {})", scope.integer[i], bracketed(std::to_string(f.shift[i])));
+      shifted.integer[i] =
+          fmt::format("({} - {})", scope.integer[i], bracketed(std::to_string(f.shift[i])));
   // Constant term first: the form that `positive` takes apart.
   proof::Polynomial reversed = f.shifted;
   std::reverse(reversed.terms.begin(), reversed.terms.end());
   const std::string p = integer_polynomial(reversed, shifted);
   if (f.negated)
-    return fmt::format("apply (neq0_by K _ (- ({0}))); [inj_norm; ring | "
-                       "apply (neq0_neg _ ({0})); [reflexivity | positive]]", p);
+    return fmt::format(
+        "apply (neq0_by K _ (- ({0}))); [inj_norm; ring | "
+        "apply (neq0_neg _ ({0})); [reflexivity | positive]]",
+        p);
   return fmt::format("apply (neq0_by K _ ({})); [inj_norm; ring | apply neq0_pos; positive]", p);
 }
 
@@ -45,34 +48,41 @@ std::string excluded_tactic(const proof::Proof& proof, const NonzeroFactor& f, c
   const std::string x = scope.field[f.parameter];
   const std::string scale = fmt::format("(inj {})", bracketed(f.scale.get_str()));
   if (entry.kind == claim::Exclusion::Kind::constant)
-    return fmt::format("apply (neq0_scaled K {} {} {}); [apply inj_neq0; lia | exact {} | inj_norm; field]",
-                       scale, x, k_text(field_text(proof, *entry.written)), name);
+    return fmt::format(
+        "apply (neq0_scaled K {} {} {}); [apply inj_neq0; lia | exact {} | inj_norm; field]", scale,
+        x, k_text(field_text(proof, *entry.written)), name);
   const std::string use = entry.kind == claim::Exclusion::Kind::integers
                               ? fmt::format("apply {}", name)
                               : fmt::format("apply {}; lia", name);
-  return fmt::format("apply (neq0_scaled K {} {} (inj ({}))); [apply inj_neq0; lia | {} | inj_norm; ring]",
-                     scale, x, affine(f.value, scope), use);
+  return fmt::format(
+      "apply (neq0_scaled K {} {} (inj ({}))); [apply inj_neq0; lia | {} | inj_norm; ring]", scale,
+      x, affine(f.value, scope), use);
 }
 
 std::string factor_tactic(const proof::Proof& proof, const NonzeroFactor& f, const Scope& scope) {
   switch (f.method) {
-    case Method::constant: return "apply inj_neq0; lia";
+    case Method::constant:
+      return "apply inj_neq0; lia";
     case Method::linear:
       return fmt::format("apply (neq0_by K _ ({})); [inj_norm; ring | lia]",
                          integer_polynomial(f.factor, scope));
-    case Method::positive: return positive_tactic(f, scope);
-    case Method::excluded: return excluded_tactic(proof, f, scope);
-    case Method::assumed: break;
+    case Method::positive:
+      return positive_tactic(f, scope);
+    case Method::excluded:
+      return excluded_tactic(proof, f, scope);
+    case Method::assumed:
+      break;
   }
   const claim::Assumption& a = proof.claim->assumptions[f.assumption];
   if (a.over_integers)
     return fmt::format("apply (neq0_by K _ ({})); [inj_norm; ring | lia]",
                        integer_polynomial(f.factor, scope));
-  return fmt::format("apply (neq0_eq K _ ((inj 1 / inj {0}) * ({1} - {2}))%K); [inj_norm; field | "
-                     "apply (neq0_scaled K (inj 1 / inj {0})%K {1}%K {2}%K); "
-                     "[apply (neq0_by_quotient K _ 1 {0}); [field | lia] | exact {3} | reflexivity]]",
-                     bracketed(f.scale.get_str()), field_text(proof, *a.left),
-                     field_text(proof, *a.right), assumption_name(f.assumption));
+  return fmt::format(
+      "apply (neq0_eq K _ ((inj 1 / inj {0}) * ({1} - {2}))%K); [inj_norm; field | "
+      "apply (neq0_scaled K (inj 1 / inj {0})%K {1}%K {2}%K); "
+      "[apply (neq0_by_quotient K _ 1 {0}); [field | lia] | exact {3} | reflexivity]]",
+      bracketed(f.scale.get_str()), field_text(proof, *a.left), field_text(proof, *a.right),
+      assumption_name(f.assumption));
 }
 
 std::string pair_text(const proof::Unit& unit, const Scope& scope) {
@@ -86,8 +96,10 @@ std::string unit_tactic(const proof::Proof& proof, const proof::Unit& unit, cons
   switch (unit.left.kind) {
     case AtomKind::reciprocal:
       return "apply (unit_inv K); " + nonzero_tactic(proof, *unit.nonzero, scope);
-    case AtomKind::factorial: return "apply (unit_fact K); index";
-    case AtomKind::reciprocal_factorial: return "apply (unit_rfact K); index";
+    case AtomKind::factorial:
+      return "apply (unit_fact K); index";
+    case AtomKind::reciprocal_factorial:
+      return "apply (unit_rfact K); index";
     case AtomKind::power:
       return fmt::format("apply (unit_zpow K); [{} | lia]",
                          unit.nonzero && !unit.nonzero->factors.empty()
@@ -117,8 +129,10 @@ std::string step_law(const proof::Proof& proof, const AtomStep& s, const Scope& 
                          power_base(s.from.base, scope), z(s.to.argument), z(s.from.argument), p,
                          is_constant(s.from.base) ? "left; numeric_neq0" : "right; lia");
     case AtomKind::interval_product:
-    case AtomKind::reciprocal_interval_product: break;
-    case AtomKind::reciprocal: throw std::logic_error("reciprocals move by units");
+    case AtomKind::reciprocal_interval_product:
+      break;
+    case AtomKind::reciprocal:
+      throw std::logic_error("reciprocals move by units");
   }
   const bool plain = s.from.kind == AtomKind::interval_product;
   const Atom& longer = plain ? s.from : s.to;
@@ -283,10 +297,10 @@ std::string nonzero_tactic(const proof::Proof& proof, const proof::Nonzero& why,
   if (p.constant == 1 && why.factors.size() == 1 && why.factors[0].exponent == 1)
     return factor_tactic(proof, why.factors[0], scope);
   if (why.factors.empty()) return "numeric_neq0";
-  std::string tactic = has_fraction(p)
-                           ? fmt::format("apply (neq0_by_quotient K _ ({}) {}); [field | lia]",
-                                         p.constant.get_num().get_str(), p.constant.get_den().get_str())
-                           : "apply inj_neq0; lia";
+  std::string tactic =
+      has_fraction(p) ? fmt::format("apply (neq0_by_quotient K _ ({}) {}); [field | lia]",
+                                    p.constant.get_num().get_str(), p.constant.get_den().get_str())
+                      : "apply inj_neq0; lia";
   bool first = p.constant == 1;
   for (const NonzeroFactor& f : why.factors) {
     std::string one = factor_tactic(proof, f, scope);
@@ -301,18 +315,20 @@ std::string nonzero_tactic(const proof::Proof& proof, const proof::Nonzero& why,
 std::string interval_nonzero_tactic(const proof::Proof& proof, const Atom& a, const Scope& scope) {
   if (a.base.terms.empty()) return "intros t Ht; apply (neq0_by K _ t); [pq | lia]";
   if (is_constant(a.base))
-    return fmt::format("intros t Ht; apply (neq0_by_quotient K _ ({0} + {1} * t) {1}); "
-                       "[inj_norm; field | lia]",
-                       a.base.terms[0].coefficient.get_str(), a.base_scale.get_str());
+    return fmt::format(
+        "intros t Ht; apply (neq0_by_quotient K _ ({0} + {1} * t) {1}); "
+        "[inj_norm; field | lia]",
+        a.base.terms[0].coefficient.get_str(), a.base_scale.get_str());
   for (std::size_t i = 2; i < proof.symbols.size(); ++i) {
     if (proof.symbols[i].kind != proof::SymbolKind::rational_parameter) continue;
     const auto& excluded = proof.claim->parameters[i - 2].excluded;
     for (std::size_t e = 0; e < excluded.size(); ++e) {
       if (excluded[e].kind == claim::Exclusion::Kind::constant) continue;
       const bool all = excluded[e].kind == claim::Exclusion::Kind::integers;
-      return fmt::format("intros t Ht; apply (neq0_scaled K (inj 1) {} (inj (- t))); "
-                         "[apply inj_neq0; lia | apply {}{} | inj_norm; ring]",
-                         scope.field[i], exclusion_name(proof, i, e), all ? "" : "; lia");
+      return fmt::format(
+          "intros t Ht; apply (neq0_scaled K (inj 1) {} (inj (- t))); "
+          "[apply inj_neq0; lia | apply {}{} | inj_norm; ring]",
+          scope.field[i], exclusion_name(proof, i, e), all ? "" : "; lia");
     }
   }
   return "intros t Ht; fail";
@@ -346,13 +362,12 @@ std::string respell(const Unfolded& unfolded, const Scope& scope) {
   }
   std::vector<std::pair<std::string, std::string>> list(integers.begin(), integers.end());
   // Longest first, so that no replacement spoils a longer one.
-  std::stable_sort(list.begin(), list.end(), [](const auto& a, const auto& b) {
-    return a.first.size() > b.first.size();
-  });
+  std::stable_sort(list.begin(), list.end(),
+                   [](const auto& a, const auto& b) { return a.first.size() > b.first.size(); });
   std::string out;
   for (const auto& [old, fresh] : fields)
-    out += fmt::format("  replace (/ ({}))%K with (/ ({}))%K by (apply f_equal; inj_norm; ring).\n", old,
-                       fresh);
+    out += fmt::format("  replace (/ ({}))%K with (/ ({}))%K by (apply f_equal; inj_norm; ring).\n",
+                       old, fresh);
   for (const auto& [old, fresh] : list)
     out += fmt::format("  replace ({}) with ({}) by lia.\n", old, fresh);
   return out;

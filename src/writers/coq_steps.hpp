@@ -15,8 +15,8 @@ namespace sumwright::writers::coq {
                                          const Scope& scope);
 
 /// A tactic that closes `forall t, i <= t < j -> a + inj t <> 0` for an interval product.
-[[nodiscard]] std::string interval_nonzero_tactic(const proof::Proof& proof, const proof::Atom& atom,
-                                                  const Scope& scope);
+[[nodiscard]] std::string interval_nonzero_tactic(const proof::Proof& proof,
+                                                  const proof::Atom& atom, const Scope& scope);
 
 /// `assert (name : (left * right = inj 1)%K)` with its proof; the text of `left * right` in `pair`.
 [[nodiscard]] std::string unit_assertion(const proof::Proof& proof, const proof::Unit& unit,
@@ -30,10 +30,11 @@ struct Unfolded {
   Scope scope;                               ///< the texts that stand for the symbols
 };
 
-/// The tactics that prove an instance after both sides are unfolded; `left`, `right` tell how they stand.
-[[nodiscard]] std::string instance_tactics(const proof::Proof& proof, const proof::Instance& instance,
-                                           const Unfolded& left, const Unfolded& right,
-                                           const Scope& scope);
+/// The tactics that prove an instance after both sides are unfolded; `left`, `right` tell how they
+/// stand.
+[[nodiscard]] std::string instance_tactics(const proof::Proof& proof,
+                                           const proof::Instance& instance, const Unfolded& left,
+                                           const Unfolded& right, const Scope& scope);
 
 /// replace ... with ... by lia, for every argument of the product that is written differently after
 /// substitution.

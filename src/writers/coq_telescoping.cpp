@@ -1,4 +1,5 @@
-// Base term, shifts, the polynomial equality, the telescoping identity and its sum over the common range.
+// Base term, shifts, the polynomial equality, the telescoping identity and its sum over the common
+// range.
 
 #include <fmt/format.h>
 
@@ -19,8 +20,9 @@ class TelescopingText {
         names_(names(proof)) {
     low_ = affine(t_.low, scope_);
     high_ = affine(t_.high, scope_);
-    region_ = fmt::format("{} <= {} -> {} <= {} <= {} ->", bracketed(std::to_string(proof.threshold)),
-                          names_.n, bracketed(low_), names_.k, bracketed(high_));
+    region_ =
+        fmt::format("{} <= {} -> {} <= {} <= {} ->", bracketed(std::to_string(proof.threshold)),
+                    names_.n, bracketed(low_), names_.k, bracketed(high_));
   }
 
   std::string run() {
@@ -56,7 +58,9 @@ class TelescopingText {
     out_ += "\n";
   }
 
-  static std::string p_name(std::size_t i, std::size_t j) { return fmt::format("p{}_{}", i, j + 1); }
+  static std::string p_name(std::size_t i, std::size_t j) {
+    return fmt::format("p{}_{}", i, j + 1);
+  }
 
   void shift(std::size_t i, std::size_t j) {
     const proof::Instance& instance = t_.shifts[i][j];
@@ -66,11 +70,12 @@ class TelescopingText {
       left.scope = with(scope_, 0, fmt::format("{} + {}", names_.n, i));
       left.by = {{0, shift_form(static_cast<long>(i))}};
     }
-    out_ += fmt::format("Lemma term_shift_{}_{} ({} {} : Z) : {}\n  F{} {} {} = ({} (inj {}) (inj {}) * "
-                        "base {} {})%K.\nProof.\n  intros Hn Hk. unfold F{}, base, {}.\n{}Qed.\n\n",
-                        i, j + 1, names_.n, names_.k, region_, j + 1, n, names_.k, p_name(i, j),
-                        names_.n, names_.k, names_.n, names_.k, j + 1, p_name(i, j),
-                        instance_tactics(proof_, instance, left, {}, scope_));
+    out_ += fmt::format(
+        "Lemma term_shift_{}_{} ({} {} : Z) : {}\n  F{} {} {} = ({} (inj {}) (inj {}) * "
+        "base {} {})%K.\nProof.\n  intros Hn Hk. unfold F{}, base, {}.\n{}Qed.\n\n",
+        i, j + 1, names_.n, names_.k, region_, j + 1, n, names_.k, p_name(i, j), names_.n, names_.k,
+        names_.n, names_.k, j + 1, p_name(i, j),
+        instance_tactics(proof_, instance, left, {}, scope_));
   }
 
   [[nodiscard]] proof::Affine shift_form(long by, std::size_t symbol = 0) const {
@@ -83,26 +88,30 @@ class TelescopingText {
 
   void index_shift() {
     if (!t_.index_shift) return;
-    const Unfolded left{&t_.base.product, {{1, shift_form(1, 1)}},
+    const Unfolded left{&t_.base.product,
+                        {{1, shift_form(1, 1)}},
                         with(scope_, 1, fmt::format("{} + 1", names_.k))};
     out_ += fmt::format(
-        "Lemma index_shift ({0} {1} : Z) : {2}\n  (down (inj {0}) (inj {1} + inj 1) * base {0} ({1} + 1)%Z = "
-        "up (inj {0}) (inj {1}) * base {0} {1})%K.\nProof.\n  intros Hn Hk. unfold down, up, base.\n{3}Qed.\n\n",
-        names_.n, names_.k, region_,
-        instance_tactics(proof_, *t_.index_shift, left, {}, scope_));
+        "Lemma index_shift ({0} {1} : Z) : {2}\n  (down (inj {0}) (inj {1} + inj 1) * base {0} "
+        "({1} + 1)%Z = "
+        "up (inj {0}) (inj {1}) * base {0} {1})%K.\nProof.\n  intros Hn Hk. unfold down, up, "
+        "base.\n{3}Qed.\n\n",
+        names_.n, names_.k, region_, instance_tactics(proof_, *t_.index_shift, left, {}, scope_));
   }
 
   [[nodiscard]] std::string combination(const std::string& n, const std::string& k) const {
     std::string out;
     for (std::size_t i = 0; i < t_.shifts.size(); ++i)
       for (std::size_t j = 0; j < t_.shifts[i].size(); ++j)
-        out += fmt::format("{}a{} {} * {} {} {}", out.empty() ? "" : " + ", i, n, p_name(i, j), n, k);
+        out +=
+            fmt::format("{}a{} {} * {} {} {}", out.empty() ? "" : " + ", i, n, p_name(i, j), n, k);
     return out;
   }
 
   void equality() {
     out_ += "(** ** The polynomial equality *)\n\n";
-    bool fraction = has_fraction(t_.up) || has_fraction(t_.down) || has_fraction(t_.weight.polynomial);
+    bool fraction =
+        has_fraction(t_.up) || has_fraction(t_.down) || has_fraction(t_.weight.polynomial);
     std::string unfold = "c, down, up, weight";
     for (std::size_t i = 0; i < t_.shifts.size(); ++i) {
       unfold += fmt::format(", a{}", i);
@@ -111,10 +120,10 @@ class TelescopingText {
         fraction = fraction || has_fraction(t_.shifts[i][j].right.coefficient);
       }
     }
-    out_ += fmt::format("Lemma equality ({0} {1} : K) :\n  (weight {0} * ({2}) =\n   up {0} {1} * c {0} ({1} + "
-                        "inj 1) - down {0} {1} * c {0} {1})%K.\nProof. unfold {3}. {4}. Qed.\n\n",
-                        names_.n, names_.k, combination(names_.n, names_.k), unfold,
-                        fraction ? "field" : "ring");
+    out_ += fmt::format(
+        "Lemma equality ({0} {1} : K) :\n  (weight {0} * ({2}) =\n   up {0} {1} * c {0} ({1} + "
+        "inj 1) - down {0} {1} * c {0} {1})%K.\nProof. unfold {3}. {4}. Qed.\n\n",
+        names_.n, names_.k, combination(names_.n, names_.k), unfold, fraction ? "field" : "ring");
   }
 
   [[nodiscard]] std::string weighted_terms(const std::string& k) const {
@@ -124,18 +133,19 @@ class TelescopingText {
       for (std::size_t j = 0; j < t_.shifts[i].size(); ++j)
         f += fmt::format("{}F{} {}%Z {}", f.empty() ? "" : " + ", j + 1,
                          shifted(names_.n, static_cast<unsigned>(i)), k);
-      out += fmt::format("{}weight (inj {}) * a{} (inj {}) * ({})", out.empty() ? "" : " + ", names_.n,
-                         i, names_.n, f);
+      out += fmt::format("{}weight (inj {}) * a{} (inj {}) * ({})", out.empty() ? "" : " + ",
+                         names_.n, i, names_.n, f);
     }
     return out;
   }
 
   [[nodiscard]] std::string upper(const std::string& k) const {
-    return fmt::format("up (inj {0}) (inj {1}) * c (inj {0}) (inj {1} + inj 1) * base {0} {1}", names_.n,
-                       k);
+    return fmt::format("up (inj {0}) (inj {1}) * c (inj {0}) (inj {1} + inj 1) * base {0} {1}",
+                       names_.n, k);
   }
   [[nodiscard]] std::string lower(const std::string& k) const {
-    return fmt::format("down (inj {0}) (inj {1}) * c (inj {0}) (inj {1}) * base {0} {1}", names_.n, k);
+    return fmt::format("down (inj {0}) (inj {1}) * c (inj {0}) (inj {1}) * base {0} {1}", names_.n,
+                       k);
   }
 
   void telescoping() {
@@ -146,12 +156,13 @@ class TelescopingText {
                                 names_.k);
     const std::string n = fmt::format("(inj {})", names_.n);
     const std::string k = fmt::format("(inj {})", names_.k);
-    out_ += fmt::format("Lemma telescoping ({0} {1} : Z) : {2}\n  ({3} =\n   {4} -\n   {5})%K.\nProof.\n"
-                        "  intros Hn Hk.\n{6}"
-                        "  transitivity ((weight {7} * ({8})) * base {0} {1})%K; [ring|].\n"
-                        "  rewrite (equality {7} {9}). ring.\nQed.\n\n",
-                        names_.n, names_.k, region_, weighted_terms(names_.k), upper(names_.k),
-                        lower(names_.k), rewrites, n, combination(n, k), k);
+    out_ += fmt::format(
+        "Lemma telescoping ({0} {1} : Z) : {2}\n  ({3} =\n   {4} -\n   {5})%K.\nProof.\n"
+        "  intros Hn Hk.\n{6}"
+        "  transitivity ((weight {7} * ({8})) * base {0} {1})%K; [ring|].\n"
+        "  rewrite (equality {7} {9}). ring.\nQed.\n\n",
+        names_.n, names_.k, region_, weighted_terms(names_.k), upper(names_.k), lower(names_.k),
+        rewrites, n, combination(n, k), k);
   }
 
   void summed() {
@@ -161,26 +172,31 @@ class TelescopingText {
       for (std::size_t j = 0; j < t_.shifts[i].size(); ++j)
         f += fmt::format("{}F{} {}%Z {}", f.empty() ? "" : " + ", j + 1,
                          shifted(names_.n, static_cast<unsigned>(i)), names_.k);
-      sums += fmt::format("{0}weight (inj {1}) * a{2} (inj {1}) * sum ({3}) ({4}) (fun {5} : Z => {6})",
-                          sums.empty() ? "" : " + ", names_.n, i, low_, high_, names_.k, f);
+      sums +=
+          fmt::format("{0}weight (inj {1}) * a{2} (inj {1}) * sum ({3}) ({4}) (fun {5} : Z => {6})",
+                      sums.empty() ? "" : " + ", names_.n, i, low_, high_, names_.k, f);
     }
     const std::string shift_case =
         t_.index_shift
-            ? fmt::format("transitivity (c (inj {0}) (inj {1} + inj 1) * (down (inj {0}) (inj {1} + inj 1) "
-                          "* base {0} ({1} + 1)%Z))%K; [rewrite (inj_add K {1} 1); ring|].\n"
-                          "    rewrite (index_shift {0} {1}) by lia. ring.",
-                          names_.n, names_.k)
+            ? fmt::format(
+                  "transitivity (c (inj {0}) (inj {1} + inj 1) * (down (inj {0}) (inj {1} + inj 1) "
+                  "* base {0} ({1} + 1)%Z))%K; [rewrite (inj_add K {1} 1); ring|].\n"
+                  "    rewrite (index_shift {0} {1}) by lia. ring.",
+                  names_.n, names_.k)
             : std::string("unfold c; ring.");
     out_ += fmt::format(
-        "Lemma summed ({0} : Z) : {1} <= {0} ->\n  ({2} =\n   {3} -\n   {4})%K.\nProof.\n  intros Hn.\n"
+        "Lemma summed ({0} : Z) : {1} <= {0} ->\n  ({2} =\n   {3} -\n   {4})%K.\nProof.\n  intros "
+        "Hn.\n"
         "  rewrite !sum_scal, ?sum_add.\n"
-        "  refine (sum_tele_ends K ({5}) ({6}) _\n    (fun {7} : Z => {8})%K\n    (fun {7} : Z => {9})%K\n"
+        "  refine (sum_tele_ends K ({5}) ({6}) _\n    (fun {7} : Z => {8})%K\n    (fun {7} : Z => "
+        "{9})%K\n"
         "    ({5}) ({6}) _ _ _ _ _).\n"
         "  - lia.\n  - reflexivity.\n  - reflexivity.\n"
         "  - intros {7} Hk. exact (telescoping {0} {7} Hn Hk).\n"
         "  - intros {7} Hk. {10}\nQed.\n\n",
         names_.n, bracketed(std::to_string(proof_.threshold)), sums, upper(bracketed(high_)),
-        lower(bracketed(low_)), low_, high_, names_.k, upper(names_.k), lower(names_.k), shift_case);
+        lower(bracketed(low_)), low_, high_, names_.k, upper(names_.k), lower(names_.k),
+        shift_case);
   }
 
   const proof::Proof& proof_;
@@ -196,8 +212,6 @@ class TelescopingText {
 
 }  // namespace
 
-std::string telescoping_section(const proof::Proof& proof) {
-  return TelescopingText(proof).run();
-}
+std::string telescoping_section(const proof::Proof& proof) { return TelescopingText(proof).run(); }
 
 }  // namespace sumwright::writers::coq

@@ -1,5 +1,5 @@
-// Polynomials, atoms and products as Coq text. Invariant: printing is syntactic, so that substituting a
-// symbol's text gives exactly the term that unfolding a definition gives.
+// Polynomials, atoms and products as Coq text. Invariant: printing is syntactic, so that
+// substituting a symbol's text gives exactly the term that unfolding a definition gives.
 
 #include "writers/coq_text.hpp"
 
@@ -21,20 +21,24 @@ namespace {
 /// Everything a generated file mentions, and Coq's own words.
 const std::set<std::string>& reserved() {
   static const std::set<std::string> words = {
-      "K",      "inj",      "pow",      "zpow",    "sum",     "product", "factorial", "rfactorial",
-      "rising", "falling",  "binomial", "ip",      "rip",     "gip",     "ap",        "gbinomial",
-      "Z",      "N",        "Q",        "R",       "nat",     "Prop",    "Set",       "Type",
-      "SProp",  "fun",      "forall",   "exists",  "match",   "with",    "end",       "let",
-      "in",     "if",       "then",     "else",    "as",      "at",      "return",    "fix",
-      "cofix",  "for",      "where",    "mod",     "IF",      "using",   "by",        "of",
-      "S",      "O",        "eq",       "or",      "and",     "not",     "True",      "False",
-      "list",   "nil",      "cons",     "last",    "length",  "rec",     "base",      "term",
-      "c",      "up",       "down",     "weight",  "s",       "t",       "equality",  "index",
-      "field",  "ring",     "lia",      "claim",   "carrier", "char0_field", "leading", "initial",
-      "conclusion", "remainder", "summand", "left_side", "right_side", "x_", "I", "id", "I_",
-      "kzero", "kone", "kadd", "kmul", "ksub", "kopp", "kdiv", "kinv", "left", "right", "values",
-      "telescoping", "pq", "pqf", "comb", "positive", "nonneg", "u", "v", "w", "exists2", "Definition",
-      "Theorem", "Lemma", "Proof", "Qed", "Section", "End", "Variable", "Hypothesis", "Let"};
+      "K",           "inj",        "pow",         "zpow",       "sum",       "product", "factorial",
+      "rfactorial",  "rising",     "falling",     "binomial",   "ip",        "rip",     "gip",
+      "ap",          "gbinomial",  "Z",           "N",          "Q",         "R",       "nat",
+      "Prop",        "Set",        "Type",        "SProp",      "fun",       "forall",  "exists",
+      "match",       "with",       "end",         "let",        "in",        "if",      "then",
+      "else",        "as",         "at",          "return",     "fix",       "cofix",   "for",
+      "where",       "mod",        "IF",          "using",      "by",        "of",      "S",
+      "O",           "eq",         "or",          "and",        "not",       "True",    "False",
+      "list",        "nil",        "cons",        "last",       "length",    "rec",     "base",
+      "term",        "c",          "up",          "down",       "weight",    "s",       "t",
+      "equality",    "index",      "field",       "ring",       "lia",       "claim",   "carrier",
+      "char0_field", "leading",    "initial",     "conclusion", "remainder", "summand", "left_side",
+      "right_side",  "x_",         "I",           "id",         "I_",        "kzero",   "kone",
+      "kadd",        "kmul",       "ksub",        "kopp",       "kdiv",      "kinv",    "left",
+      "right",       "values",     "telescoping", "total",      "z",         "pq",      "pqf",
+      "comb",        "positive",   "nonneg",      "u",          "v",         "w",       "exists2",
+      "Definition",  "Theorem",    "Lemma",       "Proof",      "Qed",       "Section", "End",
+      "Variable",    "Hypothesis", "Let"};
   return words;
 }
 
@@ -148,8 +152,8 @@ std::string polynomial(const Polynomial& p, const Scope& scope) {
 
 std::string rational(const mpq_class& value) {
   const mpz_class& num = value.get_num();
-  const std::string above = num < 0 ? fmt::format("inj ({})", num.get_str())
-                                    : fmt::format("inj {}", num.get_str());
+  const std::string above =
+      num < 0 ? fmt::format("inj ({})", num.get_str()) : fmt::format("inj {}", num.get_str());
   if (value.get_den() == 1) return above;
   return fmt::format("{} / inj {}", above, value.get_den().get_str());
 }
@@ -184,15 +188,19 @@ std::string power_base(const Polynomial& base, const Scope& scope) {
 std::string atom(const Atom& a, const Scope& scope) {
   const std::string at = bracketed(affine(a.argument, scope));
   switch (a.kind) {
-    case AtomKind::factorial: return "factorial " + at;
-    case AtomKind::reciprocal_factorial: return "rfactorial " + at;
-    case AtomKind::power: return fmt::format("zpow {} {}", power_base(a.base, scope), at);
+    case AtomKind::factorial:
+      return "factorial " + at;
+    case AtomKind::reciprocal_factorial:
+      return "rfactorial " + at;
+    case AtomKind::power:
+      return fmt::format("zpow {} {}", power_base(a.base, scope), at);
     case AtomKind::interval_product:
     case AtomKind::reciprocal_interval_product:
       return fmt::format("{} {} {} {}", a.kind == AtomKind::interval_product ? "ip" : "rip",
                          interval_base(a, scope), bracketed(affine(a.low, scope)),
                          bracketed(affine(a.high, scope)));
-    case AtomKind::reciprocal: return fmt::format("(/ ({}))", polynomial(a.base, scope));
+    case AtomKind::reciprocal:
+      return fmt::format("(/ ({}))", polynomial(a.base, scope));
   }
   return "";
 }

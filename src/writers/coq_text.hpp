@@ -15,7 +15,8 @@ struct Scope {
   std::vector<std::string> field;
 };
 
-/// Symbols under names that collide with nothing in a generated file; running and index as Z variables.
+/// Symbols under names that collide with nothing in a generated file; running and index as Z
+/// variables.
 [[nodiscard]] Scope plain_scope(const proof::Proof& proof);
 /// The running variable and the index as variables of type K (for polynomial definitions).
 [[nodiscard]] Scope polynomial_scope(const proof::Proof& proof);
@@ -29,8 +30,10 @@ struct Scope {
 [[nodiscard]] std::string bracketed(const std::string& text);
 
 [[nodiscard]] std::string affine(const proof::Affine& form, const Scope& scope);
-/// A polynomial in integer symbols as a term of type Z, each symbol replaced by `shifted` text if given.
-[[nodiscard]] std::string integer_polynomial(const proof::Polynomial& polynomial, const Scope& scope);
+/// A polynomial in integer symbols as a term of type Z, each symbol replaced by `shifted` text if
+/// given.
+[[nodiscard]] std::string integer_polynomial(const proof::Polynomial& polynomial,
+                                             const Scope& scope);
 [[nodiscard]] std::string polynomial(const proof::Polynomial& polynomial, const Scope& scope);
 [[nodiscard]] std::string rational(const mpq_class& value);
 [[nodiscard]] std::string factored(const proof::Factored& value, const Scope& scope);

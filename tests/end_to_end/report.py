@@ -40,7 +40,8 @@ class Report:
     def numbers(self, what, values, unit="s"):
         if values:
             median, worst = statistics.median(values), max(values)
-            self.say(f"   {what}: {len(values)}, median {median:.2f} {unit}, worst {worst:.2f} {unit}")
+            self.say(f"   {what}: {len(values)}, median {median:.2f} {unit}, "
+                     f"worst {worst:.2f} {unit}")
 
     def finish(self):
         """Prints the summary, failing names last; the exit status."""

@@ -3,7 +3,7 @@
 
     run.py --sumwright PROGRAM --work FOLDER [--steps a,b] [--only TEXT]
 
-Steps: exports, latex, coq, mutants, coqchk, false, speed.  The folder is emptied first; it must be
+Steps: exports, latex, coq, mutants, coqchk, replay, false, speed.  The folder is emptied first; it must be
 one that this program made, or not exist.  Environment: SUMWRIGHT_SEED and SUMWRIGHT_MUTANTS choose
 and multiply the mutated scripts; CI=true makes a missing tool a failure.
 """
@@ -21,10 +21,11 @@ from step_exports import exports
 from step_false_claims import false_claims
 from step_latex import latex
 from step_mutants import mutants
+from step_replay import replay
 from step_speed import speed
 from step_undecided import undecided
 
-STEPS = ("exports", "latex", "coq", "mutants", "coqchk", "false", "speed")
+STEPS = ("exports", "latex", "coq", "mutants", "coqchk", "replay", "false", "speed")
 MARK = "made-by-end-to-end-tests"
 
 
@@ -57,6 +58,8 @@ def run_steps(context, steps):
             mutants(context, folder, accepted)
         if "coqchk" in steps:
             coqchk(context, folder, accepted)
+    if "replay" in steps:
+        replay(context)
     if "false" in steps:
         false_claims(context)
         undecided(context)
@@ -79,7 +82,7 @@ def main():
     if set(steps) - set(STEPS):
         sys.exit(f"the steps are {', '.join(STEPS)}")
     claims = claims_in(options.root, "exemplars/*.toml", "tests/corpus/*/*.toml",
-                       "tests/end_to_end/names/*.toml")
+                       "tests/end_to_end/claims/*.toml")
     context = Context(
         sumwright=[os.path.abspath(options.sumwright)], work=emptied(options.work),
         claims=[c for c in claims if options.only in c.name],

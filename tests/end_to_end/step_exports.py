@@ -48,7 +48,8 @@ def environment(**changes):
 def other_locale():
     """A locale with its own sorting and decimal comma, if there is one; it need not exist."""
     done = run(["locale", "-a"])
-    wished = [name for name in done.stdout.split() if name.lower().startswith(("de_", "tr_", "fr_"))]
+    wished = [name for name in done.stdout.split()
+              if name.lower().startswith(("de_", "tr_", "fr_"))]
     return wished[0] if wished else "C.UTF-8"
 
 

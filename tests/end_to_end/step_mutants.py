@@ -17,12 +17,13 @@ def choose(context, accepted):
     chance.shuffle(order)
     each = max(1, -(-context.mutants // max(1, len(order))))
     chosen, unread = [], []
-    for export in order:
+    for place, export in enumerate(order):
         if len(chosen) >= context.mutants:
             break
         with open(export.script, encoding="utf-8") as stream:
             text = stream.read()
-        for mutate, most in ((polynomial_mutants, each), (statement_mutants, -(-each // 3))):
+        statements = -(-each // 2) if place % 2 == 0 else 0  # one for two polynomials
+        for mutate, most in ((polynomial_mutants, each), (statement_mutants, statements)):
             try:
                 chosen += [(export, mutant) for mutant in mutate(text, chance, most)]
             except NotPolynomial as problem:
@@ -70,7 +71,8 @@ def mutants(context, coq, accepted):
     in_parallel(one, list(enumerate(chosen)))
     for name, problem in unread[:5]:
         report.say(f"   not mutated: {name}: {problem}")
-    kinds = {kind: sum(1 for _, m in chosen if m.kind == kind) for kind in ("polynomial", "statement")}
+    kinds = {kind: sum(1 for _, mutant in chosen if mutant.kind == kind)
+             for kind in ("polynomial", "statement")}
     report.say(f"   seed {context.seed}: {kinds['polynomial']} changed polynomials, "
                f"{kinds['statement']} changed statements, {sum(refused)} refused by coqc; "
                f"{len(unread)} times nothing to change was found")

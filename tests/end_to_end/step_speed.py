@@ -1,4 +1,4 @@
-"""`check` of a claim with evidence is a matter of moments, and `find --write` gives such a claim."""
+"""`check` of a claim with evidence is a matter of moments; `find --write` gives such a claim."""
 
 import os
 

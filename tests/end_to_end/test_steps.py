@@ -6,13 +6,13 @@ writes from a claim file.
 """
 
 import io
+import json
 import os
 import shutil
 import stat
 import sys
 import tempfile
 import unittest
-import json
 from unittest import mock
 
 HERE = os.path.dirname(os.path.abspath(__file__))
@@ -240,7 +240,7 @@ class Coq(Steps):
               f"Proof. destruct shortcut. Qed.\n{rest}")
         world.change("Indefinite", "coq/Claim.v", "factorial (n + 1) - inj 1)%K :> K",
                      "factorial (n + 1) - inj 2)%K :> K")
-        world.change("Denominator", "coq/Statement.v", "(** The vocabulary", "(** The new vocabulary")
+        world.change("Denominator", "coq/Statement.v", "The vocabulary", "The new vocabulary")
         world.change("Recurrence", "coq/Claim.v", "Theorem claim :", "Theorem another :")
         write(world.place("Positivity", "coq/Claim.v"),
               "Definition the_statement : Prop := True.\n"

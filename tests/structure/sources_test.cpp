@@ -172,7 +172,8 @@ TEST(Sources, PlainText) {
           EXPECT_EQ(line.find(text), std::string::npos) << path << ": " << line;
         }
         EXPECT_EQ(line.find('\t'), std::string::npos) << path << ": " << line;
-        EXPECT_FALSE(line.ends_with(" ")) << path << ": " << line;
+        // In obligation files an empty line of the claim is a bar and a blank.
+        EXPECT_FALSE(line.ends_with(" ") && line != "| ") << path << ": " << line;
       }
     }
   }

@@ -242,7 +242,6 @@ class RandomTerms {
     const char* const bases[] = {"x", "1", "0"};
     const long which = pick(0, 2);
     const term::Affine low = which == 2 ? symbolic_form(2) : form(2);
-    const term::Affine low = which == 2 ? symbolic_form(2) : form(2);
     term::Affine high = form(2);
     // Literal lengths are never negative, and of the base 0 there are no others.
     if (which == 2 || (high - low).is_constant()) high = low + pick(0, 3);
