@@ -88,7 +88,7 @@ class Assembler {
     const std::string key = fmt::format("{}|{}|{}", static_cast<int>(kind), text, region);
     const auto known = ids_.find(key);
     if (known != ids_.end()) return known->second;
-    const std::string id = fmt::format("c{}", proof_.conditions.size() + 1);
+    std::string id = fmt::format("c{}", proof_.conditions.size() + 1);
     ids_[key] = id;
     proof_.conditions.push_back({id, kind, text, region, settled, method});
     return id;

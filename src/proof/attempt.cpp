@@ -4,6 +4,8 @@
 
 #include <fmt/format.h>
 
+#include <stdexcept>
+
 #include "proof/argument.hpp"
 #include "term/simplify.hpp"
 #include "term/text.hpp"
@@ -234,7 +236,15 @@ class Attempter {
 
 Attempt attempt(const Terms& terms, const EvidenceDraft& evidence, bool as_equality,
                 const Deadline& deadline) {
-  return Attempter(terms, evidence, as_equality, deadline).run();
+  try {
+    return Attempter(terms, evidence, as_equality, deadline).run();
+  } catch (const std::domain_error&) {
+    Attempt out;
+    out.draft.evidence = evidence;
+    out.why = "a factor vanishes identically at a boundary point";
+    out.rule = "R3: interval products that run through 0";
+    return out;
+  }
 }
 
 }  // namespace sumwright::proof::building

@@ -6,6 +6,8 @@
 
 #include <fmt/format.h>
 
+#include <stdexcept>
+
 #include "proof/argument.hpp"
 #include "proof/evidence.hpp"
 #include "proof/statement.hpp"
@@ -173,7 +175,7 @@ class Builder {
     if (reduced.certificate) reduced.certificate = *reduced.certificate / RationalFunction(common);
     const Attempt tried = attempt(*terms_, reduced, true, options_.deadline);
     if (tried.outcome != Attempt::Outcome::stuck) return report(tried, true);
-    const Proof found = search_and_prove(true);
+    Proof found = search_and_prove(true);
     if (found.verdict != Verdict::undecided) return found;
     return report(tried, true);
   }
@@ -188,7 +190,7 @@ class Builder {
         terms_->range ? shift_quotients(*terms_) : pointwise_quotients();
     std::optional<Attempt> first;
     if (!terms_->range) return pointwise(equality);
-    for (EvidenceDraft& evidence : fallback_last(quotients, equality)) {
+    for (EvidenceDraft& evidence : candidates(quotients)) {
       const Attempt tried = try_found(evidence, equality);
       if (tried.outcome == Attempt::Outcome::complete) return report(tried, equality);
       if (!first) first = tried;
@@ -207,7 +209,7 @@ class Builder {
   /// Candidates, best first: the telescoper of least order; for summands free of n the difference
   /// S(n+1) - S(n), whose certificate is 0 and whose leading coefficient never vanishes; the next
   /// order.
-  std::vector<EvidenceDraft> fallback_last(const search::ShiftQuotients& quotients, bool equality) {
+  std::vector<EvidenceDraft> candidates(const search::ShiftQuotients& quotients) {
     stage("search");
     const algebra::RingPtr& ring = terms_->setting.ring;
     std::vector<EvidenceDraft> out;
@@ -227,7 +229,6 @@ class Builder {
                      RationalFunction(ring, mpq_class(0)),
                      std::nullopt,
                      false});
-    (void)equality;
     return out;
   }
 
@@ -238,7 +239,7 @@ class Builder {
   }
 
   /// A found recurrence becomes the claim: its right side is what the ends give.
-  Attempt question_attempt(EvidenceDraft evidence) {
+  Attempt question_attempt(const EvidenceDraft& evidence) {
     // A first pass tells the right side; it fails at the ends when that is not 0.
     Attempt probe = attempt(*terms_, evidence, false, options_.deadline);
     if (probe.outcome == Attempt::Outcome::complete && probe.draft.right_side_text == "0") {
@@ -257,7 +258,7 @@ class Builder {
       const Poly weight = probe.draft.telescoping->weight.numerator(ring);
       for (Poly& a : evidence.coefficients) a *= weight;
       evidence.certificate = *evidence.certificate * RationalFunction(weight);
-      const Attempt again = attempt(*terms_, evidence, false, options_.deadline);
+      Attempt again = attempt(*terms_, evidence, false, options_.deadline);
       if (again.draft.right_side_text == "0") return again;
       return conclude_question(evidence, again.draft.right_side_text);
     }
@@ -390,7 +391,15 @@ class Builder {
 }  // namespace
 
 Proof build(std::shared_ptr<const claim::Claim> claim, const BuildOptions& options) {
-  return Builder(std::move(claim), options).run();
+  Proof undecided;
+  undecided.claim = claim;
+  try {
+    return Builder(std::move(claim), options).run();
+  } catch (const std::overflow_error&) {
+    undecided.reason = "an argument has a number that is too large";
+    undecided.would_settle = "numbers below 2^63 in arguments, bounds and exponents";
+  }
+  return undecided;
 }
 
 }  // namespace sumwright::proof

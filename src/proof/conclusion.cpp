@@ -111,7 +111,7 @@ class EndTerms {
 class LiteralRange {
  public:
   LiteralRange(const InitialContext& context, long at, std::string& why)
-      : context_(context), setting_(context.setting), why_(why) {
+      : setting_(context.setting), why_(why) {
     const Affine n = Affine::of(setting_.size(), at);
     for (const Product& f : context.summand)
       summand_.push_back(term::substitute(setting_.ring, f, term::running, n));
@@ -199,7 +199,6 @@ class LiteralRange {
     return out;
   }
 
-  const InitialContext& context_;
   const Setting& setting_;
   std::string& why_;
   std::vector<Product> summand_;

@@ -27,7 +27,7 @@ constexpr long farthest_absorption = 64;
 /// in place.
 class Absorber {
  public:
-  Absorber(const RingPtr& ring, Product& base) : ring_(ring), base_(base) {}
+  explicit Absorber(Product& base) : base_(base) {}
 
   bool absorb(const Polynomial& f) {
     Affine form;
@@ -107,7 +107,8 @@ class Absorber {
   }
 
   bool shorten_interval(const Polynomial& f) {
-    for (const auto& [atom, e] : base_.atoms) {
+    for (const auto& entry : base_.atoms) {
+      const Atom& atom = entry.first;
       const bool reciprocal = atom.kind == AtomKind::reciprocal_interval_product;
       if (atom.kind != AtomKind::interval_product && !reciprocal) continue;
       for (long t = 0; t < farthest_absorption; ++t) {
@@ -143,7 +144,6 @@ class Absorber {
     return false;
   }
 
-  const RingPtr& ring_;
   Product& base_;
 };
 
@@ -160,8 +160,7 @@ class Drafter {
   Drafter(const Setting& setting, const std::vector<Product>& summand,
           const std::vector<Polynomial>& coefficients, const RationalFunction& certificate,
           std::string& why)
-      : setting_(setting),
-        ring_(setting.ring),
+      : ring_(setting.ring),
         summand_(summand),
         certificate_(certificate),
         why_(why),
@@ -222,10 +221,9 @@ class Drafter {
           factor = &p;
           break;
         }
-      if (factor == nullptr) return absorb_free_factors();
+      if (factor == nullptr) return true;  // the rest goes into the weight
       const Polynomial f = *factor;
-      if (!Absorber(ring_, out_.base).absorb(f))
-        out_.base.multiply(term::reciprocal_atom(ring_, f));
+      if (!Absorber(out_.base).absorb(f)) out_.base.multiply(term::reciprocal_atom(ring_, f));
     }
     why_ = "the denominator of the certificate is not absorbed by the base term";
     return false;
@@ -304,7 +302,6 @@ class Drafter {
     out_.residue = (left - right).numerator();
   }
 
-  const Setting& setting_;
   const RingPtr& ring_;
   const std::vector<Product>& summand_;
   const RationalFunction& certificate_;

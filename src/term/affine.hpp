@@ -30,7 +30,7 @@ struct Affine {
   [[nodiscard]] Affine shift(std::size_t position, long by) const;
   [[nodiscard]] algebra::Polynomial polynomial(const algebra::RingPtr& ring) const;
 
-  auto operator<=>(const Affine&) const = default;
+  auto operator<=>(const Affine&) const = default;  // NOLINT(modernize-use-nullptr): a false alarm
   bool operator==(const Affine&) const = default;
 };
 

@@ -81,9 +81,9 @@ void ClearedRecurrence::expand(Fraction& fraction, const Divisors& all) {
   fraction.divisors = all;
 }
 
-void ClearedRecurrence::times(Fraction& left, Fraction right) {
+void ClearedRecurrence::times(Fraction& left, const Fraction& right) {
   multiply(left.numerator, right.numerator);
-  for (auto& [text, divisor] : right.divisors) {
+  for (const auto& [text, divisor] : right.divisors) {
     const auto [place, is_new] = left.divisors.emplace(text, divisor);
     if (!is_new) place->second.power += divisor.power;
   }

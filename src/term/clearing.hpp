@@ -54,7 +54,7 @@ class ClearedRecurrence {
   [[nodiscard]] Fraction atom(const claim::Expression& node, bool reciprocal);
   static void join(Divisors& all, const Divisors& more);
   static void expand(Fraction& fraction, const Divisors& all);
-  static void times(Fraction& left, Fraction right);
+  static void times(Fraction& left, const Fraction& right);
   static void to_power(Fraction& fraction, const mpz_class& exponent, claim::Place place);
 
   std::vector<claim::ExpressionPtr> coefficients_;

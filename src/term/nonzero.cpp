@@ -110,11 +110,24 @@ std::optional<NonzeroFactor> excluded(const Setting& setting, const Facts& facts
   return std::nullopt;
 }
 
+/// A polynomial as written: what cancels in a quotient may not be read off an assumption.
+bool divides(const claim::Expression& e) {
+  if (e.operation == claim::Operation::divide)
+    return e.children[1]->operation != claim::Operation::literal;
+  if (e.operation == claim::Operation::power &&
+      e.children[1]->operation == claim::Operation::negate)
+    return true;
+  for (const claim::ExpressionPtr& c : e.children)
+    if (divides(*c)) return true;
+  return false;
+}
+
 /// An assumption u != v with u - v a constant multiple of p.
 std::optional<NonzeroFactor> assumed(const Setting& setting, const Polynomial& p) {
   const auto& assumptions = setting.claim->assumptions;
   for (std::size_t i = 0; i < assumptions.size(); ++i) {
     if (assumptions[i].comparison != claim::Comparison::not_equal) continue;
+    if (divides(*assumptions[i].left) || divides(*assumptions[i].right)) continue;
     const auto left = to_rational_function(setting, *assumptions[i].left);
     const auto right = to_rational_function(setting, *assumptions[i].right);
     if (!left || !right) continue;

@@ -8,6 +8,7 @@
 #include <set>
 
 #include "claim/affine.hpp"
+#include "term/conversion.hpp"
 
 namespace sumwright::term {
 
@@ -61,7 +62,15 @@ long checked_long(const Setting& setting, const mpz_class& value, claim::Place p
 void refuse_contradiction(const Setting& setting) {
   const claim::Claim& claim = *setting.claim;
   for (const claim::Assumption& a : claim.assumptions) {
-    if (a.comparison != Comparison::not_equal || !a.over_integers) continue;
+    if (a.comparison != Comparison::not_equal) continue;
+    if (!a.over_integers) {
+      const auto left = to_rational_function(setting, *a.left);
+      const auto right = to_rational_function(setting, *a.right);
+      if (left && right && *left == *right)
+        throw claim::InputError(*claim.source, a.place, "no values satisfy this condition",
+                                "a claim about nothing is refused");
+      continue;
+    }
     const Affine difference = to_affine(setting, *a.left) - to_affine(setting, *a.right);
     if (setting.from(checked_long(setting, claim.from, {})).implies_zero(difference))
       throw claim::InputError(*claim.source, a.place, "no values satisfy this condition",
@@ -140,7 +149,7 @@ Facts Setting::from(long least) const {
   return hypotheses.with(Affine::symbol(size(), running) - least);
 }
 
-Setting make_setting(std::shared_ptr<const claim::Claim> claim) {
+Setting make_setting(const std::shared_ptr<const claim::Claim>& claim) {
   using proof::SymbolKind;
   std::vector<proof::Symbol> symbols{{claim->running, SymbolKind::running}};
   const bool has_index = !claim->sum.over.empty();

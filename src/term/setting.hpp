@@ -37,7 +37,7 @@ struct Setting {
 /// Builds the setting of a single-sum claim (at most one index; the running variable of `other_sum`
 /// and its index are not part of it). Throws claim::InputError when the hypotheses are
 /// contradictory.
-[[nodiscard]] Setting make_setting(std::shared_ptr<const claim::Claim> claim);
+[[nodiscard]] Setting make_setting(const std::shared_ptr<const claim::Claim>& claim);
 
 /// An expression known to be integer-affine in integer symbols.
 /// Throws claim::InputError (with the place) when it is not.

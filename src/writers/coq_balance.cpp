@@ -13,6 +13,13 @@ using Origin = proof::BalanceTerm::Origin;
 
 namespace {
 
+/// The balance's id as an identifier: a minus sign becomes "m".
+std::string identifier(std::string id) {
+  for (char& ch : id)
+    if (ch == '-') ch = 'm';
+  return id;
+}
+
 class BalanceText {
  public:
   BalanceText(const proof::Proof& proof, const proof::Balance& balance, std::string region)
@@ -175,9 +182,10 @@ class BalanceText {
                            definitions(t), g.base.id);
       script += instance_tactics(proof_, *t.instance, unfolded(t), {}, scope_);
     }
-    out_ += fmt::format("Lemma {}_term_{} {}: {}\n  ({} = {})%K.\nProof.\n{}Qed.\n\n", balance_.id,
-                        i + 1, literal_ ? std::string() : fmt::format("({} : Z) ", names_.n),
-                        region_, text, right, script);
+    out_ += fmt::format("Lemma {}_term_{} {}: {}\n  ({} = {})%K.\nProof.\n{}Qed.\n\n",
+                        identifier(balance_.id), i + 1,
+                        literal_ ? std::string() : fmt::format("({} : Z) ", names_.n), region_,
+                        text, right, script);
   }
 
   std::string zero_script(const proof::BalanceTerm& t) const {
@@ -209,7 +217,7 @@ std::string balance_rewrites(const proof::Proof&, const proof::Balance& balance,
                              const std::string& arguments) {
   std::string out;
   for (std::size_t i = 0; i < balance.terms.size(); ++i)
-    out += fmt::format("  rewrite ({}_term_{}{}).\n", balance.id, i + 1, arguments);
+    out += fmt::format("  rewrite ({}_term_{}{}).\n", identifier(balance.id), i + 1, arguments);
   return out;
 }
 

@@ -52,7 +52,7 @@ class ConclusionText : private SectionText {
         "Hn.\n{3}"
         "  assert (total : ({4} = inj 0)%K).\n  {{\n{5}  inj_norm. {6}. }}\n"
         "  symmetry. apply (eq_of_sub K). transitivity ({4})%K; [unfold remainder; ring|].\n"
-        "  rewrite total. exact (inj_0 K).\nQed.\n\n",
+        "  exact (eq_trans total (inj_0 K)).\nQed.\n\n",
         names_.n, beyond_, goal, rewrites, total,
         balance_rewrites(proof_, b, " " + names_.n + " Hn"), balance_closing(b));
   }
@@ -106,7 +106,7 @@ class ConclusionText : private SectionText {
         "Lemma {0} : ({1} = right_side {2})%K.\nProof.\n{3}"
         "  assert (total : ({4} = inj 0)%K).\n  {{\n{5}  inj_norm. {6}. }}\n"
         "  apply (eq_of_sub K). transitivity ({4})%K; [ring|].\n"
-        "  rewrite total. exact (inj_0 K).\nQed.\n\n",
+        "  exact (eq_trans total (inj_0 K)).\nQed.\n\n",
         value_name(v.at), statement, at, rewrites, total, balance_rewrites(proof_, b, ""),
         balance_closing(b));
   }
@@ -282,10 +282,13 @@ class ConclusionText : private SectionText {
     std::string unfold;
     for (unsigned i = 0; i < coefficients_; ++i)
       unfold += fmt::format("{}a{}", i == 0 ? "" : ", ", i);
+    std::string shifts;
+    for (unsigned i = 1; i < coefficients_; ++i)
+      shifts += fmt::format("change ({} + {}) with ({}); ", v, i, v + static_cast<long>(i));
     return fmt::format(
-        "  destruct (Z.eq_dec {0} {1}) as [->|]; [rewrite <- {2}; unfold {3}; cbn [Z.add]; "
-        "inj_norm; ring|].\n",
-        names_.n, bracketed(std::to_string(v)), value_name(v), unfold);
+        "  destruct (Z.eq_dec {0} {1}) as [->|]; [{4}rewrite <- {2}; unfold {3}; inj_norm; "
+        "ring|].\n",
+        names_.n, bracketed(std::to_string(v)), value_name(v), unfold, shifts);
   }
 };
 

@@ -244,7 +244,6 @@ class ConversionText {
     }
     const std::string by = " by first [" + side_conditions(l) + "].\n";
     std::string out;
-    std::string current = written;
     if (!below.empty()) {
       proof::Affine zero = exponent;
       for (long& c : zero.coefficients) c = 0;
@@ -290,7 +289,7 @@ class ConversionText {
   // ---------------------------------------------------------------- denominators
 
   [[nodiscard]] std::string divisor_text(const proof::Denominator& d) const {
-    const std::string v = field_text(proof_, *d.expression);
+    std::string v = field_text(proof_, *d.expression);
     if (d.node->operation == Operation::power && d.expression == d.node->children[0]) {
       const auto exponent = claim::as_literal(*d.node->children[1]);
       return fmt::format("({} ^ {})", v, mpz_class(abs(*exponent)).get_str());
@@ -359,6 +358,8 @@ class ConversionText {
     const proof::Denominator& d = c_.denominators[i];
     const bool quotient =
         d.node->operation == Operation::divide && d.expression == d.node->children[1];
+    // An inverse that is its own atom needs no rewriting.
+    if (!quotient && bare("/ " + divisor_text(d)) == bare(product(d.reciprocal, scope_))) return "";
     const std::string law = quotient ? "divide_by" : "invert_by";
     return fmt::format("  rewrite {}({} K {}%K ({})%K ({}_denominator_{} {} {})).\n",
                        quotient ? "!" : "", law, divisor_text(d), product(d.reciprocal, scope_),
@@ -392,7 +393,8 @@ class ConversionText {
     std::string text = fmt::format("{} * {}", rational(d.as_product.coefficient.constant),
                                    rational(d.reciprocal.coefficient.constant));
     bool powers = false;
-    for (const auto& [a, e] : d.reciprocal.atoms) {
+    for (const auto& entry : d.reciprocal.atoms) {
+      const proof::Atom& a = entry.first;
       if (a.kind != AtomKind::power || !is_constant(a.argument) || !is_constant(a.base)) continue;
       const bool by_unit = std::any_of(d.units.begin(), d.units.end(), [&](const proof::Unit& u) {
         return u.right.kind == AtomKind::power && atom(u.right, scope_) == atom(a, scope_);

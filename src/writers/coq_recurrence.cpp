@@ -104,7 +104,7 @@ class RecurrenceText : private SectionText {
 
   /// The author's bound with n shifted, as text.
   [[nodiscard]] std::string at_shift(const claim::Expression& bound, unsigned by) const {
-    const std::string text = integer_text(proof_, bound);
+    std::string text = integer_text(proof_, bound);
     if (by == 0) return text;
     return replace_word(text, names_.n, shifted(names_.n, by));
   }

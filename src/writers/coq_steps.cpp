@@ -219,7 +219,8 @@ class InstanceTactics {
       fraction_ = fraction_ || has_fraction(s.factor) ||
                   s.from.kind == AtomKind::reciprocal_factorial ||
                   s.from.kind == AtomKind::reciprocal_interval_product ||
-                  s.from.kind == AtomKind::reciprocal;
+                  s.from.kind == AtomKind::reciprocal ||
+                  (s.from.kind == AtomKind::power && s.from.argument.constant < 0);
       Tracker& side = s.side == AtomStep::Side::left ? left_ : right_;
       const std::string text = atom(s.from, scope_);
       side.atoms.erase(text);

@@ -11,7 +11,7 @@ from dataclasses import dataclass
 from fractions import Fraction
 
 TOKEN = re.compile(r"\s*(?:(\d+)|([A-Za-z_][A-Za-z0-9_']*)|(%[KZ])|(<>|[-+*/^()=]))")
-DEFINITION = re.compile(r"^\s*Definition\s+(\w+)((?:\s*\([\w\s]+:\s*K\s*\))*)\s*:\s*(?:carrier\s+)?K"
+DEFINITION = re.compile(r"^\s*Definition\s+(\w+)((?:\s*\([\w\s]+:\s*K\s*\))*)\s*:\s*K"
                         r"\s*:=\s*(.*?)\.(?=\s|$)", re.M | re.S)
 EQUALITY = re.compile(r"^\s*Lemma\s+(equality\w*)((?:\s*\([\w\s]+:\s*K\s*\))*)\s*:"
                       r"\s*(.*?)\.\s*Proof", re.M | re.S)

@@ -3,9 +3,9 @@
 
     run.py --sumwright PROGRAM --work FOLDER [--steps a,b] [--only TEXT]
 
-Steps: exports, latex, coq, mutants, coqchk, replay, false, speed.  The folder is emptied first; it must be
-one that this program made, or not exist.  Environment: SUMWRIGHT_SEED and SUMWRIGHT_MUTANTS choose
-and multiply the mutated scripts; CI=true makes a missing tool a failure.
+Steps: exports, latex, coq, mutants, coqchk, replay, false, speed.  The folder is emptied first; it
+must be one that this program made, or not exist.  Environment: SUMWRIGHT_SEED and SUMWRIGHT_MUTANTS
+choose and multiply the mutated scripts; CI=true makes a missing tool a failure.
 """
 
 import argparse
@@ -14,16 +14,18 @@ import shutil
 import sys
 import time
 
-from claims import LIBRARY, ROOT, Context, claims_in
-from report import Report
-from step_coq import coq, coqchk
-from step_exports import exports
-from step_false_claims import false_claims
-from step_latex import latex
-from step_mutants import mutants
-from step_replay import replay
-from step_speed import speed
-from step_undecided import undecided
+sys.dont_write_bytecode = True
+
+from claims import LIBRARY, ROOT, Context, claims_in  # noqa: E402
+from report import Report  # noqa: E402
+from step_coq import coq, coqchk  # noqa: E402
+from step_exports import exports  # noqa: E402
+from step_false_claims import false_claims  # noqa: E402
+from step_latex import latex  # noqa: E402
+from step_mutants import mutants  # noqa: E402
+from step_replay import replay  # noqa: E402
+from step_speed import speed  # noqa: E402
+from step_undecided import undecided  # noqa: E402
 
 STEPS = ("exports", "latex", "coq", "mutants", "coqchk", "replay", "false", "speed")
 MARK = "made-by-end-to-end-tests"

@@ -18,6 +18,7 @@ from unittest import mock
 HERE = os.path.dirname(os.path.abspath(__file__))
 sys.path.insert(0, HERE)
 
+sys.dont_write_bytecode = True
 import run  # noqa: E402
 from claims import LIBRARY, Context, claims_in  # noqa: E402
 from report import Report  # noqa: E402

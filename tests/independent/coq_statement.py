@@ -18,8 +18,11 @@ import json
 import sys
 import tomllib
 
-from expressions import BadClaim, NoValue, parse
-from statement_translation import Names, Translation, comparison, has_denominator, within
+sys.dont_write_bytecode = True
+
+from expressions import BadClaim, NoValue, parse  # noqa: E402
+from statement_translation import (  # noqa: E402
+    Names, Translation, comparison, has_denominator, within)
 
 EXCLUDED_INTEGERS = {
     "integers": "{x} <> inj {z} :> K",

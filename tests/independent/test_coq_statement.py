@@ -20,6 +20,7 @@ HERE = os.path.dirname(os.path.abspath(__file__))
 ROOT = os.path.dirname(os.path.dirname(HERE))
 sys.path.insert(0, HERE)
 
+sys.dont_write_bytecode = True
 import coq_statement  # noqa: E402
 from expressions import BadClaim, parse  # noqa: E402
 from printed_recurrence import take_printed  # noqa: E402
