@@ -102,7 +102,7 @@ class CompiledClaim {
       add(left.outcome, row.coefficients[i]);
       if (valued && !left.outcome.is_number()) left.indices = term.indices;
     }
-    return {std::move(left), {std::move(row.right_side), {}}};
+    return {std::move(left), {row.right_side, {}}};
   }
 
   const Claim& claim_;

@@ -60,7 +60,7 @@ TEST(Ranges, EstablishedRecurrencesAreTrue) {
     return std::uniform_int_distribution<std::size_t>(0, size - 1)(random);
   };
   Count count;
-  for (unsigned long i = 0; i < testing::effort(500); ++i) {
+  for (unsigned long i = 0; i < testing::effort(300); ++i) {
     ClaimParts parts;
     parts.summand = kSummands[pick(std::size(kSummands))];
     parts.low = kLows[pick(std::size(kLows))];
@@ -89,7 +89,7 @@ TEST(Ranges, EstablishedRecurrencesAreTrue) {
   }
   std::cout << count.established << " established (" << count.values << " values), "
             << count.undecided << " undecided, " << count.refused << " refused\n";
-  EXPECT_GE(count.established, testing::effort(500) / 20);
+  EXPECT_GE(count.established, testing::effort(300) / 20);
 }
 
 }  // namespace
