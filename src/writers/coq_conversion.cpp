@@ -443,6 +443,13 @@ class ConversionText {
     for (std::size_t j = 0; j < c_.products.size(); ++j)
       unfold += fmt::format("{}{}{}", j == 0 ? "" : ", ", piece_, j + 1);
     const std::string merges = merge_rewrites(script);
+    for (std::size_t i = 0; i < c_.merges.size() && c_.products.size() == 1; ++i) {
+      const std::string pair = vanishing_merge(i, script);
+      if (pair.empty()) continue;
+      with_units = fmt::format("({}) * ({})", pair, with_units);
+      uses = fmt::format("rewrite power_unit{}. ", i + 1) + uses;
+      any = true;
+    }
     if (any)
       script += fmt::format("  transitivity ({})%K; [{}; {}inj_norm; ring|].\n  {}ring.\n",
                             with_units, unfold.substr(2), merges, uses);
@@ -469,6 +476,20 @@ class ConversionText {
       out += fmt::format("try rewrite merge{}; ", i + 1);
     }
     return out;
+  }
+
+  /// Powers whose exponents cancel leave the product: their product is 1.
+  std::string vanishing_merge(std::size_t i, std::string& script) const {
+    const proof::PowerMerge& m = c_.merges[i];
+    const proof::Affine total = combine(m.first, 1, m.second, 0);
+    if (!is_constant(total) || total.constant != 0) return "";
+    const std::string b = power_base(m.base, scope_);
+    const std::string pair = fmt::format("zpow {0} {1} * zpow {0} {2}", b, z(m.first), z(m.second));
+    script += fmt::format(
+        "  assert (power_unit{0} : ({1} = inj 1)%K) by (rewrite <- merge{0}; exact (zpow_0_r K "
+        "{2})).\n",
+        i + 1, pair, b);
+    return pair;
   }
 
   [[nodiscard]] bool inside_other(std::size_t i) const {

@@ -262,11 +262,21 @@ class InstanceTactics {
       const bool left = s.side == AtomStep::Side::left;
       if (!left) out_ += "  symmetry.\n";
       out_ += fmt::format("  transitivity ({})%K; [rewrite <- {}; inj_norm; {}|].\n", text, name,
-                          fraction_ ? "field" : "ring");
+                          fraction_ ? generalized() + "field" : std::string("ring"));
       if (!left) out_ += "  symmetry.\n";
     }
     side.move(from, to, s.multiplicity);
     side.factors.push_back(k_text(factored(s.factor, scope_)));
+  }
+
+  /// Reciprocals become variables, so that `field` asks for nothing about them.
+  [[nodiscard]] std::string generalized() const {
+    std::string out;
+    std::map<std::string, unsigned> all = left_.atoms;
+    all.insert(right_.atoms.begin(), right_.atoms.end());
+    for (const auto& [a, e] : all)
+      if (a.starts_with("(/ ")) out += fmt::format("generalize {}%K; intro; ", a);
+    return out;
   }
 
   void finish() {
@@ -275,9 +285,7 @@ class InstanceTactics {
       out_ += "  ring.\n";
       return;
     }
-    for (const auto& [a, e] : right_.atoms)
-      if (a.starts_with("(/ ")) out_ += fmt::format("  generalize {}%K; intro.\n", a);
-    out_ += "  field.\n";
+    out_ += "  " + generalized() + "field.\n";
   }
 
   const proof::Proof& proof_;

@@ -26,7 +26,8 @@ class Finished:
     def reason(self):
         """For a verdict: its reason in one line; else what it said."""
         match = (re.search(r"^reason\s+(.*(?:\n\s+.*)*)", self.stdout, re.M)
-                 or re.search(r'^  "reason": "(.*)",$', self.stdout, re.M))
+                 or re.search(r'^  "reason": "(.*)",$', self.stdout, re.M)
+                 or re.search(r"^sumwright: (.*(?:\n\s+.*)*)", self.stderr, re.M))
         return " ".join(match[1].split()) if match else self.text()
 
     def text(self, most=1500):

@@ -10,12 +10,15 @@ SECONDS = 120
 COMPLAINTS = re.compile(
     r"^(?:! .*|Overfull .*|Underfull .*|(?:LaTeX|Package|Class)(?: \S+)? Warning: .*"
     r"|pdfTeX warning.*|Missing character: .*)", re.M)
+# How full a page is depends on the paper around the appendices, hence \\raggedbottom.
 PAPER = r"""\documentclass{amsart}
 \usepackage{amsmath,amsthm}
+\raggedbottom
 \begin{document}
 \title{Several appendices}
 \author{A. Author}
 \maketitle
+\raggedbottom
 %s
 \end{document}
 """
@@ -73,4 +76,4 @@ def latex(context):
     report.start("appendices in one paper")
     if len(exports) >= 2:
         report.case("two", paper(context, [exports[0], exports[-1]], "two", r"\appendix"))
-        report.case(f"all {len(exports)}", paper(context, exports, "all", r"\raggedbottom"))
+        report.case(f"all {len(exports)}", paper(context, exports, "all"))
