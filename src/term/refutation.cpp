@@ -102,6 +102,7 @@ class CompiledClaim {
       add(left.outcome, row.coefficients[i]);
       if (valued && !left.outcome.is_number()) left.indices = term.indices;
     }
+    // NOLINTNEXTLINE(performance-move-const-arg): Side is returned by value
     return {std::move(left), {row.right_side, {}}};
   }
 

@@ -358,7 +358,7 @@ class ConversionText : private PowerLeafText {
     const proof::Affine total = combine(m.first, 1, m.second, 0);
     if (!is_constant(total) || total.constant != 0) return "";
     const std::string b = power_base(m.base, scope_);
-    const std::string pair = fmt::format("zpow {0} {1} * zpow {0} {2}", b, z(m.first), z(m.second));
+    std::string pair = fmt::format("zpow {0} {1} * zpow {0} {2}", b, z(m.first), z(m.second));
     script += fmt::format(
         "  assert (power_unit{0} : ({1} = inj 1)%K) by (rewrite <- merge{0}; exact (zpow_0_r K "
         "{2})).\n",
