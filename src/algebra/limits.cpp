@@ -9,7 +9,8 @@
 namespace sumwright::algebra {
 namespace {
 
-[[noreturn]] void throw_fault() {
+// FLINT asks for this spelling of noreturn.
+__attribute__((noreturn)) void throw_fault() {
   throw std::runtime_error("internal fault of the polynomial library");
 }
 

@@ -80,9 +80,20 @@ class Comparison {
     }
   }
 
+  /// The c of u^-c with a literal c, whose divisor is u^c; 1 for quotients.
+  static unsigned long written_exponent(const proof::Denominator& one) {
+    const claim::Expression& node = *one.node;
+    if (node.operation != claim::Operation::power || node.children[0] != one.expression) return 1;
+    const claim::Expression& exponent = *node.children[1];
+    if (exponent.operation != claim::Operation::negate) return 1;
+    return exponent.children[0]->value.get_ui();
+  }
+
   void denominators_at(const Point& point) {
     for (const proof::Denominator& one : conversion_.denominators) {
-      const Value written = evaluate(*one.expression, point);
+      const Value base = evaluate(*one.expression, point);
+      Value written = base;
+      for (unsigned long i = 1; i < written_exponent(one); ++i) written = times(written, base);
       const std::string text = "the denominator " + to_text(*one.expression);
       check_.expect_same(written, value_of(one.as_product, point), text, point);
       check_.expect_same(times(written, value_of(one.reciprocal, point)), Value::of(1),

@@ -150,7 +150,9 @@ void LatexDocument::closed_form() {
   }
   say(display(of_running('C', 0), closed, "", "."));
   Formula sum;
-  for (std::size_t i = 0; i < proof_.telescoping->coefficients.size(); ++i) {
+  // Without an index the two sides are compared directly.
+  const std::size_t count = proof_.telescoping ? proof_.telescoping->coefficients.size() : 1;
+  for (std::size_t i = 0; i < count; ++i) {
     const auto shift = static_cast<long>(i);
     append_term(sum,
                 piece(fmt::format("{}_{{{}}}({})\\bigl({}({})-{}({})\\bigr)", names_.letter('a'), i,

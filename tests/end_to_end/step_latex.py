@@ -10,7 +10,7 @@ SECONDS = 120
 COMPLAINTS = re.compile(
     r"^(?:! .*|Overfull .*|Underfull .*|(?:LaTeX|Package|Class)(?: \S+)? Warning: .*"
     r"|pdfTeX warning.*|Missing character: .*)", re.M)
-# How full a page is depends on the paper around the appendices, hence \\raggedbottom.
+# How full a page is depends on the paper around the appendices, hence \raggedbottom.
 PAPER = r"""\documentclass{amsart}
 \usepackage{amsmath,amsthm}
 \raggedbottom
@@ -18,7 +18,6 @@ PAPER = r"""\documentclass{amsart}
 \title{Several appendices}
 \author{A. Author}
 \maketitle
-\raggedbottom
 %s
 \end{document}
 """
