@@ -233,7 +233,10 @@ class ConversionText : private PowerLeafText {
     const bool quotient =
         d.node->operation == Operation::divide && d.expression == d.node->children[1];
     // An inverse that is its own atom needs no rewriting.
-    if (!quotient && bare("/ " + divisor_text(d)) == bare(product(d.reciprocal, scope_))) return "";
+    const bool one_atom = d.reciprocal.atoms.size() == 1 && d.reciprocal.atoms[0].second == 1;
+    if (!quotient && one_atom &&
+        bare("/ " + divisor_text(d)) == bare(product(d.reciprocal, scope_)))
+      return "";
     const std::string law = quotient ? "divide_by" : "invert_by";
     return fmt::format("  rewrite {}({} K {}%K ({})%K ({}_denominator_{} {} {})).\n",
                        quotient ? "!" : "", law, divisor_text(d), product(d.reciprocal, scope_),
