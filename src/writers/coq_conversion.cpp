@@ -258,7 +258,9 @@ class ConversionText : private PowerLeafText {
       pairs += fmt::format("{}({}) ^ {}", pairs.empty() ? "" : " * ", pair, d.units[u].exponent);
       uses += fmt::format("rewrite {}. ", name);
     }
-    script += fmt::format("  transitivity ({})%K; [inj_norm; ring|].\n  {}ring.\n", pairs, uses);
+    const std::string merges = merge_rewrites(script);
+    script += fmt::format("  transitivity ({})%K; [{}inj_norm; ring|].\n  {}ring.\n", pairs, merges,
+                          uses);
     lemma(fmt::format("{}_denominator_{}", what_, i + 1),
           fmt::format("({} * ({}))%K = inj 1", divisor_text(d), product(d.reciprocal, scope_)),
           script);
