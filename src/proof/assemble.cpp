@@ -312,19 +312,13 @@ class Assembler {
     proof_.telescoping = std::move(out);
   }
 
-  void normal_form(const TelescopingDraft& t, Telescoping& out) const {
-    const algebra::RingPtr& ring = setting_.ring;
-    algebra::RationalFunction left(ring, mpq_class(0));
-    for (std::size_t i = 0; i < t.coefficients.size(); ++i)
-      left = left +
-             algebra::RationalFunction(t.coefficients[i]) * algebra::RationalFunction(ring, t.p[i]);
-    left = left * algebra::RationalFunction(ring, t.weight);
-    const algebra::Polynomial& numerator = left.numerator();
+  static void normal_form(const TelescopingDraft& t, Telescoping& out) {
+    const algebra::Polynomial& numerator = t.left.numerator();
     const algebra::Polynomial primitive = numerator.primitive_part();
     out.normal_form = term::plain(primitive);
     if (primitive.is_zero()) return;
     const mpz_class content = numerator.leading_coefficient() / primitive.leading_coefficient();
-    out.normal_scale = mpq_class(content, left.denominator().constant());
+    out.normal_scale = mpq_class(content, t.left.denominator().constant());
     out.normal_scale.canonicalize();
   }
 

@@ -208,6 +208,21 @@ Factored literal_value(const RingPtr& ring, const Atom& atom) {
   return out;
 }
 
+Factored rising_factors(const RingPtr& ring, const Affine& form, long count) {
+  Factored out;
+  for (long t = 1; t <= count; ++t) out.multiply((form + t).polynomial(ring), 1);
+  return out;
+}
+
+Factored interval_factors(const Atom& atom, const Affine& from, const Affine& to) {
+  Factored out;
+  for (Affine t = from; t.constant < to.constant; t = t + 1) {
+    out.multiply(term::interval_factor(atom, t), 1);
+    out.constant /= atom.scale;
+  }
+  return out;
+}
+
 std::optional<Product> base_of(const RingPtr& ring, const std::vector<AtomGroups>& groups,
                                std::string& why) {
   Product base;

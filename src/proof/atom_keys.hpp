@@ -52,6 +52,14 @@ struct AtomGroups {
 /// Its value: a polynomial with a rational constant (0 for rfact of a negative number).
 [[nodiscard]] algebra::Factored literal_value(const algebra::RingPtr& ring, const term::Atom& atom);
 
+/// The linear factors that a law gives when it is applied several times:
+/// (form + 1) ... (form + count), and for an interval atom's a: (a + t) for from <= t < to, where
+/// from and to differ by a constant.
+[[nodiscard]] algebra::Factored rising_factors(const algebra::RingPtr& ring,
+                                               const term::Affine& form, long count);
+[[nodiscard]] algebra::Factored interval_factors(const term::Atom& atom, const term::Affine& from,
+                                                 const term::Affine& to);
+
 /// The base of products grouped so (they must be similar).
 [[nodiscard]] std::optional<term::Product> base_of(const algebra::RingPtr& ring,
                                                    const std::vector<AtomGroups>& groups,

@@ -144,8 +144,8 @@ class Attempter {
   bool balances(long n) {
     const Facts facts = setting_.from(n);
     ArgumentDraft& d = out_.draft;
-    describe_right_side(facts);
     std::vector<TermDraft> ends = left_terms();
+    describe_right_side(ends, facts);
     if (!as_equality_) return recurrence_balance(std::move(ends), facts);
     for (TermDraft& t :
          closed_terms(setting_, weight(), d.evidence.coefficients, terms_.closed->products))
@@ -171,9 +171,9 @@ class Attempter {
   }
 
   /// b = what the ends give, class by class, over the weight.
-  void describe_right_side(const Facts& facts) {
+  void describe_right_side(const std::vector<TermDraft>& ends, const Facts& facts) {
     std::string why;
-    std::optional<BalanceDraft> made = balance(setting_, facts, left_terms(), why);
+    std::optional<BalanceDraft> made = balance(setting_, facts, ends, why);
     out_.draft.boundary.clear();
     out_.draft.right_side_text = "0";
     if (!made) return;

@@ -64,12 +64,6 @@ class Shifter {
         Step{side, from, to, static_cast<unsigned>(steps), 1, factor, std::move(needs)});
   }
 
-  Factored rising(const Affine& form, long count) const {
-    Factored out;
-    for (long t = 1; t <= count; ++t) out.multiply((form + t).polynomial(ring_), 1);
-    return out;
-  }
-
   void factorials(const std::vector<long>& key, FactorialConstants left, FactorialConstants right) {
     remove_common(left.fact, right.fact);
     remove_common(left.rfact, right.rfact);
@@ -83,7 +77,8 @@ class Shifter {
       const long r = right.fact[i];
       const Affine target = linear + std::min(l, r);
       add(l > r ? Side::left : Side::right, term::factorial_atom(ring_, linear + std::max(l, r)),
-          term::factorial_atom(ring_, target), std::abs(l - r), rising(target, std::abs(l - r)),
+          term::factorial_atom(ring_, target), std::abs(l - r),
+          rising_factors(ring_, target, std::abs(l - r)),
           {{ConditionKind::factorial_argument, target, std::nullopt}});
     });
     each(left.rfact.size(), false, [&](std::size_t i) {
@@ -92,7 +87,7 @@ class Shifter {
       const Affine source = linear + std::min(l, r);
       add(l < r ? Side::left : Side::right, term::reciprocal_factorial_atom(ring_, source),
           term::reciprocal_factorial_atom(ring_, linear + std::max(l, r)), std::abs(l - r),
-          rising(source, std::abs(l - r)), {});
+          rising_factors(ring_, source, std::abs(l - r)), {});
     });
   }
 
@@ -126,11 +121,8 @@ class Shifter {
       if (from == common) continue;
       const Atom& longer = reciprocal ? common : from;
       const Atom& shorter = reciprocal ? from : common;
-      Factored factor;
-      for (Affine t = longer.low; t.constant < shorter.low.constant; t = t + 1)
-        multiply_interval(factor, from, t);
-      for (Affine t = shorter.high; t.constant < longer.high.constant; t = t + 1)
-        multiply_interval(factor, from, t);
+      Factored factor = interval_factors(from, longer.low, shorter.low);
+      factor.multiply(interval_factors(from, shorter.high, longer.high));
       std::vector<Need> needs{{ConditionKind::range, shorter.high - shorter.low, std::nullopt}};
       if (reciprocal) needs.push_back({ConditionKind::nonvanishing, std::nullopt, factor});
       add(side, from, common,
@@ -138,11 +130,6 @@ class Shifter {
               std::abs(longer.high.constant - shorter.high.constant),
           factor, needs);
     }
-  }
-
-  static void multiply_interval(Factored& factor, const Atom& atom, const Affine& t) {
-    factor.multiply(term::interval_factor(atom, t), 1);
-    factor.constant /= atom.scale;
   }
 
   void reciprocals(const AtomGroups& left, const AtomGroups& right) {

@@ -77,7 +77,6 @@ class Chooser {
 
   /// Widest first.
   [[nodiscard]] std::vector<Affine> candidates(bool upper) const {
-    const long inward = upper ? -1 : 1;
     std::vector<Affine> out;
     const End& end = upper ? range_.high : range_.low;
     if (end.affine) add_family(out, *end.affine, upper);
@@ -91,7 +90,6 @@ class Chooser {
         // slope * k + rest >= 0: for |slope| > 1 the weaker |k| <= |rest| still bounds the support.
         add_family(out, upper ? rest : -rest, upper);
       }
-    (void)inward;
     return out;
   }
 

@@ -39,23 +39,6 @@ Factored single(const Polynomial& p, long exponent = 1) {
   return out;
 }
 
-/// Product of (form + t), first <= t <= last.
-Factored rising_factors(const RingPtr& ring, const Affine& form, long first, long last) {
-  Factored out;
-  for (long t = first; t <= last; ++t) out.multiply((form + t).polynomial(ring), 1);
-  return out;
-}
-
-/// Product of (a + form + t), first <= t <= last, for an interval atom's a.
-Factored interval_factors(const Atom& atom, const Affine& form, long first, long last) {
-  Factored out;
-  for (long t = first; t <= last; ++t) {
-    out.multiply(term::interval_factor(atom, form + t), 1);
-    out.constant /= atom.scale;
-  }
-  return out;
-}
-
 Step step_from(const Atom& atom) {
   return Step{AtomStep::Side::left, atom, std::nullopt, 0, 1, {}, {}};
 }
@@ -140,7 +123,7 @@ class Bringer {
     Step step = step_from(term::factorial_atom(ring_, linear + from));
     step.to = term::factorial_atom(ring_, linear + to);
     step.steps = static_cast<unsigned>(from - to);
-    step.factor = rising_factors(ring_, linear + to, 1, from - to);
+    step.factor = rising_factors(ring_, linear + to, from - to);
     step.needs.push_back(at_least_zero(linear + to));
     add(step);
   }
@@ -150,7 +133,7 @@ class Bringer {
     Step step = step_from(term::reciprocal_factorial_atom(ring_, linear + from));
     step.to = term::reciprocal_factorial_atom(ring_, linear + to);
     step.steps = static_cast<unsigned>(to - from);
-    step.factor = rising_factors(ring_, linear + from, 1, to - from);
+    step.factor = rising_factors(ring_, linear + from, to - from);
     add(step);
   }
 
@@ -198,8 +181,8 @@ class Bringer {
     Step step = step_from(from);
     step.to = to;
     step.steps = static_cast<unsigned>(below + above);
-    step.factor = interval_factors(from, longer.low, 0, below - 1);
-    step.factor.multiply(interval_factors(from, shorter.high, 0, above - 1));
+    step.factor = interval_factors(from, longer.low, shorter.low);
+    step.factor.multiply(interval_factors(from, shorter.high, longer.high));
     step.needs.push_back(at_least_zero(shorter.high - shorter.low, ConditionKind::range));
     if (reciprocal) step.needs.push_back(not_zero(step.factor));
     add(step);

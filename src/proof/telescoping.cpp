@@ -164,9 +164,16 @@ class Drafter {
         summand_(summand),
         certificate_(certificate),
         why_(why),
-        out_{{}, coefficients, {},
-             {}, {},           Polynomial(setting.ring),
-             {}, {},           Polynomial(setting.ring)} {}
+        out_{{},
+             coefficients,
+             {},
+             {},
+             {},
+             Polynomial(setting.ring),
+             {},
+             {},
+             RationalFunction(setting.ring, mpq_class(0)),
+             Polynomial(setting.ring)} {}
 
   std::optional<TelescopingDraft> run() {
     if (has_zero_product()) return std::nullopt;
@@ -294,12 +301,12 @@ class Drafter {
     RationalFunction left(ring_, mpq_class(0));
     for (std::size_t i = 0; i < out_.coefficients.size(); ++i)
       left = left + RationalFunction(out_.coefficients[i]) * RationalFunction(ring_, out_.p[i]);
-    left = left * RationalFunction(ring_, out_.weight);
+    out_.left = left * RationalFunction(ring_, out_.weight);
     const Polynomial& c = out_.certificate;
     const RationalFunction right =
         RationalFunction(ring_, out_.index.up) * RationalFunction(c.shift(term::index, 1)) -
         RationalFunction(ring_, out_.index.down) * RationalFunction(c);
-    out_.residue = (left - right).numerator();
+    out_.residue = (out_.left - right).numerator();
   }
 
   const RingPtr& ring_;

@@ -21,8 +21,9 @@ struct TelescopingDraft {
   std::vector<algebra::Factored> p;
   algebra::Polynomial certificate;  ///< c
   IndexShift index;
-  std::vector<Need> needs;      ///< what the argument needs on its region
-  algebra::Polynomial residue;  ///< left - right of the equality: 0 when right
+  std::vector<Need> needs;         ///< what the argument needs on its region
+  algebra::RationalFunction left;  ///< the left side of the equality
+  algebra::Polynomial residue;     ///< left - right of the equality: 0 when right
 
   [[nodiscard]] bool holds() const { return residue.is_zero(); }
 };

@@ -7,6 +7,7 @@
 #include <stdexcept>
 #include <utility>
 
+#include "claim/affine.hpp"
 #include "term/evaluator.hpp"
 
 namespace sumwright::term::exact {
@@ -102,7 +103,7 @@ class SpecialValues {
     if (node.name == "rising" || node.name == "falling") {
       for (long start = 0; start < 3; ++start) solve(first, node.name == "rising" ? -start : start);
     } else if (node.name == "binomial") {
-      const auto lower = literal_value(*node.children[1]);
+      const auto lower = claim::as_literal(*node.children[1]);
       if (lower) solve(first, *lower);
     }
   }
@@ -191,7 +192,7 @@ void collect_literals(const Expression& expression, std::set<mpz_class>& literal
 
 void collect_thresholds(const Expression& node, std::set<mpz_class>& thresholds) {
   if (node.operation == Operation::call && node.name == "binomial") {
-    if (const auto lower = literal_value(*node.children[1])) thresholds.insert(*lower);
+    if (const auto lower = claim::as_literal(*node.children[1])) thresholds.insert(*lower);
   }
   for (const auto& child : node.children) collect_thresholds(*child, thresholds);
 }

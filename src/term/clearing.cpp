@@ -7,6 +7,8 @@
 #include <algorithm>
 #include <utility>
 
+#include "claim/affine.hpp"
+
 namespace sumwright::term::exact {
 
 namespace {
@@ -17,7 +19,7 @@ using claim::Operation;
 [[nodiscard]] bool has_division(const Expression& node) {
   if (node.operation == Operation::divide) return true;
   if (node.operation == Operation::power) {
-    const auto exponent = literal_value(*node.children[1]);
+    const auto exponent = claim::as_literal(*node.children[1]);
     if (exponent && *exponent < 0) return true;
   }
   return std::any_of(node.children.begin(), node.children.end(),
@@ -138,7 +140,7 @@ ClearedRecurrence::Fraction ClearedRecurrence::split(const Expression& node) {
 }
 
 ClearedRecurrence::Fraction ClearedRecurrence::split_power(const Expression& node) {
-  const auto exponent = literal_value(*node.children[1]);
+  const auto exponent = claim::as_literal(*node.children[1]);
   if (!exponent) return atom(node, false);
   const Expression& base = *node.children[0];
   Fraction fraction = *exponent < 0 ? split_reciprocal(base) : split(base);
@@ -162,7 +164,7 @@ ClearedRecurrence::Fraction ClearedRecurrence::split_reciprocal(const Expression
       return left;
     }
     case Operation::power:
-      if (const auto exponent = literal_value(*node.children[1]); exponent && *exponent >= 0) {
+      if (const auto exponent = claim::as_literal(*node.children[1]); exponent && *exponent >= 0) {
         Fraction fraction = split_reciprocal(*node.children[0]);
         to_power(fraction, *exponent, node.place);
         return fraction;

@@ -10,6 +10,7 @@
 #include <stdexcept>
 
 #include "claim/affine.hpp"
+#include "claim/parts.hpp"
 #include "term/leaves.hpp"
 
 namespace sumwright::term {
@@ -26,12 +27,6 @@ namespace {
 
 constexpr std::size_t most_products = 64;
 constexpr unsigned long highest_power = 1000;
-
-bool has_factorial(const Expression& e) {
-  if (e.operation == Operation::call && e.name == "factorial") return true;
-  return std::any_of(e.children.begin(), e.children.end(),
-                     [](const ExpressionPtr& c) { return has_factorial(*c); });
-}
 
 /// Only literals, symbols, + - * and literal powers >= 0.
 bool is_polynomial(const Expression& e) {
@@ -109,7 +104,7 @@ class Converter {
   Products expand_quotient(const ExpressionPtr& e) {
     const ExpressionPtr& divisor = e->children[1];
     Products numerator = expand(e->children[0]);
-    if (has_factorial(*divisor)) return product(numerator, reciprocal(divisor), *e);
+    if (claim::has_factorial(*divisor)) return product(numerator, reciprocal(divisor), *e);
     return product(numerator, {divide(e, divisor, 1)}, *e);
   }
 
@@ -120,7 +115,7 @@ class Converter {
     const mpz_class size = abs(*exponent);
     if (size > highest_power) refuse(*e, "this exponent is too large");
     if (*exponent < 0) {
-      if (has_factorial(*base)) return power(reciprocal(base), size.get_ui(), *e);
+      if (claim::has_factorial(*base)) return power(reciprocal(base), size.get_ui(), *e);
       return {divide(e, base, size.get_ui())};
     }
     return power(expand(base), size.get_ui(), *e);
@@ -129,7 +124,7 @@ class Converter {
   /// The reciprocal of a divisor that contains a factorial: reciprocal factorials (claim format).
   Products reciprocal(const ExpressionPtr& v) {
     if (v->operation == Operation::call && v->name == "factorial") return {leaf(v, true)};
-    if (!has_factorial(*v)) return {divide(v, v, 1)};
+    if (!claim::has_factorial(*v)) return {divide(v, v, 1)};
     switch (v->operation) {
       case Operation::multiply:
         return product(reciprocal(v->children[0]), reciprocal(v->children[1]), *v);

@@ -11,6 +11,8 @@
 #include <unordered_map>
 #include <utility>
 
+#include "claim/affine.hpp"
+
 namespace sumwright::term::exact {
 
 namespace {
@@ -40,14 +42,6 @@ std::size_t Symbols::add(std::string_view name) {
   if (found != names_.end()) return static_cast<std::size_t>(found - names_.begin());
   names_.emplace_back(name);
   return names_.size() - 1;
-}
-
-std::optional<mpz_class> literal_value(const Expression& expression) {
-  if (expression.operation == Operation::literal) return expression.value;
-  if (expression.operation != Operation::negate) return std::nullopt;
-  const Expression& operand = *expression.children[0];
-  if (operand.operation != Operation::literal) return std::nullopt;
-  return mpz_class(-operand.value);
 }
 
 void collect_symbols(const Expression& expression, std::vector<std::string>& names) {
@@ -108,7 +102,7 @@ class Program::Compiler {
           emit_reciprocal(operand(0));
           return push(Code::negate, 0, node.place);
         case Operation::power:
-          if (const auto exponent = literal_value(operand(1)); exponent && *exponent >= 0) {
+          if (const auto exponent = claim::as_literal(operand(1)); exponent && *exponent >= 0) {
             emit_reciprocal(operand(0));
             constant(*exponent, operand(1).place);
             return push(Code::power, 0, node.place);
@@ -129,7 +123,7 @@ class Program::Compiler {
  private:
   void power(const Expression& node) {
     const Expression& base = *node.children[0];
-    const auto exponent = literal_value(*node.children[1]);
+    const auto exponent = claim::as_literal(*node.children[1]);
     if (exponent && *exponent < 0 && has_factorial(base)) {
       emit_reciprocal(base);
       constant(-*exponent, node.children[1]->place);

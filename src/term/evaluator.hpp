@@ -137,7 +137,4 @@ class SumProgram {
 /// The names of all symbols in the expression, each once, in order of appearance.
 void collect_symbols(const claim::Expression& expression, std::vector<std::string>& names);
 
-/// The exponent when it is written as an integer literal with at most one sign.
-[[nodiscard]] std::optional<mpz_class> literal_value(const claim::Expression& expression);
-
 }  // namespace sumwright::term::exact

@@ -166,33 +166,10 @@ class ConclusionText : private SectionText {
   }
 
   [[nodiscard]] std::string literal_outside(const proof::LiteralSum& s) const {
+    const Scope scope = with(scope_, 0, std::to_string(s.at));
+    const proof::Affine n = running(0, s.at);
     return fmt::format("intros {} Hk Ho. destruct Ho as [Ho|Ho]; [{}|{}].", names_.k,
-                       literal_vanish(s.below, s.at), literal_vanish(s.above, s.at));
-  }
-
-  [[nodiscard]] std::string literal_vanish(const std::optional<proof::Vanishing>& v,
-                                           long at) const {
-    if (!v) return "exfalso; index";
-    std::string unfold;
-    std::string rewrites;
-    const Scope scope = with(scope_, 0, std::to_string(at));
-    proof::Affine n;
-    n.coefficients.assign(proof_.symbols.size(), 0);
-    n.constant = at;
-    for (std::size_t j = 0; j < v->atoms.size(); ++j) {
-      unfold += fmt::format("{}F{}", j == 0 ? "" : ", ", j + 1);
-      for (const auto& [a, e] : proof_.summand.products[j].atoms) {
-        if (a.kind != proof::AtomKind::reciprocal_factorial) continue;
-        const proof::Affine moved = substitute(a.argument, {{0, n}});
-        if (moved.coefficients != v->atoms[j].argument.coefficients ||
-            moved.constant != v->atoms[j].argument.constant)
-          continue;
-        rewrites += fmt::format("rewrite (rfact_neg K {}) by index; ",
-                                bracketed(affine(a.argument, scope)));
-        break;
-      }
-    }
-    return fmt::format("unfold {}; {}ring", unfold, rewrites);
+                       vanish(s.below, n, scope), vanish(s.above, n, scope));
   }
 
   // ---------------------------------------------------------------- conclusion

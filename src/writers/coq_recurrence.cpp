@@ -111,39 +111,11 @@ class RecurrenceText : private SectionText {
 
   /// A point in one range but not in the other: below or above, F vanishes or there is none.
   [[nodiscard]] std::string outside(const proof::RangeStep& r) const {
-    return fmt::format("intros {} Hk Ho. destruct Ho as [Ho|Ho]; [{}|{}].", names_.k,
-                       vanish(r.below, r.shift), vanish(r.above, r.shift));
-  }
-
-  [[nodiscard]] std::string vanish(const std::optional<proof::Vanishing>& v, unsigned shift) const {
-    if (!v) return "exfalso; index";
-    std::string unfold;
-    std::string rewrites;
     const Scope scope =
-        shift == 0 ? scope_ : with(scope_, 0, fmt::format("{} + {}", names_.n, shift));
-    for (std::size_t j = 0; j < v->atoms.size(); ++j) {
-      unfold += fmt::format("{}F{}", j == 0 ? "" : ", ", j + 1);
-      const std::string argument = original_argument(v->atoms[j], j, shift, scope);
-      rewrites += fmt::format("rewrite (rfact_neg K {}) by index; ", argument);
-    }
-    return fmt::format("unfold {}; {}ring", unfold, rewrites);
-  }
-
-  /// The text that the shifted atom's argument has after unfolding the piece.
-  [[nodiscard]] std::string original_argument(const proof::Atom& image, std::size_t piece,
-                                              unsigned shift, const Scope& scope) const {
-    proof::Affine n;
-    n.coefficients.assign(proof_.symbols.size(), 0);
-    n.coefficients[0] = 1;
-    n.constant = static_cast<long>(shift);
-    for (const auto& [a, e] : proof_.summand.products[piece].atoms) {
-      if (a.kind != proof::AtomKind::reciprocal_factorial) continue;
-      const proof::Affine moved = substitute(a.argument, {{0, n}});
-      if (moved.coefficients == image.argument.coefficients &&
-          moved.constant == image.argument.constant)
-        return bracketed(affine(a.argument, scope));
-    }
-    return bracketed(affine(image.argument, scope_));
+        r.shift == 0 ? scope_ : with(scope_, 0, fmt::format("{} + {}", names_.n, r.shift));
+    const proof::Affine n = running(1, static_cast<long>(r.shift));
+    return fmt::format("intros {} Hk Ho. destruct Ho as [Ho|Ho]; [{}|{}].", names_.k,
+                       vanish(r.below, n, scope), vanish(r.above, n, scope));
   }
 
   // ---------------------------------------------------------------- the recurrence of the sum

@@ -55,6 +55,44 @@ class SectionText {
     return out;
   }
 
+  /// F vanishes at n + shift, or at a literal n, because an rfact argument is negative; without a
+  /// reason there is no such point. `n` and `scope`: what stands for the running variable, as data
+  /// and as text.
+  [[nodiscard]] std::string vanish(const std::optional<proof::Vanishing>& v, const proof::Affine& n,
+                                   const Scope& scope) const {
+    if (!v) return "exfalso; index";
+    std::string unfold;
+    std::string rewrites;
+    for (std::size_t j = 0; j < v->atoms.size(); ++j) {
+      unfold += fmt::format("{}F{}", j == 0 ? "" : ", ", j + 1);
+      rewrites += fmt::format("rewrite (rfact_neg K {}) by index; ",
+                              original_argument(v->atoms[j], j, n, scope));
+    }
+    return fmt::format("unfold {}; {}ring", unfold, rewrites);
+  }
+
+  /// The text that the atom's argument has after unfolding the piece at the running variable `n`.
+  [[nodiscard]] std::string original_argument(const proof::Atom& image, std::size_t piece,
+                                              const proof::Affine& n, const Scope& scope) const {
+    for (const auto& [a, e] : proof_.summand.products[piece].atoms) {
+      if (a.kind != proof::AtomKind::reciprocal_factorial) continue;
+      const proof::Affine moved = substitute(a.argument, {{0, n}});
+      if (moved.coefficients == image.argument.coefficients &&
+          moved.constant == image.argument.constant)
+        return bracketed(affine(a.argument, scope));
+    }
+    return bracketed(affine(image.argument, scope_));
+  }
+
+  /// coefficient * running variable + constant.
+  [[nodiscard]] proof::Affine running(long coefficient, long constant) const {
+    proof::Affine out;
+    out.coefficients.assign(proof_.symbols.size(), 0);
+    out.coefficients[0] = coefficient;
+    out.constant = constant;
+    return out;
+  }
+
   /// Every occurrence of the identifier `word`.
   static std::string replace_word(const std::string& text, const std::string& word,
                                   const std::string& with) {

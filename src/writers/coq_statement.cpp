@@ -9,6 +9,7 @@
 #include <stdexcept>
 
 #include "claim/affine.hpp"
+#include "claim/parts.hpp"
 #include "writers/coq_text.hpp"
 
 namespace sumwright::writers::coq {
@@ -23,12 +24,6 @@ bool is_rational(const proof::Proof& proof, const std::string& name) {
                      [&](const claim::Parameter& p) {
                        return p.name == name && p.ring == claim::Parameter::Ring::rationals;
                      });
-}
-
-bool has_factorial(const Expression& e) {
-  if (e.operation == Operation::call && e.name == "factorial") return true;
-  return std::any_of(e.children.begin(), e.children.end(),
-                     [](const claim::ExpressionPtr& c) { return has_factorial(*c); });
 }
 
 std::string paren(const std::string& text) { return "(" + text + ")"; }
@@ -59,7 +54,7 @@ std::string power_text(const proof::Proof& proof, const Expression& e) {
         fmt::format("zpow {} {}", field_text(proof, base), integer_text(proof, *e.children[1])));
   const mpz_class size = abs(*exponent);
   if (*exponent >= 0) return paren(fmt::format("{} ^ {}", field_text(proof, base), size.get_str()));
-  if (has_factorial(base))
+  if (claim::has_factorial(base))
     return paren(fmt::format("{} ^ {}", reciprocal_text(proof, base), size.get_str()));
   return paren(fmt::format("/ ({} ^ {})", field_text(proof, base), size.get_str()));
 }
@@ -193,7 +188,7 @@ std::string field_text(const proof::Proof& proof, const Expression& e) {
     case Operation::multiply:
       return infix(proof, e, "*", field_text);
     case Operation::divide:
-      if (has_factorial(*e.children[1]))
+      if (claim::has_factorial(*e.children[1]))
         return paren(fmt::format("{} * {}", field_text(proof, *e.children[0]),
                                  reciprocal_text(proof, *e.children[1])));
       return infix(proof, e, "/", field_text);
