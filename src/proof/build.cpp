@@ -331,7 +331,10 @@ class Builder {
     proof_.recurrence_text.clear();
     for (const Poly& a : draft.evidence.coefficients)
       proof_.recurrence_text.push_back(term::claim_text(algebra::factor(a)));
-    proof_.right_side_text = draft.right_side_text;
+    // A claimed right side is printed as the theorem states it, else as the ends give it.
+    const claim::ExpressionPtr& stated = proof_.claim->evidence.right_side;
+    proof_.right_side_text =
+        !proof_.claim->is_equality() && stated ? claim::to_text(*stated) : draft.right_side_text;
     if (draft.evidence.certificate)
       proof_.certificate_text = draft.evidence.certificate->is_zero()
                                     ? "0"

@@ -279,7 +279,7 @@ struct Proof {
 
   /// The recurrence proved, as claim-language text: what `find` prints.
   std::vector<std::string> recurrence_text;
-  std::string right_side_text;
+  std::string right_side_text;  ///< as the claim states it, else as the ends give it
   std::string certificate_text;
   bool evidence_brought = false;  ///< the author brought it (else found)
   long from = 0;                  ///< the claim's `from`
@@ -289,8 +289,7 @@ struct Proof {
   Conversion summand;
   std::optional<Conversion> right_side;  ///< b(n) of a claimed recurrence, if not 0
   std::optional<Conversion> closed;      ///< the closed form of an equality
-  /// The right side that the ends give, grouped by similarity, for readers (printed as
-  /// right_side_text).
+  /// The right side that the ends give, grouped by similarity, for readers.
   std::vector<Product> boundary;
 
   std::optional<Telescoping> telescoping;  ///< none only when the claim has no index
