@@ -7,6 +7,7 @@
 #include <set>
 
 #include "audit/atoms.hpp"
+#include "audit/crossings.hpp"
 #include "audit/hypotheses.hpp"
 #include "audit/special_values.hpp"
 
@@ -17,6 +18,7 @@ namespace {
 constexpr std::size_t kSpecialSamples = 4;
 constexpr long kExceptionalSpan = 30;
 constexpr std::size_t kMostExceptional = 4;
+constexpr std::size_t kMostCrossings = 24;
 constexpr std::size_t kIndex = 1;
 
 std::vector<std::string> names_of(const proof::Proof& proof) {
@@ -87,6 +89,8 @@ Context::Context(const proof::Proof& the_proof, const AuditOptions& the_options)
                                 options.sum_span)),
       author(claim, samples, options.check_time) {
   add_special_samples();
+  for (const Point& sample : samples)
+    crossings_.push_back(audit::crossings(claim, sample, kMostCrossings));
   make_places();
 }
 
@@ -161,6 +165,8 @@ std::vector<long> Context::chosen_values(std::size_t sample) const {
   const long few = sample == 0 ? 8 : 3;  // the first sample is a generic one
   for (long i = 0; i < few; ++i) out.insert(first + i);
   if (sample < 2) out.insert(first + 13);
+  for (const long n : crossings_.at(sample))
+    if (n >= first) out.insert(n);
   if (!proof.telescoping) return {out.begin(), out.end()};
   std::size_t exceptional = 0;
   for (long n = first; n <= first + kExceptionalSpan && exceptional < kMostExceptional; ++n) {

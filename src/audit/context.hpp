@@ -64,8 +64,13 @@ class Context {
     return author.point(place.sample, place.n, place.k);
   }
 
-  /// n >= threshold: the first few, some later ones, and those where a coefficient or weight
-  /// vanishes.
+  /// The n at which ends of the range meet, for this sample.
+  [[nodiscard]] const std::vector<long>& crossings(std::size_t sample) const {
+    return crossings_.at(sample);
+  }
+
+  /// n >= threshold: the first few, some later ones, those where ends of the range meet, and those
+  /// where a coefficient or weight vanishes.
   [[nodiscard]] const std::vector<Place>& running_places() const { return running_places_; }
   /// The same with low <= k <= high of the telescoping range: all, or both ends and some between.
   [[nodiscard]] const std::vector<Place>& index_places() const { return index_places_; }
@@ -76,6 +81,7 @@ class Context {
   [[nodiscard]] std::vector<long> chosen_values(std::size_t sample) const;
   void make_places();
 
+  std::vector<std::vector<long>> crossings_;
   std::vector<Place> running_places_;
   std::vector<Place> index_places_;
 };

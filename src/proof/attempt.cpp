@@ -61,7 +61,8 @@ class Attempter {
     out_.draft.telescoping =
         draft_telescoping(setting_, terms_.summand.products, out_.draft.evidence.coefficients,
                           *out_.draft.evidence.certificate, why);
-    if (!out_.draft.telescoping) return stuck(why, "R2 or R8");
+    if (!out_.draft.telescoping)
+      return stuck(why, "a rule for terms that are similar but written differently");
     if (out_.draft.telescoping->holds()) return true;
     out_.outcome = Attempt::Outcome::identity_fails;
     return false;
@@ -92,9 +93,12 @@ class Attempter {
     if (out_.draft.leading) must.multiply(*out_.draft.leading);
     for (const auto& [p, e] : must.factors)
       if (p.to_string() == text) rational = term::involves_rational_parameter(setting_, p);
-    return stuck(fmt::format("the factor {} of the {} may vanish", text,
-                             as_equality_ ? "leading coefficient" : "certificate's denominator"),
-                 rational ? "R7: continuation in a parameter" : "R6: onset");
+    return stuck(
+        fmt::format("the factor {} of the {} may vanish", text,
+                    as_equality_ ? "leading coefficient" : "certificate's denominator"),
+        rational
+            ? "continuation in a parameter: prove it where it is not 0, then as polynomials"
+            : "an onset: explicit values until the condition holds, the argument from there on");
   }
 
   bool conclude() {
@@ -115,7 +119,7 @@ class Attempter {
                       out_.draft.telescoping->needs, n, why);
     if (!region)
       return stuck("the identity is not available on the whole range: " + why,
-                   "R1, R6 or R9 on ends and support");
+                   "a rule for ends at which the terms do not vanish by a factorial");
     out_.draft.region = std::move(*region);
     return true;
   }
@@ -131,11 +135,12 @@ class Attempter {
     std::string why;
     std::optional<BalanceDraft> made = balance(setting_, facts, std::move(terms), why);
     if (!made) {
-      stuck(why, "R8: terms that are similar but written differently");
+      stuck(why, "a rule for terms that are similar but written differently");
       return std::nullopt;
     }
     if (!all_hold(setting_, facts, made->needs(), &why)) {
-      stuck("a boundary term needs " + why, "R4, R5 or R6");
+      stuck("a boundary term needs " + why,
+            "reflection of a factorial, or explicit values where the condition fails");
       return std::nullopt;
     }
     return made;
@@ -211,9 +216,10 @@ class Attempter {
       deadline_.check();
       std::string why;
       std::optional<InitialDraft> value = initial_value(context, n, why);
-      if (!value) return stuck(why, "R10: auxiliary claims");
+      if (!value) return stuck(why, "an auxiliary claim for that value");
       if (!all_hold(setting_, setting_.hypotheses, value->balance.needs(), &why))
-        return stuck(fmt::format("the value at {} needs {}", n, why), "R4, R6 or R10");
+        return stuck(fmt::format("the value at {} needs {}", n, why),
+                     "reflection of a factorial, or an auxiliary claim for that value");
       if (!value->balance.holds()) {
         out_.outcome = Attempt::Outcome::initial_fails;
         out_.at = n;
@@ -242,7 +248,7 @@ Attempt attempt(const Terms& terms, const EvidenceDraft& evidence, bool as_equal
     Attempt out;
     out.draft.evidence = evidence;
     out.why = "a factor vanishes identically at a boundary point";
-    out.rule = "R3: interval products that run through 0";
+    out.rule = "a rule for products that run through 0";
     return out;
   }
 }

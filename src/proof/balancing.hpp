@@ -1,4 +1,4 @@
-// Finitely many products that must add up to 0, class by class (design, rule R8).
+// Finitely many products that must add up to 0, class by class (terms that are similar, added up).
 #pragma once
 
 #include <optional>

@@ -35,16 +35,17 @@ class Builder {
     proof_.from = claim_->from.get_si();
     if (!claim_->is_question() && refuted_by_values({})) return proof_;
     if (claim_->sum.over.size() > 1)
-      return undecided("sums over several indices are not decided yet", "section 4");
+      return undecided("sums over several indices are not decided yet",
+                       "a rule for the boundary of a range in two or more indices");
     if (claim_->other_sum)
       return undecided("an equality of two sums needs a common recurrence of both sides",
-                       "sum = sum (rule R8, common left multiple)");
+                       "sum = sum: a common left multiple of the recurrences of both sides");
     if (!make_terms()) return proof_;
     for (const claim::Assumption& a : claim_->assumptions)
       if (names_symbol(*a.left, claim_->running) || names_symbol(*a.right, claim_->running))
         return undecided(
             "a condition on the running variable itself, at " + place_text(*claim_, a.place),
-            "R6: an induction that stays inside the condition");
+            "an induction that stays inside the condition");
     if (claim_->is_question()) return answer_question();
     if (claim_->is_equality()) return prove_equality();
     return prove_recurrence();
@@ -272,7 +273,7 @@ class Builder {
     if (evidence.right_side->open() != nullptr) {
       Attempt stuck;
       stuck.why = "the right side " + right_side + " has no value on the whole range";
-      stuck.rule = "R5: a recurrence from a later n on";
+      stuck.rule = "a recurrence from a later n on";
       return stuck;
     }
     proof_.claim = stated;
@@ -349,7 +350,7 @@ class Builder {
     const auto point = term::refute(recurrence, first_values, 6, also, options_.deadline);
     if (!point)
       return undecided("the ends of the sum do not give the claimed right side",
-                       "R8: terms that are similar but written differently");
+                       "a rule for terms that are similar but written differently");
     proof_.verdict = Verdict::refuted;
     proof_.subject = equality ? Subject::evidence : Subject::claim;
     proof_.counterexample = from_difference(*point, "the recurrence of the sum");
@@ -375,7 +376,7 @@ class Builder {
     return undecided(tried.outcome == Attempt::Outcome::initial_fails
                          ? fmt::format("the values at {} do not agree as written", tried.at)
                          : "the closed form does not satisfy the recurrence as written",
-                     "R8: terms that are similar but written differently");
+                     "a rule for terms that are similar but written differently");
   }
 
   [[nodiscard]] std::vector<mpz_class> special_values(const Attempt& tried) const {

@@ -122,10 +122,8 @@ class LiteralRange {
 
   std::optional<LiteralSumDraft> run() {
     if (!settle(false, out_.low, out_.below) || !settle(true, out_.high, out_.above)) {
-      why_ = fmt::format(
-          "at {} = {} the range does not become literal by its ends or its support "
-          "(rule R10: a sum over a range of parameter length)",
-          setting_.symbols[term::running].name, out_.at);
+      why_ = fmt::format("at {} = {} the sum runs over a range whose length depends on a parameter",
+                         setting_.symbols[term::running].name, out_.at);
       return std::nullopt;
     }
     if (out_.high - out_.low > 2000) {

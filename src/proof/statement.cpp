@@ -28,14 +28,14 @@ std::optional<AuthorRange> author_range(const term::Setting& setting, term::Fact
   for (const claim::Bound* b : {&r.low, &r.high})
     if (b->kind != claim::Bound::Kind::finite) {
       undecided(proof, "a range without a finite end needs a proved finite one",
-                "R11: infinite ranges, at " + place_text(*setting.claim, b->place));
+                "a rule for infinite ranges, at " + place_text(*setting.claim, b->place));
       return std::nullopt;
     }
   const std::optional<term::End> low = term::make_end(setting, r.low, false);
   const std::optional<term::End> high = term::make_end(setting, r.high, true);
   if (!low || !high) {
     undecided(proof, "an end of the range nests floor in a way that is not linear",
-              "R9: residues, at " + place_text(*setting.claim, r.place));
+              "a rule for nested floors in an end, at " + place_text(*setting.claim, r.place));
     return std::nullopt;
   }
   for (const term::End* end : {&*low, &*high})
@@ -63,7 +63,7 @@ bool settled(const Terms& terms, Proof& proof) {
   undecided(proof,
             fmt::format("the {} needs {} at {}", what, condition,
                         place_text(*terms.setting.claim, open->place)),
-            "R3 or R4, or a hypothesis of the author");
+            "a hypothesis of the claim that gives it, or the same factor written another way");
   return false;
 }
 

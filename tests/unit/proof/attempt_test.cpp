@@ -83,13 +83,13 @@ TEST(Attempt, StuckNamesTheRule) {
   parts.certificate = "-x*k/(n + 1 - k)";
   const Attempt parameter = tried(parts, true);
   EXPECT_EQ(parameter.outcome, Outcome::stuck);
-  EXPECT_EQ(parameter.rule.substr(0, 2), "R7") << parameter.rule;
+  EXPECT_EQ(parameter.rule.substr(0, 12), "continuation") << parameter.rule;
   parts.parameters = "m = { in = \"integers\" }";
   parts.recurrence = "\"-2*(n - m)\", \"n - m\"";
   parts.certificate = "-(n - m)*k/(n + 1 - k)";
   const Attempt onset = tried(parts, true);
   EXPECT_EQ(onset.outcome, Outcome::stuck);
-  EXPECT_EQ(onset.rule.substr(0, 2), "R6") << onset.rule;
+  EXPECT_EQ(onset.rule.substr(0, 8), "an onset") << onset.rule;
 }
 
 // A leading coefficient that vanishes at small n moves the threshold; the values before it are
