@@ -25,20 +25,29 @@ bool take(Factored& rational, const Polynomial& form, long sign) {
   return false;
 }
 
+/// How far one factor of `rational` moves the atom: +1 by L + 1, -1 by L under a reciprocal
+/// factorial; 0 when there is none.
+long taken_step(const RingPtr& ring, Factored& rational, const Atom& atom) {
+  const Polynomial next = (atom.argument + 1).polynomial(ring);
+  if (atom.kind == AtomKind::factorial) return take(rational, next, 1) ? 1 : 0;
+  if (atom.kind != AtomKind::reciprocal_factorial) return 0;
+  if (take(rational, next, -1)) return 1;
+  return take(rational, atom.argument.polynomial(ring), 1) ? -1 : 0;
+}
+
 /// One atom moved by one; false when none can be.
-bool raise_one(const RingPtr& ring, Factored& rational, Product& product) {
+bool move_one(const RingPtr& ring, Factored& rational, Product& product) {
   for (const auto& [atom, e] : product.atoms) {
-    const bool factorial = atom.kind == AtomKind::factorial;
-    if (!factorial && atom.kind != AtomKind::reciprocal_factorial) continue;
-    if (!take(rational, (atom.argument + 1).polynomial(ring), factorial ? 1 : -1)) continue;
-    Atom raised = atom;
-    raised.argument = atom.argument + 1;
+    const long step = taken_step(ring, rational, atom);
+    if (step == 0) continue;
+    Atom moved = atom;
+    moved.argument = atom.argument + step;
     const Atom old = atom;
     Product out;
     out.coefficient = product.coefficient;
     for (const auto& [other, count] : product.atoms)
       out.multiply(other, other == old ? count - 1 : count);
-    out.multiply(raised);
+    out.multiply(moved);
     product = std::move(out);
     return true;
   }
@@ -58,7 +67,7 @@ void simplify(const RingPtr& ring, Factored& rational, Product& product) {
   }
   product = std::move(kept);
   for (int round = 0; round < most_rounds; ++round)
-    if (!raise_one(ring, rational, product)) return;
+    if (!move_one(ring, rational, product)) return;
 }
 
 }  // namespace sumwright::term
