@@ -25,9 +25,10 @@ void check_zero_reason(Check& check, const proof::BalanceTerm& term, const Point
   const bool occurs =
       std::any_of(term.product.atoms.begin(), term.product.atoms.end(),
                   [&](const auto& entry) { return identical(entry.first, *term.zero_atom); });
+  const bool by_factor = term.zero_factor && value_of(*term.zero_factor, point) == 0;
   check.expect(
       occurs && term.zero_atom->kind == proof::AtomKind::reciprocal_factorial &&
-          value_of(term.zero_atom->argument, point) < 0,
+          (by_factor || value_of(term.zero_atom->argument, point) < 0),
       [&] { return "the zero atom of " + term.text + " is no reason at " + text_of(point); });
 }
 

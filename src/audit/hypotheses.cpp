@@ -78,11 +78,31 @@ bool admits(const claim::Claim& claim, const Point& at) {
 
 namespace {
 
-/// Small and special values first, larger and more generic ones later.
-std::vector<numeric> candidates(const claim::Parameter& parameter) {
+/// The numbers that stand in the conditions between parameters.
+void collect_literals(const claim::Expression& node, std::vector<numeric>& out) {
+  if (node.operation == claim::Operation::literal && out.size() < 16)
+    out.push_back(to_numeric(node.value));
+  for (const claim::ExpressionPtr& child : node.children) collect_literals(*child, out);
+}
+
+std::vector<numeric> literals_of(const claim::Claim& claim) {
+  std::vector<numeric> out;
+  for (const claim::Assumption& one : claim.assumptions) {
+    collect_literals(*one.left, out);
+    collect_literals(*one.right, out);
+  }
+  return out;
+}
+
+/// Small and special values first, larger and more generic ones later; last those next to the
+/// numbers in the conditions, which may leave hardly any other.
+std::vector<numeric> candidates(const claim::Parameter& parameter,
+                                const std::vector<numeric>& literals) {
   std::vector<numeric> out;
   const auto keep = [&](const numeric& value) {
-    if (admits_one(parameter, value)) out.push_back(value);
+    const bool known = std::any_of(out.begin(), out.end(),
+                                   [&](const numeric& old) { return old.is_equal(value); });
+    if (!known && admits_one(parameter, value)) out.push_back(value);
   };
   if (parameter.ring == claim::Parameter::Ring::rationals) {
     for (const long a : {0, 1, -1, 2}) keep(a);
@@ -95,6 +115,8 @@ std::vector<numeric> candidates(const claim::Parameter& parameter) {
                                {-7L, 3L},
                                {7L, 5L}})
       keep(numeric(a, b));
+    for (const numeric& c : literals)
+      for (const numeric& value : {c, -c, c + numeric(1, 2)}) keep(value);
     return out;
   }
   if (parameter.at_least) {
@@ -103,6 +125,9 @@ std::vector<numeric> candidates(const claim::Parameter& parameter) {
   } else {
     for (const long a : {0, 1, -1, 2, -2, 3, -3, 5, 8, -8, 13, 21}) keep(a);
   }
+  for (const numeric& c : literals)
+    for (const long d : {0, 1, -1})
+      for (const numeric& value : {c + numeric(d), -c + numeric(d)}) keep(value);
   return out;
 }
 
@@ -174,7 +199,7 @@ std::vector<Point> small_points(const claim::Claim& claim, const Lists& lists, c
 std::vector<Point> generic_points(const claim::Claim& claim, const Lists& lists,
                                   const Point& start) {
   std::vector<Point> found;
-  for (const std::size_t stride : {1, 2, 5})
+  for (const std::size_t stride : {std::size_t{1}, std::size_t{2}, std::size_t{5}})
     for (std::size_t turn = 0; turn < 8; ++turn) {
       Point point = start;
       for (std::size_t i = 0; i < lists.size(); ++i) {
@@ -219,9 +244,10 @@ std::vector<Point> sample_parameters(const claim::Claim& claim,
                                      long span) {
   const Point start = blank(claim, names);
   if (claim.parameters.empty()) return {start};
+  const std::vector<numeric> literals = literals_of(claim);
   Lists lists;
   for (const claim::Parameter& parameter : claim.parameters) {
-    lists.push_back(candidates(parameter));
+    lists.push_back(candidates(parameter, literals));
     if (lists.back().empty()) return {};
   }
   std::vector<Point> generic = generic_points(claim, lists, start);

@@ -33,13 +33,15 @@ struct Initial {
     if (context.claim.sum.over.size() != 1) return;
     const Interval author = context.author.range(place.sample, literal.at);
     Value sum = Value::of(0);
-    for (long k = literal.low; k <= literal.high; ++k)
+    const long base = literal.base ? value_of(*literal.base, context.at(place)) : 0;
+    for (long k = base + literal.low; k <= base + literal.high; ++k)
       sum = plus(sum, author.contains(k) ? context.author.term(place.sample, literal.at, k)
                                          : products_at(context, context.proof.summand,
                                                        {place.sample, literal.at, k}));
     check.expect_same(sum, context.author.sum(place.sample, literal.at),
-                      "S(" + std::to_string(literal.at) + ") over " + std::to_string(literal.low) +
-                          ".." + std::to_string(literal.high),
+                      "S(" + std::to_string(literal.at) + ") over " +
+                          std::to_string(base + literal.low) + ".." +
+                          std::to_string(base + literal.high),
                       context.at(place));
   }
 

@@ -24,11 +24,13 @@ void check_units(Check& check, const std::vector<proof::Unit>& units, const Poin
 }
 
 void check_steps(Check& check, const proof::Instance& instance, const Point& point) {
-  for (const proof::AtomStep& step : instance.steps)
-    check.expect_same(
-        value_of(step.from, point),
-        times(value_of(step.factor, point), step.literal ? Value::of(1) : value_of(step.to, point)),
-        "a step of instance " + instance.id, point);
+  for (const proof::AtomStep& step : instance.steps) {
+    Value image = value_of(step.factor, point);
+    if (!step.literal) image = times(image, value_of(step.to, point));
+    for (const proof::Atom& one : step.reciprocals) image = times(image, value_of(one, point));
+    check.expect_same(value_of(step.from, point), image, "a step of instance " + instance.id,
+                      point);
+  }
 }
 
 }  // namespace

@@ -44,11 +44,18 @@ struct Step {
                                   static_cast<long>(step.shift)));
     check.expect_same(context.author.sum(place.sample, shifted_n), sum,
                       "S(n+" + std::to_string(step.shift) + ") against the common range", point);
-    const auto differing = [&](const std::optional<proof::Vanishing>& reason, long a, long b) {
-      for (const long k : spread(std::min(a, b), std::max(a, b) - 1)) vanishes(reason, k);
+    const auto between = [&](const std::optional<proof::Vanishing>& reason, long a, long b) {
+      for (const long k : spread(a, b)) vanishes(reason, k);
     };
-    if (!author.windowed_low) differing(step.below, low, author.low);
-    if (!author.windowed_high) differing(step.above, high + 1, author.high + 1);
+    // Points of the one range that the other's end leaves out; the author's range may be empty.
+    if (!author.windowed_low) {
+      between(step.below, low, std::min(author.low - 1, high));
+      between(step.below, author.low, low - 1);
+    }
+    if (!author.windowed_high) {
+      between(step.above, std::max(author.high + 1, low), high);
+      between(step.above, high + 1, author.high);
+    }
   }
 };
 

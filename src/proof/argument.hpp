@@ -7,6 +7,7 @@
 
 #include "algebra/limits.hpp"
 #include "proof/conclusion.hpp"
+#include "proof/finite_ends.hpp"
 #include "term/conversion.hpp"
 
 namespace sumwright::proof::building {
@@ -14,8 +15,9 @@ namespace sumwright::proof::building {
 /// The claim's terms converted on its own region.
 struct Terms {
   term::Setting setting;
-  std::optional<AuthorRange> range;  ///< none: no index
-  term::Facts region;                ///< hypotheses, n >= from, index in the author's range
+  std::optional<AuthorRange> range;  ///< with finite ends; none: no index
+  std::optional<FiniteEnds> finite;  ///< where the author's range has an infinite end
+  term::Facts region;  ///< hypotheses, n >= from, index within the author's finite ends
   long from = 0;
   term::Conversion summand;
   std::optional<term::Conversion> closed;

@@ -51,6 +51,7 @@ class Assembler {
       condition(ConditionKind::threshold,
                 fmt::format("the argument needs {}; smaller values are checked one by one", beyond),
                 from_text(terms_.from), Settled::decided, "evaluation");
+    if (terms_.finite) finite_range(*terms_.finite);
     if (d.telescoping) telescoping(d, here);
     if (d.region) ranges(*d.region, here);
     if (d.ends && !as_equality) proof_.ends = balance("ends", *d.ends, here);
@@ -69,10 +70,12 @@ class Assembler {
 
   [[nodiscard]] std::string author_region() const {
     std::string out = from_text(terms_.from);
-    for (const claim::Range& r : setting_.claim->sum.over)
-      if (r.low.value && r.high.value)
-        out += fmt::format(", {} <= {} <= {}", claim::to_text(*r.low.value), r.index,
-                           claim::to_text(*r.high.value));
+    for (const claim::Range& r : setting_.claim->sum.over) {
+      if (!r.low.value && !r.high.value) continue;
+      const std::string low = r.low.value ? claim::to_text(*r.low.value) + " <= " : "";
+      const std::string high = r.high.value ? " <= " + claim::to_text(*r.high.value) : "";
+      out += ", " + low + r.index + high;
+    }
     return out;
   }
 
@@ -122,6 +125,16 @@ class Assembler {
     const bool holds = place.facts.implies(form);
     return condition(kind, term::text(setting_, form) + " >= 0", place.region,
                      holds ? Settled::decided : Settled::open, holds ? "linear arithmetic" : "");
+  }
+
+  /// The argument of the reciprocal factorial is negative, wherever the factor is not 0.
+  std::string zero_condition(const TermDraft& t, const Place& place) {
+    const term::Affine negative = -t.zero_atom->argument - 1;
+    if (!t.zero_factor) return nonnegative(negative, place, ConditionKind::support);
+    return condition(ConditionKind::support,
+                     fmt::format("{} >= 0 unless {} = 0", term::text(setting_, negative),
+                                 term::text(setting_, *t.zero_factor)),
+                     place.region, Settled::decided, "linear arithmetic");
   }
 
   std::string requirement(const term::Requirement& r, const Place& place) {
@@ -217,11 +230,14 @@ class Assembler {
     out.steps = s.steps;
     out.multiplicity = s.multiplicity;
     out.factor = term::plain(s.factor);
+    for (const term::Atom& one : s.reciprocals) out.reciprocals.push_back(term::plain(one));
     for (const Need& need : s.needs) {
-      if (need.nonnegative)
+      const bool by_base = need.or_nonzero && !place.facts.implies(*need.nonnegative);
+      if (need.nonnegative && !by_base)
         out.conditions.push_back(nonnegative(*need.nonnegative, place, need.kind));
-      if (need.nonzero) {
-        out.nonzero = nonzero(*need.nonzero, place, need.kind);
+      if (need.nonzero || by_base) {
+        out.nonzero = nonzero(by_base ? *need.or_nonzero : *need.nonzero, place,
+                              by_base ? ConditionKind::nonvanishing : need.kind);
         if (!out.nonzero->condition.empty()) out.conditions.push_back(out.nonzero->condition);
       }
     }
@@ -255,7 +271,8 @@ class Assembler {
       if (t.zero_coefficient) made.zero = "polynomial factor";
       if (t.zero_atom) {
         made.zero_atom = term::plain(*t.zero_atom);
-        made.zero = nonnegative(-t.zero_atom->argument - 1, place, ConditionKind::support);
+        made.zero = zero_condition(t, place);
+        if (t.zero_factor) made.zero_factor = term::plain(*t.zero_factor);
       }
       if (t.bringing)
         made.instance = similar(fmt::format("{}_term_{}", id, i + 1), *t.bringing, place);
@@ -330,6 +347,22 @@ class Assembler {
     return out;
   }
 
+  void finite_range(const FiniteEnds& ends) {
+    const std::string region = from_text(terms_.from);
+    const Facts facts = setting_.from(terms_.from);
+    const Place place{facts, region};
+    const std::string f = fmt::format("F({}, {})", setting_.symbols[term::running].name,
+                                      setting_.symbols[term::index].name);
+    FiniteRange out{ends.range, std::nullopt, std::nullopt};
+    if (ends.below)
+      out.below =
+          vanishing(*ends.below, f + " = 0 below " + claim::to_text(*ends.range.low.value), place);
+    if (ends.above)
+      out.above =
+          vanishing(*ends.above, f + " = 0 above " + claim::to_text(*ends.range.high.value), place);
+    proof_.finite_range = std::move(out);
+  }
+
   void ranges(const RegionDraft& region, const Place& place) {
     const std::string& n = setting_.symbols[term::running].name;
     const std::string& k = setting_.symbols[term::index].name;
@@ -362,6 +395,7 @@ class Assembler {
       sum.at = s.at;
       sum.low = s.low;
       sum.high = s.high;
+      if (s.base) sum.base = term::plain(*s.base);
       const std::string f = fmt::format("F({}, {})", s.at, setting_.symbols[term::index].name);
       if (s.below) sum.below = vanishing(*s.below, f + " = 0 below the literal range", place);
       if (s.above) sum.above = vanishing(*s.above, f + " = 0 above the literal range", place);

@@ -21,6 +21,7 @@ using term::Product;
 namespace {
 
 constexpr long largest_literal = 5000;
+constexpr long longest_expanded = 40;
 
 IntervalKey interval_key(const Atom& atom) {
   return {atom.base, atom.scale, atom.low.coefficients, atom.high.coefficients,
@@ -101,11 +102,27 @@ bool base_intervals(const std::vector<AtomGroups>& groups, Product& base, std::s
 
 }  // namespace
 
+namespace {
+
+bool has_literal_length(const Atom& atom) {
+  if (atom.kind != AtomKind::reciprocal_interval_product) return false;
+  const Affine length = atom.high - atom.low;
+  return length.is_constant() && length.constant > 0 && length.constant <= longest_expanded;
+}
+
+}  // namespace
+
 AtomGroups::AtomGroups(const RingPtr& ring, const Product& product) {
   (void)ring;
   for (const auto& [atom, exponent] : product.atoms) {
     if (is_literal(atom)) {
       literals.emplace_back(atom, exponent);
+      continue;
+    }
+    if (has_literal_length(atom)) {
+      expanded.emplace_back(atom, exponent);
+      for (const Atom& one : expanded_reciprocal(atom).reciprocals)
+        reciprocals[one.base] += exponent;
       continue;
     }
     switch (atom.kind) {
@@ -205,6 +222,21 @@ Factored literal_value(const RingPtr& ring, const Atom& atom) {
       return out;
   }
   (void)ring;
+  return out;
+}
+
+Expanded expanded_reciprocal(const Atom& atom) {
+  Expanded out;
+  for (Affine t = atom.low; t.constant < atom.high.constant; t = t + 1) {
+    const Polynomial factor = term::interval_factor(atom, t);
+    if (factor.is_zero()) throw std::domain_error("a denominator vanishes");
+    const Polynomial primitive = factor.primitive_part();
+    mpq_class scale(atom.scale * primitive.leading_coefficient(), factor.leading_coefficient());
+    scale.canonicalize();
+    out.constant *= scale;
+    if (!primitive.is_constant())
+      out.reciprocals.push_back(term::reciprocal_atom(factor.ring(), primitive));
+  }
   return out;
 }
 

@@ -42,6 +42,8 @@ struct AtomGroups {
   std::map<IntervalKey, std::vector<term::Atom>> intervals;  ///< sorted by (low, high)
   std::map<algebra::Polynomial, unsigned, PolynomialLess> reciprocals;
   std::vector<std::pair<term::Atom, unsigned>> literals;
+  /// Reciprocal interval products of literal length > 0; what they stand for is in `reciprocals`.
+  std::vector<std::pair<term::Atom, unsigned>> expanded;
 
   [[nodiscard]] FactorialConstants constants(const std::vector<long>& key) const;
 };
@@ -51,6 +53,14 @@ struct AtomGroups {
 [[nodiscard]] bool is_literal(const term::Atom& atom);
 /// Its value: a polynomial with a rational constant (0 for rfact of a negative number).
 [[nodiscard]] algebra::Factored literal_value(const algebra::RingPtr& ring, const term::Atom& atom);
+
+/// 1/(a+i) ... 1/(a+j-1) of a reciprocal interval product of literal length as constant * product
+/// of reciprocals of primitive polynomials. Throws std::domain_error when a factor is 0.
+struct Expanded {
+  mpq_class constant = 1;
+  std::vector<term::Atom> reciprocals;
+};
+[[nodiscard]] Expanded expanded_reciprocal(const term::Atom& atom);
 
 /// The linear factors that a law gives when it is applied several times:
 /// (form + 1) ... (form + count), and for an interval atom's a: (a + t) for from <= t < to, where

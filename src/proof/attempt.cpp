@@ -101,14 +101,19 @@ class Attempter {
             : "an onset: explicit values until the condition holds, the argument from there on");
   }
 
+  /// A term at an end may vanish only from a later n on, so that a balance which fails does not end
+  /// the search; if none holds, the first outcome stands.
   bool conclude() {
+    std::optional<Attempt> first_failure;
     for (long n = least_; n <= least_ + more_thresholds; ++n) {
       deadline_.check();
+      out_.outcome = Attempt::Outcome::stuck;
       out_.draft.threshold = n;
       if (terms_.range && !choose(n)) continue;
       if (balances(n)) return true;
-      if (out_.outcome != Attempt::Outcome::stuck) return false;
+      if (out_.outcome != Attempt::Outcome::stuck && !first_failure) first_failure = out_;
     }
+    if (first_failure) out_ = std::move(*first_failure);
     return false;
   }
 

@@ -3,6 +3,8 @@
 
 #include "proof/balancing.hpp"
 
+#include <algorithm>
+
 #include "proof/atom_keys.hpp"
 
 namespace sumwright::proof::building {
@@ -19,6 +21,31 @@ std::optional<term::Atom> vanishing_atom(const Facts& facts, const Product& prod
   for (const auto& [atom, e] : product.atoms)
     if (atom.kind == AtomKind::reciprocal_factorial && facts.implies(-atom.argument - 1))
       return atom;
+  return std::nullopt;
+}
+
+struct ZeroPair {
+  term::Affine factor;
+  term::Atom atom;
+};
+
+/// A factor L of the coefficient, affine in integer symbols, and an rfact that is 0 wherever L is
+/// not: m/(-m)! for m >= 0.
+std::optional<ZeroPair> vanishing_pair(const Setting& setting, const Facts& facts,
+                                       const Product& product) {
+  for (const auto& [p, e] : product.coefficient.factors) {
+    term::Affine form;
+    if (e <= 0 || term::involves_rational_parameter(setting, p) || !term::to_affine(p, form))
+      continue;
+    const auto unit = [](long c) { return c == 1 || c == -1; };
+    if (std::none_of(form.coefficients.begin(), form.coefficients.end(), unit)) continue;
+    for (const auto& [atom, count] : product.atoms) {
+      if (atom.kind != AtomKind::reciprocal_factorial) continue;
+      const term::Affine negative = -atom.argument - 1;
+      if (facts.with(form - 1).implies(negative) && facts.with(-form - 1).implies(negative))
+        return ZeroPair{form, atom};
+    }
+  }
   return std::nullopt;
 }
 
@@ -60,6 +87,11 @@ std::optional<BalanceDraft> balance(const Setting& setting, const Facts& facts,
     if (term.zero_coefficient) continue;
     term.zero_atom = vanishing_atom(facts, term.product);
     if (term.zero_atom) continue;
+    if (const std::optional<ZeroPair> pair = vanishing_pair(setting, facts, term.product)) {
+      term.zero_atom = pair->atom;
+      term.zero_factor = pair->factor;
+      continue;
+    }
     live.push_back(term.product);
     position.push_back(i);
   }

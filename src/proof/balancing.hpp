@@ -25,6 +25,7 @@ struct TermDraft {
   // Filled by `balance`:
   bool zero_coefficient = false;
   std::optional<term::Atom> zero_atom;
+  std::optional<term::Affine> zero_factor;  ///< with zero_atom, when it vanishes only beside this
   std::size_t group = 0;
   std::optional<Bringing> bringing;
 };

@@ -27,7 +27,7 @@ constexpr long first_values = 12;
 class Builder {
  public:
   Builder(std::shared_ptr<const claim::Claim> claim, const BuildOptions& options)
-      : claim_(std::move(claim)), options_(options) {}
+      : claim_(std::move(claim)), evaluated_(claim_), options_(options) {}
 
   Proof run() {
     proof_.claim = claim_;
@@ -41,6 +41,7 @@ class Builder {
       return undecided("an equality of two sums needs a common recurrence of both sides",
                        "sum = sum: a common left multiple of the recurrences of both sides");
     if (!make_terms()) return proof_;
+    if (terms_->finite && refuted_with_finite_ends()) return proof_;
     for (const claim::Assumption& a : claim_->assumptions)
       if (names_symbol(*a.left, claim_->running) || names_symbol(*a.right, claim_->running))
         return undecided(
@@ -59,6 +60,8 @@ class Builder {
 
   Proof undecided(const std::string& reason, const std::string& settle) {
     proof_.verdict = Verdict::undecided;
+    // What the ends would give is not known before the argument is complete.
+    if (claim_->is_equality() || claim_->is_question()) proof_.right_side_text.clear();
     proof_.reason = reason;
     proof_.would_settle = settle;
     return proof_;
@@ -71,7 +74,7 @@ class Builder {
     const bool equality = claim_->is_equality();
     std::optional<term::Difference> d;
     try {
-      d = term::refute(*claim_, first_values, 6, also, options_.deadline);
+      d = term::refute(*evaluated_, first_values, 6, also, options_.deadline);
     } catch (const std::length_error&) {
       return false;  // values too large to compute decide nothing
     }
@@ -86,9 +89,22 @@ class Builder {
     return true;
   }
 
+  /// An infinite sum has values once it is known to be a finite one.
+  bool refuted_with_finite_ends() {
+    auto finite = std::make_shared<claim::Claim>(*claim_);
+    finite->sum.over[0] = terms_->finite->range;
+    evaluated_ = std::move(finite);
+    return !claim_->is_question() && refuted_by_values({});
+  }
+
   bool make_terms() {
     stage("terms");
-    terms_ = convert_terms(claim_, proof_);
+    std::vector<mpz_class> suspects;
+    terms_ = convert_terms(claim_, proof_, suspects);
+    if (!terms_ && !suspects.empty() && !claim_->is_question()) {
+      std::erase_if(suspects, [&](const mpz_class& n) { return n < claim_->from; });
+      refuted_by_values(suspects);
+    }
     return terms_ != nullptr;
   }
 
@@ -124,12 +140,9 @@ class Builder {
       }
     }
     if (terms_->range && brought.has_certificate) {
-      const search::IdentityCheck check =
-          search::verify_identity(terms_->setting.ring, shift_quotients(*terms_),
-                                  brought.draft.coefficients, *brought.draft.certificate);
-      if (!check.holds) {
-        diagnose_identity(*terms_, *claim_, brought.draft, check.residue, options_.deadline,
-                          proof_);
+      const search::IdentityCheck check = identity(brought.draft);
+      if (!check.holds && !belongs_to_cleared(brought)) {
+        diagnose_identity(*terms_, *evaluated_, brought, check.residue, options_.deadline, proof_);
         return proof_;
       }
     }
@@ -143,7 +156,7 @@ class Builder {
   /// from the closed form. Otherwise the proof says that it fails, or that it is not decided.
   bool recurrence_settled(const EvidenceDraft& brought) {
     const auto point =
-        term::refute(as_recurrence_claim(*claim_), first_values, 6, {}, options_.deadline);
+        term::refute(as_recurrence_claim(*evaluated_), first_values, 6, {}, options_.deadline);
     if (!point && holds_for_closed_form(*terms_, brought)) return true;
     if (!point) {
       undecided(
@@ -304,8 +317,9 @@ class Builder {
         assemble(*terms_, tried.draft, equality, proof_);
         return established();
       case Attempt::Outcome::identity_fails:
-        diagnose_identity(*terms_, *claim_, tried.draft.evidence, tried.draft.telescoping->residue,
-                          options_.deadline, proof_);
+        diagnose_identity(*terms_, *evaluated_,
+                          {tried.draft.evidence, true, Poly(terms_->setting.ring, mpz_class(1))},
+                          tried.draft.telescoping->residue, options_.deadline, proof_);
         return proof_;
       case Attempt::Outcome::ends_fail:
         return ends_fail(tried, equality);
@@ -320,6 +334,22 @@ class Builder {
     return undecided(tried.why, tried.rule);
   }
 
+  [[nodiscard]] search::IdentityCheck identity(const EvidenceDraft& draft) const {
+    return search::verify_identity(terms_->setting.ring, shift_quotients(*terms_),
+                                   draft.coefficients, *draft.certificate);
+  }
+
+  /// A recurrence with denominators stands for the one with them cleared, and its certificate may
+  /// be given for either: taken as the other one, if that is right.
+  [[nodiscard]] bool belongs_to_cleared(BroughtEvidence& brought) const {
+    if (brought.cleared.is_one()) return false;
+    EvidenceDraft other = brought.draft;
+    other.certificate = *other.certificate / RationalFunction(brought.cleared);
+    if (!identity(other).holds) return false;
+    brought.draft = std::move(other);
+    return true;
+  }
+
   Proof established() {
     for (const Condition& c : proof_.conditions)
       if (c.settled == Settled::open)
@@ -329,13 +359,16 @@ class Builder {
   }
 
   void describe_evidence(const ArgumentDraft& draft) {
+    proof_.evidence_brought = draft.evidence.brought;
     proof_.recurrence_text.clear();
     for (const Poly& a : draft.evidence.coefficients)
       proof_.recurrence_text.push_back(term::claim_text(algebra::factor(a)));
     // A claimed right side is printed as the theorem states it, else as the ends give it.
     const claim::ExpressionPtr& stated = proof_.claim->evidence.right_side;
-    proof_.right_side_text =
-        !proof_.claim->is_equality() && stated ? claim::to_text(*stated) : draft.right_side_text;
+    const bool claimed = !claim_->is_equality() && !claim_->is_question();
+    proof_.right_side_text = draft.right_side_text;
+    if (!proof_.claim->is_equality() && stated) proof_.right_side_text = claim::to_text(*stated);
+    if (claimed && !stated) proof_.right_side_text = "0";
     if (draft.evidence.certificate)
       proof_.certificate_text = draft.evidence.certificate->is_zero()
                                     ? "0"
@@ -344,7 +377,7 @@ class Builder {
 
   /// The identity is right, but sum a_i S(n+i) is not b.
   Proof ends_fail(const Attempt& tried, bool equality) {
-    const claim::Claim recurrence = as_recurrence_claim(*claim_);
+    const claim::Claim recurrence = as_recurrence_claim(*evaluated_);
     std::vector<mpz_class> also;
     if (tried.outcome == Attempt::Outcome::initial_fails) also.emplace_back(tried.at);
     const auto point = term::refute(recurrence, first_values, 6, also, options_.deadline);
@@ -387,6 +420,7 @@ class Builder {
   }
 
   std::shared_ptr<const claim::Claim> claim_;
+  std::shared_ptr<const claim::Claim> evaluated_;  ///< with finite ends, for values
   const BuildOptions& options_;
   std::unique_ptr<Terms> terms_;
   Proof proof_;

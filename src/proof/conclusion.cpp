@@ -121,7 +121,8 @@ class LiteralRange {
   }
 
   std::optional<LiteralSumDraft> run() {
-    if (!settle(false, out_.low, out_.below) || !settle(true, out_.high, out_.above)) {
+    const bool literal = settle(false, out_.low, out_.below) && settle(true, out_.high, out_.above);
+    if (!literal && !settle_beside_parameter()) {
       why_ = fmt::format("at {} = {} the sum runs over a range whose length depends on a parameter",
                          setting_.symbols[term::running].name, out_.at);
       return std::nullopt;
@@ -149,11 +150,53 @@ class LiteralRange {
       return true;
     }
     for (const long candidate : candidates(end, upper)) {
-      vanish = vanishing(setting_.hypotheses, mismatches(end, candidate, upper), summand_);
+      vanish = vanishing(setting_.hypotheses,
+                         mismatches(end, Affine::of(setting_.size(), candidate), upper), summand_);
       value = candidate;
       if (vanish) return true;
     }
     return false;
+  }
+
+  /// Both ends a literal distance from one form in the parameters.
+  bool settle_beside_parameter() {
+    for (const Affine& low : forms(low_, false))
+      for (const Affine& high : forms(high_, true)) {
+        const Affine length = high - low;
+        if (!length.is_constant() || length.constant < -1 || length.constant > 50) continue;
+        std::optional<VanishingDraft> below;
+        std::optional<VanishingDraft> above;
+        if (!ends_at(low_, low, false, below) || !ends_at(high_, high, true, above)) continue;
+        out_.base = low;
+        out_.low = 0;
+        out_.high = length.constant;
+        out_.below = std::move(below);
+        out_.above = std::move(above);
+        return true;
+      }
+    return false;
+  }
+
+  /// The author's end and the ends of the support, where they are affine.
+  [[nodiscard]] std::vector<Affine> forms(const term::End& end, bool upper) const {
+    std::vector<Affine> out;
+    if (end.affine) out.push_back(*end.affine);
+    for (const Product& f : summand_)
+      for (const auto& [atom, e] : f.atoms) {
+        if (atom.kind != AtomKind::reciprocal_factorial) continue;
+        if (atom.argument.coefficients[term::index] != (upper ? -1 : 1)) continue;
+        Affine rest = atom.argument;
+        rest.coefficients[term::index] = 0;
+        out.push_back(upper ? rest : -rest);
+      }
+    return out;
+  }
+
+  bool ends_at(const term::End& end, const Affine& target, bool upper,
+               std::optional<VanishingDraft>& vanish) const {
+    if (end.affine && *end.affine == target) return true;
+    vanish = vanishing(setting_.hypotheses, mismatches(end, target, upper), summand_);
+    return vanish.has_value();
   }
 
   /// Literal bounds: of the author's end itself (floors) and of the support.
@@ -182,16 +225,16 @@ class LiteralRange {
     return out;
   }
 
-  [[nodiscard]] std::vector<term::Conjunction> mismatches(const term::End& end, long target,
-                                                          bool upper) const {
+  [[nodiscard]] std::vector<term::Conjunction> mismatches(const term::End& end,
+                                                          const Affine& target, bool upper) const {
     const Affine k = Affine::symbol(setting_.size(), term::index);
     std::vector<term::Conjunction> out;
     for (term::Conjunction c : end.outside) {
-      c.push_back(upper ? -k + target : k - target);
+      c.push_back(upper ? target - k : k - target);
       out.push_back(c);
     }
     for (term::Conjunction c : end.inside) {
-      c.push_back(upper ? k - (target + 1) : -k + (target - 1));
+      c.push_back(upper ? k - target - 1 : target - k - 1);
       out.push_back(c);
     }
     return out;
@@ -247,18 +290,19 @@ class InitialValueBuilder {
     }
     out_.sums.push_back(sum);
     const Affine at = Affine::of(setting_.size(), n);
+    const Affine base = sum.base.value_or(Affine::of(setting_.size(), 0));
     for (long k = sum.low; k <= sum.high; ++k)
-      for (std::size_t j = 0; j < context_.summand.size(); ++j) add_term(i, at, k, j);
+      for (std::size_t j = 0; j < context_.summand.size(); ++j) add_term(i, at, base + k, j);
     return true;
   }
 
-  void add_term(unsigned i, const Affine& at, long k, std::size_t j) {
+  void add_term(unsigned i, const Affine& at, const Affine& k, std::size_t j) {
     TermDraft term;
     term.origin = Origin::value;
     term.shift = i;
     term.piece = j;
-    term.point = Affine::of(setting_.size(), k);
-    term.text = fmt::format("F({}, {})", at.constant, k);
+    term.point = k;
+    term.text = fmt::format("F({}, {})", at.constant, term::text(setting_, k));
     term.product = term::substitute(setting_.ring, context_.summand[j], term::running, at);
     term.product = term::substitute(setting_.ring, term.product, term::index, *term.point);
     if (!context_.equality)

@@ -40,6 +40,7 @@ struct LiteralSumDraft {
   long high = -1;
   std::optional<VanishingDraft> below;
   std::optional<VanishingDraft> above;
+  std::optional<term::Affine> base = {};  ///< LiteralSum::base
 };
 
 struct InitialDraft {

@@ -151,8 +151,29 @@ claim::Claim as_recurrence_claim(const claim::Claim& claim) {
   return out;
 }
 
-void diagnose_identity(const Terms& terms, const claim::Claim& claim, const EvidenceDraft& evidence,
-                       const Polynomial& residue, const algebra::Deadline& deadline, Proof& proof) {
+namespace {
+
+/// How a wrong certificate of a right recurrence is related to the right one; `cleared` times what
+/// the author wrote is what both stand for here.
+std::string known_certificate(const RationalFunction& right, const RationalFunction& brought,
+                              const Polynomial& cleared) {
+  const std::string text = term::claim_text((right / RationalFunction(cleared)).factored());
+  if (right.is_zero() || brought.is_zero()) return "; a certificate for it is " + text;
+  const RationalFunction factor = brought / right;
+  if (factor.numerator().depends_on(term::index) || factor.denominator().depends_on(term::index))
+    return "; a certificate for it is " + text;
+  return fmt::format(
+      "; the certificate belongs to this recurrence multiplied by {}; the one for the recurrence "
+      "as it stands is {}",
+      term::claim_text(factor.factored()), text);
+}
+
+}  // namespace
+
+void diagnose_identity(const Terms& terms, const claim::Claim& claim,
+                       const BroughtEvidence& brought, const Polynomial& residue,
+                       const algebra::Deadline& deadline, Proof& proof) {
+  const EvidenceDraft& evidence = brought.draft;
   proof.verdict = Verdict::refuted;
   proof.subject = Subject::evidence;
   proof.residue = leading_monomials(residue);
@@ -167,7 +188,7 @@ void diagnose_identity(const Terms& terms, const claim::Claim& claim, const Evid
     proof.reason =
         "the certificate is wrong: it does not prove this recurrence, which holds at every "
         "value tried";
-    if (other) proof.reason += "; a certificate for it is " + term::claim_text(other->factored());
+    if (other) proof.reason += known_certificate(*other, *evidence.certificate, brought.cleared);
   } else {
     const std::string belongs = recurrence_of_certificate(terms, evidence, deadline);
     const std::string where = fmt::format("{} = {}", recurrence_point->at.front().first,

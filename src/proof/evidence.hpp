@@ -29,9 +29,9 @@ struct BroughtEvidence {
 
 /// Fills proof.reason, residue and counterexample for a certificate whose identity fails: says
 /// which part is wrong as far as that can be told.
-void diagnose_identity(const Terms& terms, const claim::Claim& claim, const EvidenceDraft& evidence,
-                       const algebra::Polynomial& residue, const algebra::Deadline& deadline,
-                       Proof& proof);
+void diagnose_identity(const Terms& terms, const claim::Claim& claim,
+                       const BroughtEvidence& brought, const algebra::Polynomial& residue,
+                       const algebra::Deadline& deadline, Proof& proof);
 
 /// A difference found by evaluation, as part of a Proof.
 [[nodiscard]] Counterexample from_difference(const term::Difference& difference,

@@ -97,11 +97,8 @@ class Shifter {
     const Affine& target = gap > 0 ? right : left;
     Factored factor;
     factor.multiply(b, std::abs(gap));
-    std::vector<Need> needs;
-    if (!b.is_constant())
-      needs.push_back({ConditionKind::factorial_argument, target, std::nullopt});
     add(gap > 0 ? Side::left : Side::right, term::power_atom(b, gap > 0 ? left : right),
-        term::power_atom(b, target), std::abs(gap), factor, needs);
+        term::power_atom(b, target), std::abs(gap), factor, power_needs(b, target));
   }
 
   void intervals(std::vector<Atom> left, std::vector<Atom> right) {

@@ -126,6 +126,8 @@ struct AtomStep {
   unsigned multiplicity = 1;  ///< how many of the copies of `from` are rewritten by this step
   bool literal = false;
   Factored factor;  ///< product of the linear factors of the law; constant may be a fraction
+  /// A literal step of a reciprocal interval product: from = factor * these reciprocals.
+  std::vector<Atom> reciprocals;
   std::vector<std::string> conditions;
   std::optional<Nonzero> nonzero;  ///< for laws that need a nonzero base or factor
 };
@@ -164,7 +166,10 @@ struct BalanceTerm {
   Product product;        ///< after substituting the index; in the remaining symbols
   std::optional<std::string>
       zero;  ///< why it is 0: "polynomial factor", or the id of a support condition
-  std::optional<Atom> zero_atom;     ///< the rfact with negative argument when that is the reason
+  std::optional<Atom> zero_atom;  ///< the rfact with negative argument when that is the reason
+  /// With zero_atom: a factor of the coefficient; the argument is negative only where it is not 0.
+  /// It has an integer symbol with coefficient 1 or -1.
+  std::optional<Affine> zero_factor;
   std::size_t group = 0;             ///< index into Balance::groups when not zero
   std::optional<Instance> instance;  ///< product = polynomial * base of the group
 };
@@ -218,6 +223,14 @@ struct Vanishing {
   std::string condition;
 };
 
+/// In place of a range with an infinite end: F(n,k) = 0 beyond the ends that replace infinite ones.
+/// What a claim says of an infinite range: for all finite ends outside of which every term is 0.
+struct FiniteRange {
+  claim::Range range;
+  std::optional<Vanishing> below;  ///< set when the author's lower end is infinite
+  std::optional<Vanishing> above;
+};
+
 /// sum over the author's range at n+i of F(n+i,k)
 ///   = sum over low..high of F(n+i,k) + low_points terms below low + high_points terms above high.
 struct RangeStep {
@@ -231,13 +244,22 @@ struct RangeStep {
 
 // ---------------------------------------------------------------- conclusion
 
-/// S at one literal n: the index runs over literal low..high after leaving out vanishing terms.
+/// S at one literal n: the index runs over literal low..high, or base + low .. base + high, after
+/// leaving out vanishing terms.
 struct LiteralSum {
   long at = 0;  ///< the n of S(n)
   long low = 0;
   long high = -1;                  ///< high < low: no nonzero terms
   std::optional<Vanishing> below;  ///< set when the author's end is not literally `low`
   std::optional<Vanishing> above;
+  std::optional<Affine> base = {};  ///< in integer parameters; none: 0
+
+  /// base + offset; `symbols` is the number of them.
+  [[nodiscard]] Affine point(std::size_t symbols, long offset) const {
+    Affine out = base ? *base : Affine{std::vector<long>(symbols, 0), 0};
+    out.constant += offset;
+    return out;
+  }
 };
 
 /// One n checked term by term: S(at) against the closed form (equalities: one sum), or
@@ -277,7 +299,8 @@ struct Proof {
   std::optional<Counterexample> counterexample;  ///< refuted
   std::string residue;  ///< wrong certificate: leading monomials of the residue
 
-  /// The recurrence proved, as claim-language text: what `find` prints.
+  /// The recurrence proved, as claim-language text: what `find` prints. Undecided: a candidate,
+  /// whose right side is not known (empty) unless the author claims one.
   std::vector<std::string> recurrence_text;
   std::string right_side_text;  ///< as the claim states it, else as the ends give it
   std::string certificate_text;
@@ -292,8 +315,9 @@ struct Proof {
   /// The right side that the ends give, grouped by similarity, for readers.
   std::vector<Product> boundary;
 
-  std::optional<Telescoping> telescoping;  ///< none only when the claim has no index
-  std::vector<RangeStep> ranges;           ///< one per shift 0..J
+  std::optional<FiniteRange> finite_range;  ///< set when the author's range has an infinite end
+  std::optional<Telescoping> telescoping;   ///< none only when the claim has no index
+  std::vector<RangeStep> ranges;            ///< one per shift 0..J
   /// Recurrence claims: ends + explicit points - weight * b = 0, for n >= threshold, so that
   /// sum_i a_i S(n+i) = b.
   std::optional<Balance> ends;
@@ -305,6 +329,11 @@ struct Proof {
       initial;  ///< from..threshold+J-1 (equalities), from..threshold-1 (recurrences)
 
   std::vector<Condition> conditions;
+
+  /// The range that is summed over: the author's, with finite ends. For claims with an index.
+  [[nodiscard]] const claim::Range& summed_range() const {
+    return finite_range ? finite_range->range : claim->sum.over.at(0);
+  }
 };
 
 }  // namespace sumwright::proof

@@ -206,11 +206,13 @@ bool all_hold(const Setting& setting, const Facts& facts, const std::vector<Need
   for (const Need& need : needs) {
     if (need.nonnegative) {
       if (std::find(known.begin(), known.end(), *need.nonnegative) != known.end()) continue;
-      if (!facts.implies(*need.nonnegative)) {
+      const bool by_base =
+          need.or_nonzero && term::decide_nonzero(setting, facts, *need.or_nonzero).has_value();
+      if (!by_base && !facts.implies(*need.nonnegative)) {
         if (failing != nullptr) *failing = term::text(setting, *need.nonnegative) + " >= 0";
         return false;
       }
-      known.push_back(*need.nonnegative);
+      if (!need.or_nonzero) known.push_back(*need.nonnegative);
     }
     std::string factor;
     if (need.nonzero && !term::decide_nonzero(setting, facts, *need.nonzero, &factor)) {

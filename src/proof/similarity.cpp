@@ -56,6 +56,7 @@ class Bringer {
     AtomGroups left(ring_, out_.product);
     AtomGroups right(ring_, out_.base);
     literals(left);
+    expansions(left);
     if (!factorials(left, right) || !powers(left, right) || !intervals(left, right) ||
         !reciprocals(left, right))
       return std::nullopt;
@@ -73,6 +74,22 @@ class Bringer {
       Step step = step_from(atom);
       step.multiplicity = exponent;
       step.factor = literal_value(ring_, atom);
+      out_.steps.push_back(step);
+    }
+  }
+
+  /// Reciprocal interval products of literal length become reciprocals of their factors.
+  void expansions(const AtomGroups& groups) {
+    for (const auto& [atom, exponent] : groups.expanded) {
+      const Expanded value = expanded_reciprocal(atom);
+      Step step = step_from(atom);
+      step.multiplicity = exponent;
+      step.factor.constant = value.constant;
+      step.reciprocals = value.reciprocals;
+      Factored denominator;
+      for (const Atom& one : value.reciprocals) denominator.multiply(one.base, 1);
+      if (!denominator.factors.empty())
+        step.needs.push_back(not_zero(denominator, ConditionKind::definedness));
       out_.steps.push_back(step);
     }
   }
@@ -151,7 +168,7 @@ class Bringer {
       step.to = term::power_atom(base, r->second);
       step.steps = static_cast<unsigned>(gap.constant);
       step.factor = single(base, gap.constant);
-      if (!base.is_constant()) step.needs.push_back(at_least_zero(r->second));
+      step.needs = power_needs(base, r->second);
       add(step);
     }
     return true;
@@ -225,6 +242,13 @@ class Bringer {
 };
 
 }  // namespace
+
+std::vector<Need> power_needs(const Polynomial& base, const Affine& exponent) {
+  if (base.is_constant()) return {};
+  Need need = at_least_zero(exponent);
+  need.or_nonzero = single(base);
+  return {need};
+}
 
 std::vector<Need> Bringing::needs() const {
   std::vector<Need> out;

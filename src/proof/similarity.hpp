@@ -17,12 +17,19 @@
 
 namespace sumwright::proof::building {
 
-/// A condition that an argument needs on its region: form >= 0, or polynomial != 0.
+/// A condition that an argument needs on its region: form >= 0, or polynomial != 0; both when both
+/// are set.
 struct Need {
   ConditionKind kind = ConditionKind::factorial_argument;
   std::optional<term::Affine> nonnegative;
   std::optional<algebra::Factored> nonzero;
+  /// The law of a power holds for every exponent when its base is not 0: in place of `nonnegative`.
+  std::optional<algebra::Factored> or_nonzero = {};
 };
+
+/// base^L steps by its law where L >= 0 or base != 0; nothing to ask of a numeric base.
+[[nodiscard]] std::vector<Need> power_needs(const algebra::Polynomial& base,
+                                            const term::Affine& exponent);
 
 struct Step {
   AtomStep::Side side = AtomStep::Side::left;
@@ -32,6 +39,7 @@ struct Step {
   unsigned multiplicity = 1;
   algebra::Factored factor;  ///< of one copy
   std::vector<Need> needs;
+  std::vector<term::Atom> reciprocals = {};  ///< AtomStep::reciprocals
 };
 
 struct UnitDraft {

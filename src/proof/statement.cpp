@@ -21,30 +21,68 @@ void undecided(Proof& proof, const std::string& reason, const std::string& settl
   proof.would_settle = settle;
 }
 
-/// The author's range, added to the region where it is a conjunction.
-std::optional<AuthorRange> author_range(const term::Setting& setting, term::Facts& region,
-                                        Proof& proof) {
+bool is_finite(const claim::Bound& bound) { return bound.kind == claim::Bound::Kind::finite; }
+
+/// The finite ends of the author's range, added to the region where they are a conjunction.
+bool add_finite_ends(const term::Setting& setting, term::Facts& region, Proof& proof) {
   const claim::Range& r = setting.claim->sum.over[0];
-  for (const claim::Bound* b : {&r.low, &r.high})
-    if (b->kind != claim::Bound::Kind::finite) {
-      undecided(proof, "a range without a finite end needs a proved finite one",
-                "a rule for infinite ranges, at " + place_text(*setting.claim, b->place));
-      return std::nullopt;
+  for (const claim::Bound* bound : {&r.low, &r.high}) {
+    if (!is_finite(*bound)) continue;
+    const std::optional<term::End> end = term::make_end(setting, *bound, bound == &r.high);
+    if (!end) {
+      undecided(proof, "an end of the range nests floor in a way that is not linear",
+                "a rule for nested floors in an end, at " + place_text(*setting.claim, r.place));
+      return false;
     }
-  const std::optional<term::End> low = term::make_end(setting, r.low, false);
-  const std::optional<term::End> high = term::make_end(setting, r.high, true);
-  if (!low || !high) {
-    undecided(proof, "an end of the range nests floor in a way that is not linear",
-              "a rule for nested floors in an end, at " + place_text(*setting.claim, r.place));
-    return std::nullopt;
-  }
-  for (const term::End* end : {&*low, &*high})
     if (end->inside.size() == 1)
       for (const term::Affine& form : end->inside[0]) region.add(form);
-  return AuthorRange{*low, *high};
+  }
+  return true;
 }
 
-bool settled(const Terms& terms, Proof& proof) {
+/// The author's range, or the one that its infinite ends are replaced by.
+bool settle_range(Terms& terms, Proof& proof) {
+  const term::Setting& setting = terms.setting;
+  const claim::Range* r = &setting.claim->sum.over[0];
+  if (!is_finite(r->low) || !is_finite(r->high)) {
+    std::string why;
+    terms.finite = finite_ends(setting, terms.region, *r, terms.summand.products, why);
+    if (!terms.finite) {
+      undecided(proof, why,
+                "a finite end for the range, at " + place_text(*setting.claim, r->place));
+      return false;
+    }
+    r = &terms.finite->range;
+  }
+  terms.range =
+      AuthorRange{*term::make_end(setting, r->low, false), *term::make_end(setting, r->high, true)};
+  return true;
+}
+
+/// Where c x + d, x the running variable or the index, is 0 or turns negative.
+void add_suspect(const term::Affine& form, std::vector<mpz_class>& out) {
+  const long by_running = form.coefficients[term::running];
+  const long slope = by_running != 0 ? by_running : form.coefficients[term::index];
+  if (slope == 0) return;
+  mpz_class root;
+  mpz_fdiv_q(root.get_mpz_t(), mpz_class(-form.constant).get_mpz_t(), mpz_class(slope).get_mpz_t());
+  for (const int beside : {0, 1}) out.emplace_back(root + beside);
+}
+
+/// The values of the running variable at which a condition in it or in the index alone may fail (an
+/// index reaches a value where the running variable does, or soon after, in most ranges).
+std::vector<mpz_class> suspects_of(const term::Requirement& open) {
+  std::vector<mpz_class> out;
+  if (open.nonnegative) add_suspect(*open.nonnegative, out);
+  if (!open.nonzero) return out;
+  for (const auto& [p, e] : open.nonzero->factors) {
+    term::Affine form;
+    if (term::to_affine(p, form)) add_suspect(form, out);
+  }
+  return out;
+}
+
+bool settled(const Terms& terms, Proof& proof, std::vector<mpz_class>& suspects) {
   const term::Requirement* open = terms.summand.open();
   const char* what = "summand";
   if (open == nullptr && terms.closed) {
@@ -57,6 +95,7 @@ bool settled(const Terms& terms, Proof& proof) {
     return false;
   }
   assemble_conversion(terms, proof);
+  suspects = suspects_of(*open);
   const std::string condition = open->nonnegative
                                     ? term::text(terms.setting, *open->nonnegative) + " >= 0"
                                     : open->nonzero->to_string() + " != 0";
@@ -99,22 +138,26 @@ bool names_symbol(const claim::Expression& e, const std::string& name) {
   return false;
 }
 
-std::unique_ptr<Terms> convert_terms(const std::shared_ptr<const claim::Claim>& claim,
-                                     Proof& proof) {
+std::unique_ptr<Terms> convert_terms(const std::shared_ptr<const claim::Claim>& claim, Proof& proof,
+                                     std::vector<mpz_class>& suspects) {
   term::Setting setting = term::make_setting(claim);
   proof.symbols = setting.symbols;
-  std::optional<AuthorRange> range;
   term::Facts region = setting.from(proof.from);
-  if (setting.has_index) {
-    range = author_range(setting, region, proof);
-    if (!range) return nullptr;
+  if (setting.has_index && !add_finite_ends(setting, region, proof)) return nullptr;
+  if (region.contradictory()) {
+    undecided(proof,
+              fmt::format("the range is empty for every {}, so that the sum is 0", claim->running),
+              fmt::format("a range with terms in it, at {}",
+                          place_text(*claim, claim->sum.over.at(0).place)));
+    return nullptr;
   }
   term::Conversion summand = term::convert(setting, region, claim->sum.summand);
   std::optional<term::Conversion> closed;
   if (claim->closed) closed = term::convert(setting, setting.from(proof.from), claim->closed);
-  auto out = std::make_unique<Terms>(
-      Terms{std::move(setting), range, region, proof.from, std::move(summand), std::move(closed)});
-  if (!settled(*out, proof)) return nullptr;
+  auto out = std::make_unique<Terms>(Terms{std::move(setting), std::nullopt, std::nullopt, region,
+                                           proof.from, std::move(summand), std::move(closed)});
+  if (!settled(*out, proof, suspects)) return nullptr;
+  if (out->setting.has_index && !settle_range(*out, proof)) return nullptr;
   return out;
 }
 

@@ -11,10 +11,11 @@
 namespace sumwright::proof::building {
 
 /// Converts summand and closed form on the claim's own region. Null when something is not settled:
-/// then proof.verdict is undecided, with the reason and the place. Fills proof.symbols. Throws
-/// claim::InputError when a factor is not hypergeometric.
+/// then proof.verdict is undecided, with the reason and the place, and `suspects` gets the values
+/// of the running variable at which the open condition fails or may fail. Fills proof.symbols.
+/// Throws claim::InputError when a factor is not hypergeometric.
 [[nodiscard]] std::unique_ptr<Terms> convert_terms(const std::shared_ptr<const claim::Claim>& claim,
-                                                   Proof& proof);
+                                                   Proof& proof, std::vector<mpz_class>& suspects);
 
 /// The claim with this recurrence, read back from the text that is printed for it.
 [[nodiscard]] std::shared_ptr<const claim::Claim> with_recurrence(

@@ -204,23 +204,31 @@ class Drafter {
     return false;
   }
 
-  /// q0 = R F / B.
-  [[nodiscard]] Factored q0() const {
+  /// q0 = R F / B; nothing when F and B have no quotient.
+  [[nodiscard]] std::optional<Factored> q0() const {
     Factored out = certificate_.factored();
-    if (summand_.size() == 1) {
-      out.multiply(*term::ratio(ring_, summand_[0], out_.base));
-      return out;
-    }
     RationalFunction total(ring_, mpq_class(0));
-    for (const Product& f : summand_)
-      total = total + RationalFunction(ring_, *term::ratio(ring_, f, out_.base));
+    for (const Product& f : summand_) {
+      const std::optional<Factored> quotient = term::ratio(ring_, f, out_.base);
+      if (!quotient) return std::nullopt;
+      if (summand_.size() == 1) {
+        out.multiply(*quotient);
+        return out;
+      }
+      total = total + RationalFunction(ring_, *quotient);
+    }
     out.multiply(total.factored());
     return out;
   }
 
   bool absorb_denominators() {
     for (int round = 0; round < 200; ++round) {
-      q0_ = q0();
+      const std::optional<Factored> quotient = q0();
+      if (!quotient) {
+        why_ = "a factorial of the summand has no value in the range";
+        return false;
+      }
+      q0_ = *quotient;
       if (q0_.is_zero()) return true;
       const Polynomial* factor = nullptr;
       for (const auto& [p, e] : q0_.factors)

@@ -3,6 +3,7 @@
 
 #include <fmt/format.h>
 
+#include "writers/coq_comments.hpp"
 #include "writers/coq_sections.hpp"
 #include "writers/coq_statement.hpp"
 #include "writers/coq_steps.hpp"
@@ -43,7 +44,8 @@ class BalanceText {
  private:
   void bases() {
     for (const proof::BalanceGroup& g : balance_.groups)
-      out_ += fmt::format("Definition {} ({} : Z) : K :=\n  ({})%K.\n\n", g.base.id, names_.n,
+      out_ += note("A class of similar terms: each is a polynomial times this.") +
+              fmt::format("Definition {} ({} : Z) : K :=\n  ({})%K.\n\n", g.base.id, names_.n,
                           product(g.base.product, scope_));
   }
 
@@ -57,8 +59,8 @@ class BalanceText {
   }
 
   [[nodiscard]] std::string piece_at(const proof::BalanceTerm& t, const std::string& n) const {
-    if (names_.index) return fmt::format("F{} {}%Z {}", t.piece + 1, n, at(t.point));
-    return fmt::format("F{} {}%Z", t.piece + 1, n);
+    if (names_.index) return fmt::format("F{} {} {}", t.piece + 1, n, at(t.point));
+    return fmt::format("F{} {}", t.piece + 1, n);
   }
 
   /// The term as it stands in the recurrence.
@@ -66,11 +68,9 @@ class BalanceText {
     const std::string& n = names_.n;
     switch (t.origin) {
       case Origin::upper_end:
-        return fmt::format("up (inj {0}) (inj {1}) * c (inj {0}) (inj {1} + inj 1) * base {0} {1}",
-                           n, at(t.point));
+        return "right_end " + n;
       case Origin::lower_end:
-        return fmt::format("- (down (inj {0}) (inj {1}) * c (inj {0}) (inj {1}) * base {0} {1})", n,
-                           at(t.point));
+        return "- left_end " + n;
       case Origin::explicit_point:
         return fmt::format("{} * {}", scale(t.shift), piece_at(t, shifted(n, t.shift)));
       case Origin::right_side:
@@ -81,7 +81,7 @@ class BalanceText {
             n);
       case Origin::closed_form:
         if (literal_) return fmt::format("- C{} {}", t.piece + 1, point_of_value(t));
-        return fmt::format("- ({} * C{} {}%Z)", scale(t.shift), t.piece + 1, shifted(n, t.shift));
+        return fmt::format("- ({} * C{} {})", scale(t.shift), t.piece + 1, shifted(n, t.shift));
       case Origin::value:
         break;
     }
@@ -150,9 +150,9 @@ class BalanceText {
         proof_.telescoping ? fmt::format("weight, a{}, ", t.shift) : fmt::format("a{}, ", t.shift);
     switch (t.origin) {
       case Origin::upper_end:
-        return "up, c, base";
+        return "right_end, up, c, base";
       case Origin::lower_end:
-        return "down, c, base";
+        return "left_end, down, c, base";
       case Origin::explicit_point:
         return factors + fmt::format("F{}", t.piece + 1);
       case Origin::closed_form:
@@ -176,23 +176,56 @@ class BalanceText {
       script += zero_script(t);
     } else {
       const proof::BalanceGroup& g = balance_.groups[t.group];
-      right = fmt::format("({}) * {} {}", factored(t.instance->right.coefficient, scope_),
+      right = fmt::format("{} * {} {}", enclosed(factored(t.instance->right.coefficient, scope_)),
                           g.base.id, literal_ ? "0" : names_.n);
       script = fmt::format("  intros{}. unfold {}, {}.\n", region_.empty() ? "" : " Hn",
                            definitions(t), g.base.id);
       script += instance_tactics(proof_, *t.instance, unfolded(t), {}, scope_);
     }
+    out_ += note(words(t));
     out_ += fmt::format("Lemma {}_term_{} {}: {}\n  ({} = {})%K.\nProof.\n{}Qed.\n\n",
                         identifier(balance_.id), i + 1,
                         literal_ ? std::string() : fmt::format("({} : Z) ", names_.n), region_,
                         text, right, script);
   }
 
+  /// What the lemma says, for readers.
+  [[nodiscard]] std::string words(const proof::BalanceTerm& t) const {
+    const std::string text = comment_formula(t.text);
+    if (t.zero_factor)
+      return text +
+             ": 0, for a factor is 0, and where it is not, the term is over (-m)! with m > 0.";
+    if (t.zero_atom) return text + ": 0, for it is over (-m)! with m > 0.";
+    if (t.zero) return text + ": 0, for a factor of its polynomial vanishes.";
+    return fmt::format("{}: a polynomial times {}.", text, balance_.groups[t.group].base.id);
+  }
+
   std::string zero_script(const proof::BalanceTerm& t) const {
-    if (!t.zero_atom) return respell(unfolded(t), scope_) + "  inj_norm. " + zero_closing(t);
-    return respell(unfolded(t), scope_) +
-           fmt::format("  rewrite (rfact_neg K {}) by lia. ring.\n",
-                       bracketed(affine(t.zero_atom->argument, scope_)));
+    const std::string start = respell(unfolded(t), scope_);
+    if (!t.zero_atom) return start + "  inj_norm. " + zero_closing(t);
+    const std::string by_atom = fmt::format("rewrite (rfact_neg K {}) by lia. ring.\n",
+                                            bracketed(affine(t.zero_atom->argument, scope_)));
+    if (!t.zero_factor) return start + "  " + by_atom;
+    return start +
+           fmt::format("  destruct (Z.eq_dec {} 0) as [E|E].\n  - {}  - ",
+                       bracketed(affine(*t.zero_factor, scope_)), by_factor(*t.zero_factor)) +
+           by_atom;
+  }
+
+  /// The factor is 0: one of its symbols is written through the others.
+  [[nodiscard]] std::string by_factor(const proof::Affine& factor) const {
+    std::size_t symbol = 0;
+    while (std::abs(factor.coefficients[symbol]) != 1) ++symbol;
+    proof::Affine rest = factor;
+    rest.coefficients[symbol] = 0;
+    if (factor.coefficients[symbol] == 1) {
+      for (long& c : rest.coefficients) c = -c;
+      rest.constant = -rest.constant;
+    }
+    proof::Affine alone = constant(0);
+    alone.coefficients[symbol] = 1;
+    return fmt::format("assert (V : {} = {}) by lia. rewrite !V. inj_norm. ring.\n",
+                       affine(alone, scope_), affine(rest, scope_));
   }
 
   [[nodiscard]] std::string zero_closing(const proof::BalanceTerm&) const { return "ring.\n"; }

@@ -2,6 +2,7 @@
 
 #include <fmt/format.h>
 
+#include "writers/coq_comments.hpp"
 #include "writers/coq_section_text.hpp"
 #include "writers/coq_sections.hpp"
 #include "writers/coq_statement.hpp"
@@ -18,7 +19,7 @@ class ConclusionText : private SectionText {
   explicit ConclusionText(const proof::Proof& proof) : SectionText(proof) {}
 
   std::string conclusion() {
-    out_ += "(** ** The right side against the remainder *)\n\n";
+    out_ += heading("The right side against the remainder");
     balance();
     if (equality_) leading();
     for (const proof::InitialValue& v : proof_.initial) initial(v);
@@ -47,14 +48,25 @@ class ConclusionText : private SectionText {
       goal = names_.index ? fmt::format("weight (inj {0}) * right_side {0}", names_.n)
                           : "right_side " + names_.n;
     }
+    out_ += note(equality_ ? "The right side satisfies the same recurrence: class by class, the "
+                             "polynomials add up to 0."
+                           : "What remains is the claimed right side: class by class, the "
+                             "polynomials add up to 0.");
     out_ += fmt::format(
         "Lemma right_recurrence ({0} : Z) : {1}\n  ({2} = remainder {0})%K.\nProof.\n  intros "
         "Hn.\n{3}"
-        "  assert (total : ({4} = inj 0)%K).\n  {{\n{5}  inj_norm. {6}. }}\n"
+        "  assert (total : ({4} = inj 0)%K).\n  {{ {5}inj_norm. {6}. }}\n"
         "  symmetry. apply (eq_of_sub K). transitivity ({4})%K; [unfold remainder; ring|].\n"
         "  exact (eq_trans total (inj_0 K)).\nQed.\n\n",
         names_.n, beyond_, goal, rewrites, total,
-        balance_rewrites(proof_, b, " " + names_.n + " Hn"), balance_closing(b));
+        inside(balance_rewrites(proof_, b, " " + names_.n + " Hn")), balance_closing(b));
+  }
+
+  /// Lines of a script after an opening brace.
+  static std::string inside(const std::string& lines) {
+    std::string out;
+    for (const char ch : lines) out += ch == '\n' ? "\n  " : std::string(1, ch);
+    return out.empty() ? out : out.substr(2) + "  ";
   }
 
   void leading() {
@@ -70,6 +82,7 @@ class ConclusionText : private SectionText {
     } else {
       script += "  apply inj_neq0; lia.\n";
     }
+    out_ += note("The leading coefficient is not 0, so the recurrence determines the next value.");
     out_ +=
         fmt::format("Lemma leading ({} : Z) : {}\n  ({} <> 0)%K.\nProof.\n  intros Hn.\n{}Qed.\n\n",
                     names_.n, beyond_, text, script);
@@ -102,12 +115,15 @@ class ConclusionText : private SectionText {
     }
     rewrites += fmt::format("  rewrite (right_side_terms {}) by lia.\n", at);
     out_ += script;
+    out_ += note(fmt::format("{} at {} = {}.",
+                             equality_ ? "The two sides are equal" : "The recurrence holds",
+                             names_.n, v.at));
     out_ += fmt::format(
         "Lemma {0} : ({1} = right_side {2})%K.\nProof.\n{3}"
-        "  assert (total : ({4} = inj 0)%K).\n  {{\n{5}  inj_norm. {6}. }}\n"
+        "  assert (total : ({4} = inj 0)%K).\n  {{ {5}inj_norm. {6}. }}\n"
         "  apply (eq_of_sub K). transitivity ({4})%K; [ring|].\n"
         "  exact (eq_trans total (inj_0 K)).\nQed.\n\n",
-        value_name(v.at), statement, at, rewrites, total, balance_rewrites(proof_, b, ""),
+        value_name(v.at), statement, at, rewrites, total, inside(balance_rewrites(proof_, b, "")),
         balance_closing(b));
   }
 
@@ -118,6 +134,7 @@ class ConclusionText : private SectionText {
                    std::string& out) const {
     const std::size_t i = static_cast<std::size_t>(&s - v.sums.data());
     const std::string at = bracketed(std::to_string(s.at));
+    out += note(fmt::format("S({}) term by term.", s.at));
     if (!names_.index) {
       out += fmt::format(
           "Lemma literal_{}_{} : (left_side {} = {})%K.\nProof. unfold left_side. apply "
@@ -125,20 +142,22 @@ class ConclusionText : private SectionText {
           tag(v.at), i, at, f_pieces(at, ""));
       return;
     }
-    const claim::Range& author = proof_.claim->sum.over[0];
+    const claim::Range& author = proof_.summed_range();
     const std::string lo = replace_word(integer_text(proof_, *author.low.value), names_.n, at);
     const std::string hi = replace_word(integer_text(proof_, *author.high.value), names_.n, at);
     const std::string f = fmt::format("(fun {} : Z => {})%K", names_.k, f_pieces(at, names_.k));
     std::string points;
     std::string right;
+    const auto point = [&](long offset) {
+      return bracketed(affine(s.point(proof_.symbols.size(), offset), scope_));
+    };
     for (long k = s.low; k <= s.high; ++k) {
-      points += fmt::format("{}{}", points.empty() ? "" : "; ", k);
-      right += fmt::format("{}({})", right.empty() ? "" : " + ",
-                           f_pieces(at, bracketed(std::to_string(k))));
+      points += (points.empty() ? "" : "; ") + point(k);
+      right += fmt::format("{}({})", right.empty() ? "" : " + ", f_pieces(at, point(k)));
     }
     if (right.empty()) right = "inj 0";
-    const std::string low = bracketed(std::to_string(s.low));
-    const std::string high = bracketed(std::to_string(s.high));
+    const std::string low = point(s.low);
+    const std::string high = point(s.high);
     out += fmt::format(
         "Lemma literal_{0}_{1} : (left_side {2} = {3})%K.\nProof.\n  unfold left_side.\n"
         "  transitivity (sum {4} {5} {6}).\n"
@@ -175,7 +194,7 @@ class ConclusionText : private SectionText {
   // ---------------------------------------------------------------- conclusion
 
   void final_lemma() {
-    out_ += "(** ** Conclusion *)\n\n";
+    out_ += heading("Conclusion");
     if (equality_)
       equality_lemma();
     else
@@ -196,11 +215,16 @@ class ConclusionText : private SectionText {
     std::string list;
     for (unsigned i = 0; i < coefficients_; ++i)
       list += fmt::format("{}fun {} : Z => ({})%K", i == 0 ? "" : "; ", names_.n, scale(i));
+    out_ += note(proof_.from <= last
+                     ? "The values with which the induction begins, and those before the threshold."
+                     : "The recurrence has order 0: no values are needed to begin with.");
     out_ += fmt::format(
         "Lemma initial ({0} : Z) : {1} <= {0} <= {2} -> left_side {0} = right_side {0}.\n"
         "Proof.\n  intros Hn.\n{3}Qed.\n\n",
         names_.n, from_, bracketed(std::to_string(last)),
         cases(proof_.from, last, "  exfalso; lia.\n"));
+    out_ +=
+        note("Two sequences with one recurrence and the same first values are equal (induction).");
     out_ += fmt::format(
         "Lemma from_threshold : forall {0} : Z, {1} <= {0} -> left_side {0} = right_side {0}.\n"
         "Proof.\n  apply (same_recurrence K [{2}] {1} remainder).\n"
@@ -208,6 +232,7 @@ class ConclusionText : private SectionText {
         "  - intros {0} Hn. apply initial. cbn [length Z.of_nat Pos.of_succ_nat Pos.succ] in Hn. "
         "lia.\nQed.\n\n",
         names_.n, threshold_, list);
+    out_ += note("The values below the threshold one by one, the others by induction.");
     out_ += fmt::format(
         "Lemma conclusion ({0} : Z) : {1} <= {0} -> left_side {0} = right_side {0}.\nProof.\n"
         "  intros Hn. destruct (Z_lt_le_dec {0} {2}) as [Hs|Hs].\n"
@@ -219,9 +244,9 @@ class ConclusionText : private SectionText {
     const claim::Evidence& evidence = proof_.claim->evidence;
     std::string left;
     for (std::size_t i = 0; i < evidence.recurrence.size(); ++i)
-      left += fmt::format("{}{} * {} {}{}", left.empty() ? "" : " + ",
+      left += fmt::format("{}{} * {} {}", left.empty() ? "" : " + ",
                           field_text(proof_, *evidence.recurrence[i]), side,
-                          shifted(names_.n, static_cast<unsigned>(i)), i == 0 ? "" : "%Z");
+                          shifted(names_.n, static_cast<unsigned>(i)));
     return left;
   }
 
@@ -242,12 +267,14 @@ class ConclusionText : private SectionText {
           "  unfold {1}. inj_norm. ring.\n",
           names_.n, unfold);
     }
+    out_ += note("The claimed recurrence, where the argument holds.");
     out_ += fmt::format(
         "Lemma from_threshold ({0} : Z) : {1} <= {0} ->\n  ({2} = right_side {0})%K.\nProof.\n"
         "  intros Hs.\n{3}Qed.\n\n",
         names_.n, threshold_, claimed("left_side"), script);
     std::string small;
     for (long v = proof_.from; v < proof_.threshold; ++v) small += value_case(v);
+    out_ += note("The values below the threshold one by one.");
     out_ += fmt::format(
         "Lemma conclusion ({0} : Z) : {1} <= {0} ->\n  ({2} = right_side {0})%K.\nProof.\n"
         "  intros Hn. destruct (Z_lt_le_dec {0} {3}) as [Hs|Hs]; "

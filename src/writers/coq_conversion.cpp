@@ -4,10 +4,14 @@
 #include <fmt/format.h>
 
 #include <algorithm>
+#include <map>
 #include <set>
+#include <vector>
 
 #include "claim/affine.hpp"
-#include "writers/coq_power_leaf.hpp"
+#include "writers/coq_comments.hpp"
+#include "writers/coq_leaf.hpp"
+#include "writers/coq_merged_powers.hpp"
 #include "writers/coq_sections.hpp"
 #include "writers/coq_statement.hpp"
 #include "writers/coq_steps.hpp"
@@ -21,11 +25,11 @@ using proof::LeafRule;
 
 namespace {
 
-class ConversionText : private PowerLeafText {
+class ConversionText : private LeafText {
  public:
   ConversionText(const proof::Proof& proof, const proof::Conversion& c, std::string what,
                  std::string piece, bool with_index)
-      : PowerLeafText(proof),
+      : LeafText(proof),
         c_(c),
         what_(std::move(what)),
         piece_(std::move(piece)),
@@ -37,10 +41,9 @@ class ConversionText : private PowerLeafText {
     premises_ = fmt::format("{} <= {} -> ", bracketed(std::to_string(proof.from)), names_.n);
     hypotheses_ = "Hn";
     if (with_index) {
-      const claim::Range& r = proof.claim->sum.over[0];
-      premises_ += fmt::format("{} <= {} <= {} -> ", integer_text(proof, *r.low.value), names_.k,
-                               integer_text(proof, *r.high.value));
-      hypotheses_ += " Hk";
+      const std::string premise = index_premise(proof);
+      premises_ += premise;
+      if (!premise.empty()) hypotheses_ += " Hk";
     }
   }
 
@@ -60,104 +63,25 @@ class ConversionText : private PowerLeafText {
   void define_pieces() {
     const std::string type = with_index_ ? fmt::format("({} {} : Z)", names_.n, names_.k)
                                          : fmt::format("({} : Z)", names_.n);
+    if (!c_.products.empty())
+      out_ += note(fmt::format("The terms of the {}.", what_ == "summand" ? what_ : "right side"));
     for (std::size_t j = 0; j < c_.products.size(); ++j)
       out_ += fmt::format("Definition {}{} {} : K :=\n  ({})%K.\n", piece_, j + 1, type,
                           product(c_.products[j], scope_));
     out_ += "\n";
   }
 
-  void lemma(const std::string& name, const std::string& statement, const std::string& script) {
-    out_ += fmt::format("Lemma {} {} : {}\n  {}.\nProof.\n  intros {}.\n{}Qed.\n\n", name,
-                        variables_, premises_, statement, hypotheses_, script);
-  }
-
-  // ---------------------------------------------------------------- leaves
-
-  [[nodiscard]] std::string leaf_text(const proof::Leaf& l) const {
-    return l.rule == LeafRule::reciprocal_factorial ? reciprocal_text(proof_, *l.expression)
-                                                    : field_text(proof_, *l.expression);
+  void lemma(const std::string& words, const std::string& name, const std::string& statement,
+             const std::string& script) {
+    out_ += note(words) + fmt::format("Lemma {} {} : {}\n  {}.\nProof.\n  intros {}.\n{}Qed.\n\n",
+                                      name, variables_, premises_, statement, hypotheses_, script);
   }
 
   void leaf(std::size_t i) {
     const proof::Leaf& l = c_.leaves[i];
-    const std::string left = leaf_text(l);
-    const std::string right = product(l.value, scope_);
-    lemma(leaf_name(i), fmt::format("{}%K = ({})%K", left, right),
+    lemma(leaf_words(l), leaf_name(i),
+          fmt::format("{}%K = ({})%K", leaf_text(l), product(l.value, scope_)),
           is_identity(l) ? "  reflexivity.\n" : leaf_script(l));
-  }
-
-  [[nodiscard]] const proof::Atom* interval(const proof::Leaf& l) const {
-    for (const auto& [a, e] : l.value.atoms)
-      if (a.kind == AtomKind::interval_product) return &a;
-    return nullptr;
-  }
-
-  /// The leaf is an atom already, as written.
-  [[nodiscard]] bool is_identity(const proof::Leaf& l) const {
-    return bare(leaf_text(l)) == bare(product(l.value, scope_));
-  }
-
-  std::string leaf_script(const proof::Leaf& l) {
-    if (l.rule == LeafRule::power) return power_script(l);
-    const Expression& e = *l.expression;
-    const std::string close = " by first [index | pq | pqf].\n  inj_norm. ring.\n";
-    const auto rewrite = [&](const std::string& law) { return "  rewrite (" + law + ")" + close; };
-    const proof::Affine a = affine_of(*e.children[0]);
-    if (l.rule == LeafRule::factorial || l.rule == LeafRule::reciprocal_factorial)
-      return rewrite(fmt::format("leaf_{} K {} {}",
-                                 l.rule == LeafRule::factorial ? "factorial" : "rfactorial",
-                                 integer_text(proof_, *e.children[0]), z(a)));
-    const proof::Affine b = affine_of(*e.children[1]);
-    const std::string second = integer_text(proof_, *e.children[1]);
-    const auto field = [&] { return field_text(proof_, *e.children[0]) + "%K"; };
-    switch (l.rule) {
-      case LeafRule::binomial_factorials:
-        if (!is_integer_argument(proof_, *e.children[0])) break;
-        return rewrite(fmt::format("leaf_binomial K {} {} {} {} {}",
-                                   integer_text(proof_, *e.children[0]), second, z(a), z(b),
-                                   z(combine(a, -1, b, 0))));
-      case LeafRule::binomial_interval:
-        return binomial_interval(l, second, b, rewrite);
-      case LeafRule::rising_factorials:
-        return rewrite(fmt::format("leaf_rising_factorials K {} {} {} {} {}", field(), z(a), second,
-                                   z(combine(a, 1, b, -1)), z(combine(a, 0, b, -1))));
-      case LeafRule::rising_reflected: {
-        proof::Affine zero = a;
-        for (long& c : zero.coefficients) c = 0;
-        zero.constant = 0;
-        const proof::Affine minus = combine(zero, -1, a, 0);
-        return rewrite(fmt::format("leaf_rising_reflected K {} {} {} {} {} {}", field(), z(a),
-                                   second, z(b), z(minus), z(combine(minus, -1, b, 0))));
-      }
-      case LeafRule::falling_factorials:
-        return rewrite(fmt::format("leaf_falling_factorials K {} {} {} {} {}", field(), z(a),
-                                   second, z(a), z(combine(a, -1, b, 0))));
-      case LeafRule::rising_interval:
-      case LeafRule::falling_interval:
-        if (const proof::Atom* ip = interval(l))
-          return rewrite(fmt::format("leaf_{}_ip K {} {} {} {} {}",
-                                     l.rule == LeafRule::rising_interval ? "rising" : "falling",
-                                     field(), interval_base(*ip, scope_) + "%K", second, z(ip->low),
-                                     z(ip->high)));
-        break;
-      default:
-        break;
-    }
-    return "  values. inj_norm. field.\n";
-  }
-
-  template <typename Rewrite>
-  std::string binomial_interval(const proof::Leaf& l, const std::string& second,
-                                const proof::Affine& b, const Rewrite& rewrite) {
-    const Expression& upper = *l.expression->children[0];
-    const proof::Atom* ip = interval(l);
-    if (ip == nullptr) return "  values. inj_norm. field.\n";
-    if (is_integer_argument(proof_, upper))
-      return rewrite(fmt::format("leaf_binomial_ip K {} {} {} {} {}", integer_text(proof_, upper),
-                                 second, z(ip->low), z(ip->high), z(b)));
-    return rewrite(fmt::format("leaf_gbinomial_ip K {}%K {}%K {} {} {} {}",
-                               field_text(proof_, upper), interval_base(*ip, scope_), second,
-                               z(ip->low), z(ip->high), z(b)));
   }
 
   // ---------------------------------------------------------------- denominators
@@ -171,54 +95,48 @@ class ConversionText : private PowerLeafText {
     return v;
   }
 
-  /// Leaves of `e` that stand outside recorded divisors.
-  void collect(const Expression& e, std::set<std::string>& out, bool reciprocal,
-               const Expression* root) const {
-    if (&e != root)
-      for (const proof::Denominator& d : c_.denominators) {
-        if (d.node.get() != &e) continue;
-        if (e.operation == Operation::divide && d.expression == e.children[1])
-          collect(*e.children[0], out, reciprocal, root);
-        return;
-      }
-    if (e.operation == Operation::call ||
-        (e.operation == Operation::power && !claim::as_literal(*e.children[1]))) {
+  /// The recorded denominator at this node, if any.
+  [[nodiscard]] const proof::Denominator* recorded(const Expression& node) const {
+    for (const proof::Denominator& d : c_.denominators)
+      if (d.node.get() == &node) return &d;
+    return nullptr;
+  }
+
+  static bool is_leaf(const Expression& e) {
+    return e.operation == Operation::call ||
+           (e.operation == Operation::power && !claim::as_literal(*e.children[1]));
+  }
+
+  /// The leaves in `e`, those of its divisors included. `reciprocal`: `e` is written as R(e).
+  void collect(const Expression& e, std::set<std::string>& out, bool reciprocal) const {
+    if (is_leaf(e)) {
       out.insert(claim::to_text(e) + (reciprocal && e.name == "factorial" ? "|r" : ""));
       return;
     }
+    const bool divided = recorded(e) != nullptr;
     if (e.operation == Operation::divide) {
-      collect(*e.children[0], out, reciprocal, root);
-      collect(*e.children[1], out, !reciprocal, root);
+      collect(*e.children[0], out, reciprocal);
+      collect(*e.children[1], out, !divided && !reciprocal);
       return;
     }
     if (e.operation == Operation::power) {
-      const auto exponent = claim::as_literal(*e.children[1]);
-      collect(*e.children[0], out, reciprocal != (*exponent < 0), root);
+      const bool inverse = *claim::as_literal(*e.children[1]) < 0;
+      collect(*e.children[0], out, !divided && reciprocal != inverse);
       return;
     }
-    for (const claim::ExpressionPtr& c : e.children) collect(*c, out, reciprocal, root);
+    for (const claim::ExpressionPtr& c : e.children) collect(*c, out, !divided && reciprocal);
   }
 
-  std::string leaf_rewrites(const Expression& within, const Expression* root) const {
+  [[nodiscard]] std::vector<std::size_t> leaves_in(const Expression& e) const {
     std::set<std::string> found;
-    collect(within, found, false, root);
-    std::string out;
+    collect(e, found, false);
+    std::vector<std::size_t> out;
     for (std::size_t i = 0; i < c_.leaves.size(); ++i) {
       const proof::Leaf& l = c_.leaves[i];
       const std::string key =
           claim::to_text(*l.expression) + (l.rule == LeafRule::reciprocal_factorial ? "|r" : "");
-      if (found.contains(key) && !is_identity(l))
-        out += fmt::format("  rewrite ({} {} {}).\n", leaf_name(i), arguments_, hypotheses_);
+      if (found.contains(key) && !is_identity(l)) out.push_back(i);
     }
-    return out;
-  }
-
-  std::string inner_divisions(const proof::Denominator& outer) const {
-    std::string out;
-    for (std::size_t i = c_.denominators.size(); i-- > 0;)
-      if (&c_.denominators[i] != &outer &&
-          contains(*outer.expression, c_.denominators[i].node.get()))
-        out += division_rewrite(i);
     return out;
   }
 
@@ -228,42 +146,131 @@ class ConversionText : private PowerLeafText {
                        [&](const claim::ExpressionPtr& c) { return contains(*c, node); });
   }
 
-  [[nodiscard]] std::string division_rewrite(std::size_t i) const {
-    const proof::Denominator& d = c_.denominators[i];
-    const bool quotient =
-        d.node->operation == Operation::divide && d.expression == d.node->children[1];
-    // An inverse that is its own atom needs no rewriting.
-    const bool one_atom = d.reciprocal.atoms.size() == 1 && d.reciprocal.atoms[0].second == 1;
-    if (!quotient && one_atom &&
-        bare("/ " + divisor_text(d)) == bare(product(d.reciprocal, scope_)))
-      return "";
-    const std::string law = quotient ? "divide_by" : "invert_by";
-    return fmt::format("  rewrite {}({} K {}%K ({})%K ({}_denominator_{} {} {})).\n",
-                       quotient ? "!" : "", law, divisor_text(d), product(d.reciprocal, scope_),
-                       what_, i + 1, arguments_, hypotheses_);
+  [[nodiscard]] bool is_quotient(const proof::Denominator& d) const {
+    return d.node->operation == Operation::divide && d.expression == d.node->children[1];
+  }
+
+  /// The divisors in `within` that stand in no other one, different ones once, those with a longer
+  /// text first: it may contain a shorter one.
+  [[nodiscard]] std::vector<std::size_t> divisors_in(const Expression& within,
+                                                     const proof::Denominator* self) const {
+    std::vector<std::size_t> out;
+    for (std::size_t i = c_.denominators.size(); i-- > 0;)
+      if (&c_.denominators[i] != self && contains(within, c_.denominators[i].node.get()))
+        out.push_back(i);
+    const auto nested = [&](std::size_t i) {
+      return std::any_of(out.begin(), out.end(), [&](std::size_t j) {
+        return j != i && contains(*c_.denominators[j].expression, c_.denominators[i].node.get());
+      });
+    };
+    std::vector<std::size_t> outer;
+    std::set<std::string> known;
+    for (const std::size_t i : out) {
+      const proof::Denominator& d = c_.denominators[i];
+      if (!nested(i) && known.insert((is_quotient(d) ? "/" : "") + divisor_text(d)).second)
+        outer.push_back(i);
+    }
+    std::stable_sort(outer.begin(), outer.end(), [&](std::size_t a, std::size_t b) {
+      return divisor_text(c_.denominators[a]).size() > divisor_text(c_.denominators[b]).size();
+    });
+    return outer;
+  }
+
+  /// An inverse that is its own atom needs no rewriting.
+  [[nodiscard]] bool is_own_atom(const proof::Denominator& d) const {
+    return !is_quotient(d) && d.reciprocal.atoms.size() == 1 && d.reciprocal.atoms[0].second == 1 &&
+           same_term("/ " + divisor_text(d), product(d.reciprocal, scope_));
+  }
+
+  /// Leaves and divisions of `within`, which stands in the goal as written, become products of
+  /// atoms. Leaves first (a base may contain a division), in the divisors' lemmas too.
+  [[nodiscard]] std::string rewrites(const Expression& within,
+                                     const proof::Denominator* self) const {
+    std::string out;
+    std::string divisions;
+    std::map<std::size_t, std::vector<std::string>> inside;
+    for (const std::size_t i : divisors_in(within, self)) {
+      const proof::Denominator& d = c_.denominators[i];
+      if (is_own_atom(d)) continue;
+      std::string lemma =
+          fmt::format("({}_denominator_{} {} {})", what_, i + 1, arguments_, hypotheses_);
+      const std::vector<std::size_t> leaves = leaves_in(*d.expression);
+      if (!leaves.empty()) {
+        const std::string name = fmt::format("divisor_{}", i + 1);
+        out += fmt::format("  pose proof {} as {}.\n", lemma, name);
+        for (const std::size_t at : leaves) inside[at].push_back(name);
+        divisions += fmt::format("  rewrite {}.\n",
+                                 is_quotient(d) ? fmt::format("!(divide_by K _ _ {})", name)
+                                                : fmt::format("(invert_by K _ _ {})", name));
+        continue;
+      }
+      divisions += fmt::format("  rewrite {}({} K {}%K ({})%K {}).\n", is_quotient(d) ? "!" : "",
+                               is_quotient(d) ? "divide_by" : "invert_by", divisor_text(d),
+                               product(d.reciprocal, scope_), lemma);
+    }
+    for (const std::size_t at : leaves_in(within)) {
+      const std::string lemma = fmt::format("({} {} {})", leaf_name(at), arguments_, hypotheses_);
+      out += fmt::format("  rewrite {}.\n", lemma);
+      for (const std::string& name : inside[at])
+        out += fmt::format("  rewrite {} in {}.\n", lemma, name);
+    }
+    return out + divisions;
   }
 
   void denominator(std::size_t i) {
     const proof::Denominator& d = c_.denominators[i];
-    std::string script = inner_divisions(d);
-    std::set<std::string> found;
-    script += leaf_rewrites(*d.expression, d.expression.get());
+    std::string script = rewrites(*d.expression, &d);
+    const bool polynomial = script.empty() && !has_leaf(*d.expression);
+    const bool by_bases = !polynomial && mixes_powers(d);
     std::string pairs;
     std::string uses;
-    constant_unit(d, script, pairs, uses);
+    if (!by_bases) constant_unit(d, script, pairs, uses);
     for (std::size_t u = 0; u < d.units.size(); ++u) {
+      if (by_bases && is_numeric_power(d.units[u].right)) continue;
       std::string pair;
       const std::string name = fmt::format("unit{}", u + 1);
       script += unit_assertion(proof_, d.units[u], name, scope_, pair);
       pairs += fmt::format("{}({}) ^ {}", pairs.empty() ? "" : " * ", pair, d.units[u].exponent);
       uses += fmt::format("rewrite {}. ", name);
     }
-    const std::string merges = merge_rewrites(script);
-    script += fmt::format("  transitivity ({})%K; [{}inj_norm; ring|].\n  {}ring.\n", pairs, merges,
-                          uses);
-    lemma(fmt::format("{}_denominator_{}", what_, i + 1),
+    if (pairs.empty()) pairs = "inj 1";
+    MergedPowers powers{"", "", "ring"};
+    if (by_bases)
+      powers = merged_powers(proof_, c_, scope_, {&d.as_product, &d.reciprocal});
+    else if (!polynomial)
+      powers = merged_powers(proof_, c_, scope_, {});
+    script += powers.setup;
+    script += fmt::format("  transitivity ({})%K; [{}inj_norm; {}|].\n  {}ring.\n", pairs,
+                          powers.split, powers.close, uses);
+    lemma(fmt::format("The divisor {} has an inverse, so it is not 0.",
+                      comment_formula(claim::to_text(*d.expression))),
+          fmt::format("{}_denominator_{}", what_, i + 1),
           fmt::format("({} * ({}))%K = inj 1", divisor_text(d), product(d.reciprocal, scope_)),
           script);
+  }
+
+  static bool has_leaf(const Expression& e) {
+    return is_leaf(e) || std::any_of(e.children.begin(), e.children.end(),
+                                     [](const claim::ExpressionPtr& c) { return has_leaf(*c); });
+  }
+
+  static bool is_numeric_power(const proof::Atom& a) {
+    return a.kind == AtomKind::power && is_constant(a.base);
+  }
+
+  [[nodiscard]] bool has_unit(const proof::Denominator& d, const proof::Atom& a) const {
+    return std::any_of(d.units.begin(), d.units.end(), [&](const proof::Unit& u) {
+      return u.right.kind == AtomKind::power && atom(u.right, scope_) == atom(a, scope_);
+    });
+  }
+
+  /// Powers of one number met in the divisor, or its constant and its powers in the reciprocal.
+  [[nodiscard]] bool mixes_powers(const proof::Denominator& d) const {
+    return std::any_of(d.reciprocal.atoms.begin(), d.reciprocal.atoms.end(), [&](const auto& e) {
+      const proof::Atom& a = e.first;
+      if (!is_numeric_power(a)) return false;
+      return !c_.merges.empty() || (!is_constant(a.argument) && !has_unit(d, a));
+    });
   }
 
   /// The numeric part: constant of the divisor times the literal powers of its reciprocal.
@@ -274,11 +281,7 @@ class ConversionText : private PowerLeafText {
     bool powers = false;
     for (const auto& entry : d.reciprocal.atoms) {
       const proof::Atom& a = entry.first;
-      if (a.kind != AtomKind::power || !is_constant(a.argument) || !is_constant(a.base)) continue;
-      const bool by_unit = std::any_of(d.units.begin(), d.units.end(), [&](const proof::Unit& u) {
-        return u.right.kind == AtomKind::power && atom(u.right, scope_) == atom(a, scope_);
-      });
-      if (by_unit) continue;
+      if (!is_numeric_power(a) || !is_constant(a.argument) || has_unit(d, a)) continue;
       text += " * " + atom(a, scope_);
       powers = true;
     }
@@ -294,11 +297,7 @@ class ConversionText : private PowerLeafText {
 
   void conversion() {
     std::string script = fmt::format("  unfold {}.\n", what_);
-    std::set<std::string> divided;
-    for (std::size_t i = c_.denominators.size(); i-- > 0;)
-      if (!inside_other(i) && divided.insert(divisor_text(c_.denominators[i])).second)
-        script += division_rewrite(i);
-    script += leaf_rewrites(*c_.expression, nullptr);
+    script += rewrites(*c_.expression, nullptr);
     std::string sum;
     std::string with_units;
     std::string uses;
@@ -321,61 +320,17 @@ class ConversionText : private PowerLeafText {
     std::string unfold = "  unfold ";
     for (std::size_t j = 0; j < c_.products.size(); ++j)
       unfold += fmt::format("{}{}{}", j == 0 ? "" : ", ", piece_, j + 1);
-    const std::string merges = merge_rewrites(script);
-    for (std::size_t i = 0; i < c_.merges.size() && c_.products.size() == 1; ++i) {
-      const std::string pair = vanishing_merge(i, script);
-      if (pair.empty()) continue;
-      with_units = fmt::format("({}) * ({})", pair, with_units);
-      uses = fmt::format("rewrite power_unit{}. ", i + 1) + uses;
-      any = true;
-    }
+    const MergedPowers powers = merged_powers(proof_, c_, scope_, {});
+    script += powers.setup;
     if (any)
-      script += fmt::format("  transitivity ({})%K; [{}; {}inj_norm; ring|].\n  {}ring.\n",
-                            with_units, unfold.substr(2), merges, uses);
+      script += fmt::format("  transitivity ({})%K; [{}; {}inj_norm; {}|].\n  {}ring.\n",
+                            with_units, unfold.substr(2), powers.split, powers.close, uses);
     else
-      script += "  " + (c_.products.empty() ? "" : unfold.substr(2) + "; ") + merges +
-                "inj_norm; ring.\n";
-    lemma(what_ + "_terms", fmt::format("{} {} = ({})%K", what_, arguments_, sum), script);
-  }
-
-  /// Powers of one base that merged are taken apart again, last merge first.
-  std::string merge_rewrites(std::string& script) const {
-    std::string out;
-    for (std::size_t i = c_.merges.size(); i-- > 0;) {
-      const proof::PowerMerge& m = c_.merges[i];
-      const std::string b = power_base(m.base, scope_);
-      const std::string total = z(combine(m.first, 1, m.second, 0));
-      std::string side = "right; lia";
-      if (is_constant(m.base)) side = "left; numeric_neq0";
-      if (m.nonzero) side = "left; " + nonzero_tactic(proof_, *m.nonzero, scope_);
-      script += fmt::format(
-          "  assert (merge{0} : (zpow {1} {2} = zpow {1} {3} * zpow {1} {4})%K)\n"
-          "    by (apply (zpow_add K); [{5} | lia]).\n",
-          i + 1, b, total, z(m.first), z(m.second), side);
-      out += fmt::format("try rewrite merge{}; ", i + 1);
-    }
-    return out;
-  }
-
-  /// Powers whose exponents cancel leave the product: their product is 1.
-  std::string vanishing_merge(std::size_t i, std::string& script) const {
-    const proof::PowerMerge& m = c_.merges[i];
-    const proof::Affine total = combine(m.first, 1, m.second, 0);
-    if (!is_constant(total) || total.constant != 0) return "";
-    const std::string b = power_base(m.base, scope_);
-    std::string pair = fmt::format("zpow {0} {1} * zpow {0} {2}", b, z(m.first), z(m.second));
-    script += fmt::format(
-        "  assert (power_unit{0} : ({1} = inj 1)%K) by (rewrite <- merge{0}; exact (zpow_0_r K "
-        "{2})).\n",
-        i + 1, pair, b);
-    return pair;
-  }
-
-  [[nodiscard]] bool inside_other(std::size_t i) const {
-    for (std::size_t j = 0; j < c_.denominators.size(); ++j)
-      if (j != i && contains(*c_.denominators[j].expression, c_.denominators[i].node.get()))
-        return true;
-    return false;
+      script += "  " + (c_.products.empty() ? "" : unfold.substr(2) + "; ") + powers.split +
+                "inj_norm; " + powers.close + ".\n";
+    lemma(fmt::format("The {} as a sum of products of atoms.",
+                      what_ == "summand" ? what_ : "right side"),
+          what_ + "_terms", fmt::format("{} {} = ({})%K", what_, arguments_, sum), script);
   }
 
   const proof::Conversion& c_;

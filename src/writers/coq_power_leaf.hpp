@@ -46,13 +46,6 @@ class PowerLeafText {
 
   [[nodiscard]] std::string z(const proof::Affine& a) const { return bracketed(affine(a, scope_)); }
 
-  /// Without brackets: equal for terms that differ in redundant brackets only (canonical forms have
-  /// no others).
-  static std::string bare(std::string text) {
-    std::erase_if(text, [](char ch) { return ch == '(' || ch == ')'; });
-    return text;
-  }
-
   // ---------------------------------------------------------------- powers
 
   struct Part {
@@ -113,7 +106,7 @@ class PowerLeafText {
                          parts_text(above, 0), parts_text(below, 0), written, minus) +
              by;
       out += split(below, minus, by);
-    } else if (bare(v) != bare(parts_text(above, 0))) {
+    } else if (!same_term(v, parts_text(above, 0))) {
       out += fmt::format("  rewrite (leaf_zpow K {}%K ({})%K {} {})", v, parts_text(above, 0),
                          written, written) +
              by;
@@ -134,7 +127,7 @@ class PowerLeafText {
                       part_text(parts[i]), parts_text(parts, i + 1), exponent) +
           by;
     for (const Part& p : parts) {
-      if (p.exponent == 1 && bare(exponent) == bare(p.to)) continue;
+      if (p.exponent == 1 && same_term(exponent, p.to)) continue;
       if (p.exponent == 1)
         out +=
             fmt::format("  rewrite (leaf_zpow K {0}%K {0}%K {1} {2})", p.base, exponent, p.to) + by;

@@ -3,6 +3,7 @@
 
 #include <fmt/format.h>
 
+#include "writers/coq_comments.hpp"
 #include "writers/coq_section_text.hpp"
 #include "writers/coq_statement.hpp"
 
@@ -15,7 +16,7 @@ class RecurrenceText : private SectionText {
 
   std::string run() {
     if (names_.index) {
-      out_ += "(** ** Ranges: the sum at n, n + 1, ... over one common range *)\n\n";
+      out_ += heading("Ranges: the sum at n, n + 1, ... over one common range");
       for (const proof::RangeStep& r : proof_.ranges) range(r);
     } else {
       coefficient_definitions();
@@ -57,52 +58,66 @@ class RecurrenceText : private SectionText {
 
   void range(const proof::RangeStep& r) {
     const proof::Telescoping& t = *proof_.telescoping;
-    const claim::Range& author = proof_.claim->sum.over[0];
+    const claim::Range& author = proof_.summed_range();
     const std::string n = shifted(names_.n, r.shift);
-    const std::string low = affine(t.low, scope_);
-    const std::string high = affine(t.high, scope_);
+    const std::string low = bracketed(affine(t.low, scope_));
+    const std::string high = bracketed(affine(t.high, scope_));
     const std::string lo = at_shift(*author.low.value, r.shift);
     const std::string hi = at_shift(*author.high.value, r.shift);
-    const std::string wide_low = moved(t.low, -static_cast<long>(r.low_points));
-    const std::string wide_high = moved(t.high, static_cast<long>(r.high_points));
+    const std::string wide_low = bracketed(moved(t.low, -static_cast<long>(r.low_points)));
+    const std::string wide_high = bracketed(moved(t.high, static_cast<long>(r.high_points)));
     const std::string f = fmt::format("(fun {} : Z => {})%K", names_.k, f_pieces(n, names_.k));
-    std::string right = fmt::format("sum ({}) ({}) {}", low, high, f);
+    std::string right = fmt::format("sum {} {} {}", low, high, f);
     std::string split;
     for (unsigned p = r.high_points; p >= 1; --p) {
-      const std::string rest_high = moved(t.high, static_cast<long>(p) - 1);
-      const std::string here = moved(t.high, static_cast<long>(p));
-      split += fmt::format("  rewrite (sum_last K ({0}) ({1}) ({2}) ({1}) {3}) by lia.\n", wide_low,
-                           here, rest_high, f);
-      right += fmt::format(" + ({})", f_pieces(n, bracketed(here)));
+      const std::string rest_high = bracketed(moved(t.high, static_cast<long>(p) - 1));
+      const std::string here = bracketed(moved(t.high, static_cast<long>(p)));
+      split += fmt::format("  rewrite (sum_last K {0} {1} {2} {1} {3}) by lia.\n", wide_low, here,
+                           rest_high, f);
+      right += fmt::format(" + ({})", f_pieces(n, here));
     }
     for (unsigned p = r.low_points; p >= 1; --p) {
-      const std::string rest_low = moved(t.low, 1 - static_cast<long>(p));
-      const std::string here = moved(t.low, -static_cast<long>(p));
-      split += fmt::format("  rewrite (sum_first K ({0}) ({1}) ({2}) ({0}) {3}) by lia.\n", here,
-                           high, rest_low, f);
-      right += fmt::format(" + ({})", f_pieces(n, bracketed(here)));
+      const std::string rest_low = bracketed(moved(t.low, 1 - static_cast<long>(p)));
+      const std::string here = bracketed(moved(t.low, -static_cast<long>(p)));
+      split += fmt::format("  rewrite (sum_first K {0} {1} {2} {0} {3}) by lia.\n", here, high,
+                           rest_low, f);
+      right += fmt::format(" + ({})", f_pieces(n, here));
     }
+    out_ += note(range_words(r));
     out_ += fmt::format(
-        "Lemma range_{0} ({1} : Z) : {2}\n  (left_side {3}%Z = {4})%K.\nProof.\n"
+        "Lemma range_{0} ({1} : Z) : {2}\n  (left_side {3} = {4})%K.\nProof.\n"
         "  intros Hn. unfold left_side.\n"
         "  transitivity (sum {5} {6} {7}).\n"
         "  {{ apply (sum_ext K); [lia | lia |]. intros {8} Hk. "
         "apply (summand_terms {3} {8}); index. }}\n",
         r.shift, names_.n, beyond_, n, right, lo, hi, f, names_.k);
     if (r.below || r.above)
-      out_ += fmt::format(
-          "  rewrite (sum_same K {0} {1} ({2}) ({3}) {4}).\n  2:{{ {5} }}\n  2:{{ {6} }}\n", lo, hi,
-          wide_low, wide_high, f, outside(r), outside(r));
+      out_ +=
+          fmt::format("  rewrite (sum_same K {0} {1} {2} {3} {4}).\n  2:{{ {5} }}\n  2:{{ {6} }}\n",
+                      lo, hi, wide_low, wide_high, f, outside(r), outside(r));
     else
       out_ += fmt::format(
-          "  transitivity (sum ({0}) ({1}) {2}); [apply (sum_ext K); [lia | lia | "
+          "  transitivity (sum {0} {1} {2}); [apply (sum_ext K); [lia | lia | "
           "reflexivity]|].\n",
           wide_low, wide_high, f);
     out_ += split;
     out_ += "  cbv beta. ring.\nQed.\n\n";
   }
 
-  /// The author's bound with n shifted, as text.
+  [[nodiscard]] std::string range_words(const proof::RangeStep& r) const {
+    std::string out = fmt::format("S({}) over the common range", argument(names_.n, r.shift));
+    if (r.below || r.above)
+      out += "; the terms in one range only vanish, being over (-m)! with m > 0";
+    if (r.low_points + r.high_points > 0) out += "; the points outside stand by themselves";
+    return out + ".";
+  }
+
+  /// `n + 2`, for readers.
+  static std::string argument(const std::string& n, unsigned by) {
+    return by == 0 ? n : fmt::format("{} + {}", n, by);
+  }
+
+  /// The range's bound with n shifted, as text.
   [[nodiscard]] std::string at_shift(const claim::Expression& bound, unsigned by) const {
     std::string text = integer_text(proof_, bound);
     if (by == 0) return text;
@@ -141,19 +156,16 @@ class RecurrenceText : private SectionText {
   }
 
   void remainder() {
-    out_ += "(** ** The recurrence of the sum, with what remains at the ends *)\n\n";
+    out_ += heading("The recurrence of the sum, with what remains at the ends");
     std::string body;
     const bool ends = names_.index && !proof_.telescoping->certificate.terms.empty();
-    if (ends) {
-      const std::string low = bracketed(affine(proof_.telescoping->low, scope_));
-      const std::string high = bracketed(affine(proof_.telescoping->high, scope_));
-      body = fmt::format(
-          "up (inj {0}) (inj {1}) * c (inj {0}) (inj {1} + inj 1) * base {0} {1} - "
-          "down (inj {0}) (inj {2}) * c (inj {0}) (inj {2}) * base {0} {2}",
-          names_.n, high, low);
-    }
+    if (ends) body = fmt::format("right_end {0} - left_end {0}", names_.n);
     for (const std::string& t : explicit_texts()) body += (body.empty() ? "" : "\n   + ") + t;
     if (body.empty()) body = "inj 0";
+    out_ +=
+        note(names_.index
+                 ? "What the sum's recurrence has on its right: the ends, and the points outside."
+                 : "The combination of the left side.");
     out_ += fmt::format("Definition remainder ({} : Z) : K :=\n  ({})%K.\n\n", names_.n, body);
     std::string script;
     if (names_.index) {
@@ -161,22 +173,26 @@ class RecurrenceText : private SectionText {
       std::string more;
       for (const proof::RangeStep& r : proof_.ranges) {
         script += fmt::format("  rewrite (range_{} {} Hn).\n", r.shift, names_.n);
-        summed += fmt::format(
-            "{}{} * sum ({}) ({}) (fun {} : Z => {})", summed.empty() ? "" : " + ", scale(r.shift),
-            affine(proof_.telescoping->low, scope_), affine(proof_.telescoping->high, scope_),
-            names_.k, f_pieces(shifted(names_.n, r.shift), names_.k));
+        summed += fmt::format("{}{} * sum {} {} (fun {} : Z => {})", summed.empty() ? "" : " + ",
+                              scale(r.shift), bracketed(affine(proof_.telescoping->low, scope_)),
+                              bracketed(affine(proof_.telescoping->high, scope_)), names_.k,
+                              f_pieces(shifted(names_.n, r.shift), names_.k));
       }
       for (const std::string& t : explicit_texts()) more += " + " + t;
       script += fmt::format(
           "  transitivity ({}{})%K; [ring|].\n  rewrite (summed {} Hn). unfold "
           "remainder{}. ring.\n",
-          summed, more, names_.n, ends ? "" : ", c");
+          summed, more, names_.n, ends ? "" : ", right_end, left_end, c");
     } else {
       script = "  unfold left_side, remainder.\n";
       for (unsigned i = 0; i < coefficients_; ++i)
         script += fmt::format("  rewrite (summand_terms {}) by lia.\n", shifted(names_.n, i));
       script += "  ring.\n";
     }
+    out_ +=
+        note(names_.index
+                 ? "The recurrence of the sum: the ranges are made common and the sums telescope."
+                 : "The left side at n, n + 1, ... by its terms.");
     out_ += fmt::format(
         "Lemma left_recurrence ({0} : Z) : {1}\n  ({2} = remainder {0})%K.\nProof.\n"
         "  intros Hn.\n{3}Qed.\n\n",

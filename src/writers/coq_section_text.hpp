@@ -4,6 +4,7 @@
 #include <fmt/format.h>
 
 #include <cctype>
+#include <set>
 #include <string>
 
 #include "proof/proof.hpp"
@@ -37,7 +38,7 @@ class SectionText {
 
   [[nodiscard]] std::string f_pieces(const std::string& n, const std::string& k) const {
     return pieces("F", proof_.summand.products.size(),
-                  names_.index ? fmt::format("{}%Z {}", n, k) : n + "%Z");
+                  names_.index ? fmt::format("{} {}", n, k) : n);
   }
 
   /// The factor of S(n+i) in the recurrence.
@@ -50,8 +51,8 @@ class SectionText {
   [[nodiscard]] std::string combination(const std::string& side) const {
     std::string out;
     for (unsigned i = 0; i < coefficients_; ++i)
-      out += fmt::format("{}{} * {} {}{}", out.empty() ? "" : " + ", scale(i), side,
-                         shifted(names_.n, i), i == 0 ? "" : "%Z");
+      out += fmt::format("{}{} * {} {}", out.empty() ? "" : " + ", scale(i), side,
+                         shifted(names_.n, i));
     return out;
   }
 
@@ -63,10 +64,12 @@ class SectionText {
     if (!v) return "exfalso; index";
     std::string unfold;
     std::string rewrites;
+    std::set<std::string> done;
     for (std::size_t j = 0; j < v->atoms.size(); ++j) {
       unfold += fmt::format("{}F{}", j == 0 ? "" : ", ", j + 1);
-      rewrites += fmt::format("rewrite (rfact_neg K {}) by index; ",
-                              original_argument(v->atoms[j], j, n, scope));
+      const std::string argument = original_argument(v->atoms[j], j, n, scope);
+      if (done.insert(argument).second)
+        rewrites += fmt::format("rewrite (rfact_neg K {}) by index; ", argument);
     }
     return fmt::format("unfold {}; {}ring", unfold, rewrites);
   }

@@ -17,6 +17,14 @@ namespace sumwright::writers::coq {
 [[nodiscard]] std::string conversion_text(const proof::Proof& proof, const proof::Conversion& c,
                                           const std::string& what, const std::string& piece,
                                           bool with_index);
+/// Ranges with an infinite end: the sum as a sum between finite ends.
+[[nodiscard]] std::string finite_range_section(const proof::Proof& proof);
+/// `k < low \/ high < k` for the ends that stand for infinite ones.
+[[nodiscard]] std::string beyond_support(const proof::Proof& proof);
+/// The claim of a recurrence with infinite ends, inside the section; empty for all others.
+[[nodiscard]] std::string infinite_claim_section(const proof::Proof& proof);
+/// `low <= k <= high -> ` with the author's finite ends; empty when he has none.
+[[nodiscard]] std::string index_premise(const proof::Proof& proof);
 /// Base term, polynomials, shifts, the equality, the telescoping identity and its sum.
 [[nodiscard]] std::string telescoping_section(const proof::Proof& proof);
 /// Ranges, ends, explicit points: the recurrence of the sum with its remainder.

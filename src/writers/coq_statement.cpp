@@ -108,6 +108,8 @@ std::string assumption_text(const proof::Proof& proof, const claim::Assumption& 
                      paren(field_text(proof, *a.right)), field);
 }
 
+}  // namespace
+
 std::string recurrence_equation(const proof::Proof& proof, const std::string& field) {
   const claim::Evidence& evidence = proof.claim->evidence;
   const std::string n = name_of(proof.claim->running);
@@ -122,8 +124,6 @@ std::string recurrence_equation(const proof::Proof& proof, const std::string& fi
       evidence.right_side ? field_text(proof, *evidence.right_side) : std::string("inj 0");
   return fmt::format("({})%K = ({})%K :> {}", left, right, field);
 }
-
-}  // namespace
 
 std::string name_of(const std::string& symbol) { return safe_name(symbol); }
 
@@ -244,13 +244,50 @@ std::vector<Hypothesis> hypotheses(const proof::Proof& proof, const std::string&
   return out;
 }
 
+namespace {
+
+// No symbol of a claim is written with an underscore (safe_name).
+constexpr const char* kLowEnd = "lo_end";
+constexpr const char* kHighEnd = "hi_end";
+
+}  // namespace
+
 std::string sum_text(const proof::Proof& proof) {
   const claim::Sum& sum = proof.claim->sum;
   const std::string summand = field_text(proof, *sum.summand);
   if (sum.over.empty()) return fmt::format("{}%K", summand);
-  const claim::Range& r = sum.over[0];
-  return fmt::format("sum {} {} (fun {} : Z => {}%K)", integer_text(proof, *r.low.value),
-                     integer_text(proof, *r.high.value), name_of(r.index), summand);
+  return fmt::format("sum {} {} (fun {} : Z => {}%K)", end_text(proof, false),
+                     end_text(proof, true), name_of(sum.over[0].index), summand);
+}
+
+std::string end_text(const proof::Proof& proof, bool upper) {
+  const claim::Range& r = proof.claim->sum.over[0];
+  const claim::Bound& bound = upper ? r.high : r.low;
+  if (bound.value) return integer_text(proof, *bound.value);
+  const std::string variable = upper ? kHighEnd : kLowEnd;
+  if (proof.claim->is_equality()) return variable;
+  return fmt::format("({} {})", variable, name_of(proof.claim->running));
+}
+
+std::vector<std::string> end_variables(const proof::Proof& proof) {
+  std::vector<std::string> out;
+  for (const claim::Range& r : proof.claim->sum.over) {
+    if (!r.low.value) out.emplace_back(kLowEnd);
+    if (!r.high.value) out.emplace_back(kHighEnd);
+  }
+  return out;
+}
+
+std::string vanishing_text(const proof::Proof& proof, const std::string& summand,
+                           const std::string& low, const std::string& high,
+                           const std::string& field) {
+  if (end_variables(proof).empty()) return "";
+  const claim::Range& r = proof.claim->sum.over[0];
+  const std::string k = name_of(r.index);
+  std::string beyond;
+  if (!r.low.value) beyond = fmt::format("{} < {}", k, low);
+  if (!r.high.value) beyond += fmt::format("{}{} < {}", beyond.empty() ? "" : " \\/ ", high, k);
+  return fmt::format("(forall {} : Z, {} -> {} = 0%K :> {})", k, beyond, summand, field);
 }
 
 std::vector<std::string> parameter_names(const proof::Proof& proof) {
@@ -266,24 +303,39 @@ std::string parameter_binders(const proof::Proof& proof, const std::string& fiel
   for (const auto ring : {claim::Parameter::Ring::rationals, claim::Parameter::Ring::integers})
     for (const claim::Parameter& p : proof.claim->parameters)
       if (p.ring == ring)
-        out += fmt::format(" ({} : {})", name_of(p.name),
+        out += fmt::format("{}({} : {})", out.empty() ? "" : " ", name_of(p.name),
                            ring == claim::Parameter::Ring::rationals ? field : "Z");
   return out;
 }
 
 std::string statement_text(const proof::Proof& proof, const std::string& field) {
   const std::string n = name_of(proof.claim->running);
-  std::string out = "forall " + parameter_binders(proof, field);
+  const std::string parameters = parameter_binders(proof, field);
+  std::string out = parameters.empty() ? "forall" : "forall " + parameters;
   const bool equality = proof.claim->is_equality();
-  out += equality ? fmt::format(" ({} : Z),\n", n) : fmt::format(" (s : Z -> {}),\n", field);
+  std::string ends;
+  for (const std::string& end : end_variables(proof))
+    ends += fmt::format(" ({} : {})", end, equality ? "Z" : "Z -> Z");
+  out += equality ? fmt::format(" ({} : Z){},\n", n, ends)
+                  : fmt::format("{} (s : Z -> {}),\n", ends, field);
+  const std::string vanishing =
+      vanishing_text(proof, field_text(proof, *proof.claim->sum.summand) + "%K",
+                     proof.claim->sum.over.empty() ? "" : end_text(proof, false),
+                     proof.claim->sum.over.empty() ? "" : end_text(proof, true), field);
   for (const Hypothesis& h : hypotheses(proof, field)) out += fmt::format("  {} ->\n", h.text);
   const std::string from = bracketed(std::to_string(proof.from));
   if (equality) {
-    out += fmt::format("  {} <= {} ->\n  {} =\n  {}%K :> {}", from, n, sum_text(proof),
+    if (!vanishing.empty())
+      out += fmt::format("  {} <= {} ->\n  {} ->\n", from, n, vanishing);
+    else
+      out += fmt::format("  {} <= {} ->\n", from, n);
+    out += fmt::format("  {} =\n  {}%K :> {}", sum_text(proof),
                        field_text(proof, *proof.claim->closed), field);
     return out;
   }
   out += fmt::format("  (forall {} : Z, s {} = {}) ->\n", n, n, sum_text(proof));
+  if (!vanishing.empty())
+    out += fmt::format("  (forall {} : Z, {} <= {} -> {}) ->\n", n, from, n, vanishing);
   out += fmt::format("  forall {} : Z, {} <= {} ->\n  {}", n, from, n,
                      recurrence_equation(proof, field));
   return out;

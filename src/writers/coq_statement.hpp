@@ -32,11 +32,24 @@ struct Hypothesis {
                                          std::size_t exclusion);
 [[nodiscard]] std::string assumption_name(std::size_t assumption);
 
-/// The sum of the claim with its index bound: `sum 0 n (fun k : Z => ...)%K`.
+/// The sum of the claim with its index bound: `sum 0 n (fun k : Z => ...)%K`; variables stand for
+/// infinite ends.
 [[nodiscard]] std::string sum_text(const proof::Proof& proof);
+/// An end of the summed range as it stands in the statement: a variable when it is infinite, of the
+/// running variable in a recurrence.
+[[nodiscard]] std::string end_text(const proof::Proof& proof, bool upper);
+/// The variables for infinite ends, low before high.
+[[nodiscard]] std::vector<std::string> end_variables(const proof::Proof& proof);
+/// `(forall k : Z, k < lo_end \/ hi_end < k -> summand = 0)`, with the ends that are infinite and
+/// `summand` in place of the author's expression; empty when both are finite.
+[[nodiscard]] std::string vanishing_text(const proof::Proof& proof, const std::string& summand,
+                                         const std::string& low, const std::string& high,
+                                         const std::string& field = "K");
 /// `Theorem claim : ...` without the final dot, as coq-statement fixes it.
 /// `field`: the field it is stated over, quantified when it is K.
 [[nodiscard]] std::string statement_text(const proof::Proof& proof, const std::string& field = "K");
+/// The equation of a recurrence claim, of the sequence `s`.
+[[nodiscard]] std::string recurrence_equation(const proof::Proof& proof, const std::string& field);
 /// Names of the parameters in the order of the statement (rational, then integer).
 [[nodiscard]] std::vector<std::string> parameter_names(const proof::Proof& proof);
 /// The binder list `(K : char0_field) (x : K) (m : Z)`.

@@ -64,7 +64,7 @@ std::string factor_tactic(const proof::Proof& proof, const NonzeroFactor& f, con
     case Method::constant:
       return "apply inj_neq0; lia";
     case Method::linear:
-      return fmt::format("apply (neq0_by K _ ({})); [inj_norm; ring | lia]",
+      return fmt::format("apply (neq0_by K _ ({})); [inj_norm; ring | index]",
                          integer_polynomial(f.factor, scope));
     case Method::positive:
       return positive_tactic(f, scope);
@@ -75,7 +75,7 @@ std::string factor_tactic(const proof::Proof& proof, const NonzeroFactor& f, con
   }
   const claim::Assumption& a = proof.claim->assumptions[f.assumption];
   if (a.over_integers)
-    return fmt::format("apply (neq0_by K _ ({})); [inj_norm; ring | lia]",
+    return fmt::format("apply (neq0_by K _ ({})); [inj_norm; ring | index]",
                        integer_polynomial(f.factor, scope));
   return fmt::format(
       "apply (neq0_eq K _ ((inj 1 / inj {0}) * ({1} - {2}))%K); [inj_norm; field | "
@@ -113,6 +113,13 @@ std::string unit_tactic(const proof::Proof& proof, const proof::Unit& unit, cons
   return "";
 }
 
+/// The base is not 0, or the exponents are not negative.
+std::string power_premise(const proof::Proof& proof, const AtomStep& s, const Scope& scope) {
+  if (is_constant(s.from.base)) return "left; numeric_neq0";
+  if (s.nonzero) return "left; " + nonzero_tactic(proof, *s.nonzero, scope);
+  return "right; lia";
+}
+
 /// The law of one step, as a rewrite with all arguments.
 std::string step_law(const proof::Proof& proof, const AtomStep& s, const Scope& scope) {
   const std::string p = k_text(factored(s.factor, scope));
@@ -127,7 +134,7 @@ std::string step_law(const proof::Proof& proof, const AtomStep& s, const Scope& 
     case AtomKind::power:
       return fmt::format("(zpow_to K {} {} {} {} {}) by first [lia | {} | cbn; pq]", s.steps,
                          power_base(s.from.base, scope), z(s.to.argument), z(s.from.argument), p,
-                         is_constant(s.from.base) ? "left; numeric_neq0" : "right; lia");
+                         power_premise(proof, s, scope));
     case AtomKind::interval_product:
     case AtomKind::reciprocal_interval_product:
       break;
@@ -215,6 +222,10 @@ class InstanceTactics {
     bool any = false;
     for (const AtomStep& s : instance_.steps) {
       if (!s.literal) continue;
+      if (!s.reciprocals.empty()) {
+        expansion(s);
+        continue;
+      }
       // `values` writes 1/m! as the inverse of an integer, 1/1 included.
       fraction_ = fraction_ || has_fraction(s.factor) ||
                   s.from.kind == AtomKind::reciprocal_factorial ||
@@ -238,6 +249,36 @@ class InstanceTactics {
       any = true;
     }
     if (any) out_ += "  values.\n";
+  }
+
+  /// A reciprocal interval product of literal length as reciprocals of its factors.
+  void expansion(const AtomStep& s) {
+    fraction_ = true;
+    Tracker& side = s.side == AtomStep::Side::left ? left_ : right_;
+    const std::string name = fmt::format("step{}", ++named_);
+    std::string image = "(" + factored(s.factor, scope_) + ")";
+    std::string closing;
+    for (std::size_t i = 0; i < s.nonzero->factors.size(); ++i) {
+      const NonzeroFactor& f = s.nonzero->factors[i];
+      out_ += fmt::format("  assert ({}_{} : ({} <> 0)%K) by ({}).\n", name, i + 1,
+                          polynomial(f.factor, scope_), factor_tactic(proof_, f, scope_));
+      closing +=
+          fmt::format("{}refine ({}_{} (eq_trans _ W)); ring", i == 0 ? "" : " | ", name, i + 1);
+    }
+    for (const Atom& one : s.reciprocals) image += " * " + atom(one, scope_);
+    const long length = s.from.high.constant - s.from.low.constant;
+    out_ += fmt::format(
+        "  assert ({} : ({} = {})%K).\n  {{ rewrite (rip_at K {} {} {} {}) by lia. cbn "
+        "[rising_terms]. inj_norm. field.\n    repeat split; intros W; first [{}]. }}\n"
+        "  rewrite {}.\n",
+        name, atom(s.from, scope_), image, interval_base(s.from, scope_),
+        bracketed(affine(s.from.low, scope_)), bracketed(affine(s.from.high, scope_)), length,
+        closing, name);
+    side.atoms.erase(atom(s.from, scope_));
+    for (unsigned i = 0; i < s.multiplicity; ++i) {
+      side.factors.push_back("(" + factored(s.factor, scope_) + ")");
+      for (const Atom& one : s.reciprocals) ++side.atoms[atom(one, scope_)];
+    }
   }
 
   void step(const AtomStep& s) {
@@ -322,11 +363,11 @@ std::string nonzero_tactic(const proof::Proof& proof, const proof::Nonzero& why,
 }
 
 std::string interval_nonzero_tactic(const proof::Proof& proof, const Atom& a, const Scope& scope) {
-  if (a.base.terms.empty()) return "intros t Ht; apply (neq0_by K _ t); [pq | lia]";
+  if (a.base.terms.empty()) return "intros t Ht; apply (neq0_by K _ t); [pq | index]";
   if (is_constant(a.base))
     return fmt::format(
         "intros t Ht; apply (neq0_by_quotient K _ ({0} + {1} * t) {1}); "
-        "[inj_norm; field | lia]",
+        "[inj_norm; field | index]",
         a.base.terms[0].coefficient.get_str(), a.base_scale.get_str());
   for (std::size_t i = 2; i < proof.symbols.size(); ++i) {
     if (proof.symbols[i].kind != proof::SymbolKind::rational_parameter) continue;

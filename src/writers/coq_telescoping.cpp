@@ -3,6 +3,7 @@
 
 #include <fmt/format.h>
 
+#include "writers/coq_comments.hpp"
 #include "writers/coq_sections.hpp"
 #include "writers/coq_statement.hpp"
 #include "writers/coq_steps.hpp"
@@ -38,14 +39,18 @@ class TelescopingText {
 
  private:
   void define(const std::string& name, const std::string& body, bool index) {
-    out_ += fmt::format("Definition {} ({}{} : K) : K := ({})%K.\n", name, names_.n,
-                        index ? " " + names_.k : "", body);
+    out_ += fmt::format("Definition {} ({}{} : K) : K := {}%K.\n", name, names_.n,
+                        index ? " " + names_.k : "", enclosed(body));
   }
 
   void definitions() {
-    out_ += "(** ** The base term, the recurrence and the certificate *)\n\n";
-    out_ += fmt::format("Definition base ({} {} : Z) : K :=\n  ({})%K.\n\n", names_.n, names_.k,
-                        product(t_.base.product, scope_));
+    out_ += heading("The base term, the recurrence and the certificate");
+    out_ += note(
+        "Every term of the summand, at n + i and at the next index too, is a polynomial times "
+        "this.");
+    out_ += fmt::format("Definition base ({} {} : Z) : K :=\n  {}%K.\n\n", names_.n, names_.k,
+                        enclosed(product(t_.base.product, scope_)));
+    out_ += note("Polynomials: coefficients and weight, terms over base, certificate.");
     for (std::size_t i = 0; i < t_.coefficients.size(); ++i)
       define(fmt::format("a{}", i), factored(t_.coefficients[i], polynomials_), false);
     define("weight", factored(t_.weight.polynomial, polynomials_), false);
@@ -70,6 +75,10 @@ class TelescopingText {
       left.scope = with(scope_, 0, fmt::format("{} + {}", names_.n, i));
       left.by = {{0, shift_form(static_cast<long>(i))}};
     }
+    out_ += note(fmt::format(
+        "F{} {} {} is a polynomial times the base.  Each line moves one atom by its law, "
+        "(m + 1)! = (m + 1) m! for instance.",
+        j + 1, n, names_.k));
     out_ += fmt::format(
         "Lemma term_shift_{}_{} ({} {} : Z) : {}\n  F{} {} {} = ({} (inj {}) (inj {}) * "
         "base {} {})%K.\nProof.\n  intros Hn Hk. unfold F{}, base, {}.\n{}Qed.\n\n",
@@ -91,9 +100,10 @@ class TelescopingText {
     const Unfolded left{&t_.base.product,
                         {{1, shift_form(1, 1)}},
                         with(scope_, 1, fmt::format("{} + 1", names_.k))};
+    out_ += note("The base at the next index: the same laws.");
     out_ += fmt::format(
         "Lemma index_shift ({0} {1} : Z) : {2}\n  (down (inj {0}) (inj {1} + inj 1) * base {0} "
-        "({1} + 1)%Z = "
+        "({1} + 1) = "
         "up (inj {0}) (inj {1}) * base {0} {1})%K.\nProof.\n  intros Hn Hk. unfold down, up, "
         "base.\n{3}Qed.\n\n",
         names_.n, names_.k, region_, instance_tactics(proof_, *t_.index_shift, left, {}, scope_));
@@ -109,7 +119,10 @@ class TelescopingText {
   }
 
   void equality() {
-    out_ += "(** ** The polynomial equality *)\n\n";
+    out_ += heading("The polynomial equality");
+    out_ += note(
+        "Both sides are polynomials; they are expanded and compared.  Everything else is "
+        "bookkeeping.");
     bool fraction =
         has_fraction(t_.up) || has_fraction(t_.down) || has_fraction(t_.weight.polynomial);
     std::string unfold = "c, down, up, weight";
@@ -131,7 +144,7 @@ class TelescopingText {
     for (std::size_t i = 0; i < t_.shifts.size(); ++i) {
       std::string f;
       for (std::size_t j = 0; j < t_.shifts[i].size(); ++j)
-        f += fmt::format("{}F{} {}%Z {}", f.empty() ? "" : " + ", j + 1,
+        f += fmt::format("{}F{} {} {}", f.empty() ? "" : " + ", j + 1,
                          shifted(names_.n, static_cast<unsigned>(i)), k);
       out += fmt::format("{}weight (inj {}) * a{} (inj {}) * ({})", out.empty() ? "" : " + ",
                          names_.n, i, names_.n, f);
@@ -156,6 +169,8 @@ class TelescopingText {
                                 names_.k);
     const std::string n = fmt::format("(inj {})", names_.n);
     const std::string k = fmt::format("(inj {})", names_.k);
+    out_ += note(
+        "The equality times the base: the combination of terms is a difference of values of G.");
     out_ += fmt::format(
         "Lemma telescoping ({0} {1} : Z) : {2}\n  ({3} =\n   {4} -\n   {5})%K.\nProof.\n"
         "  intros Hn Hk.\n{6}"
@@ -170,11 +185,11 @@ class TelescopingText {
     for (std::size_t i = 0; i < t_.shifts.size(); ++i) {
       std::string f;
       for (std::size_t j = 0; j < t_.shifts[i].size(); ++j)
-        f += fmt::format("{}F{} {}%Z {}", f.empty() ? "" : " + ", j + 1,
+        f += fmt::format("{}F{} {} {}", f.empty() ? "" : " + ", j + 1,
                          shifted(names_.n, static_cast<unsigned>(i)), names_.k);
-      sums +=
-          fmt::format("{0}weight (inj {1}) * a{2} (inj {1}) * sum ({3}) ({4}) (fun {5} : Z => {6})",
-                      sums.empty() ? "" : " + ", names_.n, i, low_, high_, names_.k, f);
+      sums += fmt::format("{0}weight (inj {1}) * a{2} (inj {1}) * sum {3} {4} (fun {5} : Z => {6})",
+                          sums.empty() ? "" : " + ", names_.n, i, bracketed(low_), bracketed(high_),
+                          names_.k, f);
     }
     const std::string shift_case =
         t_.index_shift
@@ -184,19 +199,24 @@ class TelescopingText {
                   "    rewrite (index_shift {0} {1}) by lia. ring.",
                   names_.n, names_.k)
             : std::string("unfold c; ring.");
+    out_ += note("G after the last index of the common range, and G at the first one.");
     out_ += fmt::format(
-        "Lemma summed ({0} : Z) : {1} <= {0} ->\n  ({2} =\n   {3} -\n   {4})%K.\nProof.\n  intros "
-        "Hn.\n"
+        "Definition right_end ({0} : Z) : K :=\n  ({1})%K.\n"
+        "Definition left_end ({0} : Z) : K :=\n  ({2})%K.\n\n",
+        names_.n, upper(bracketed(high_)), lower(bracketed(low_)));
+    out_ += note("Summed over the common range, the differences leave the two ends.");
+    out_ += fmt::format(
+        "Lemma summed ({0} : Z) : {1} <= {0} ->\n  ({2} =\n   right_end {0} - left_end {0})%K.\n"
+        "Proof.\n  intros Hn. unfold right_end, left_end.\n"
         "  rewrite !sum_scal, ?sum_add.\n"
-        "  refine (sum_tele_ends K ({5}) ({6}) _\n    (fun {7} : Z => {8})%K\n    (fun {7} : Z => "
-        "{9})%K\n"
-        "    ({5}) ({6}) _ _ _ _ _).\n"
+        "  refine (sum_tele_ends K {3} {4} _\n    (fun {5} : Z => {6})%K\n    (fun {5} : Z => "
+        "{7})%K\n"
+        "    {3} {4} _ _ _ _ _).\n"
         "  - lia.\n  - reflexivity.\n  - reflexivity.\n"
-        "  - intros {7} Hk. exact (telescoping {0} {7} Hn Hk).\n"
-        "  - intros {7} Hk. {10}\nQed.\n\n",
-        names_.n, bracketed(std::to_string(proof_.threshold)), sums, upper(bracketed(high_)),
-        lower(bracketed(low_)), low_, high_, names_.k, upper(names_.k), lower(names_.k),
-        shift_case);
+        "  - intros {5} Hk. exact (telescoping {0} {5} Hn Hk).\n"
+        "  - intros {5} Hk. {8}\nQed.\n\n",
+        names_.n, bracketed(std::to_string(proof_.threshold)), sums, bracketed(low_),
+        bracketed(high_), names_.k, upper(names_.k), lower(names_.k), shift_case);
   }
 
   const proof::Proof& proof_;

@@ -6,7 +6,6 @@
 #include <fmt/format.h>
 
 #include <algorithm>
-#include <set>
 
 namespace sumwright::writers::coq {
 
@@ -17,30 +16,6 @@ using proof::Factored;
 using proof::Polynomial;
 
 namespace {
-
-/// Everything a generated file mentions, and Coq's own words.
-const std::set<std::string>& reserved() {
-  static const std::set<std::string> words = {
-      "K",           "inj",        "pow",         "zpow",       "sum",       "product", "factorial",
-      "rfactorial",  "rising",     "falling",     "binomial",   "ip",        "rip",     "gip",
-      "ap",          "gbinomial",  "Z",           "N",          "Q",         "R",       "nat",
-      "Prop",        "Set",        "Type",        "SProp",      "fun",       "forall",  "exists",
-      "match",       "with",       "end",         "let",        "in",        "if",      "then",
-      "else",        "as",         "at",          "return",     "fix",       "cofix",   "for",
-      "where",       "mod",        "IF",          "using",      "by",        "of",      "S",
-      "O",           "eq",         "or",          "and",        "not",       "True",    "False",
-      "list",        "nil",        "cons",        "last",       "length",    "rec",     "base",
-      "term",        "c",          "up",          "down",       "weight",    "s",       "t",
-      "equality",    "index",      "field",       "ring",       "lia",       "claim",   "carrier",
-      "char0_field", "leading",    "initial",     "conclusion", "remainder", "summand", "left_side",
-      "right_side",  "x_",         "I",           "id",         "I_",        "kzero",   "kone",
-      "kadd",        "kmul",       "ksub",        "kopp",       "kdiv",      "kinv",    "left",
-      "right",       "values",     "telescoping", "total",      "z",         "pq",      "pqf",
-      "comb",        "positive",   "nonneg",      "u",          "v",         "w",       "exists2",
-      "Definition",  "Theorem",    "Lemma",       "Proof",      "Qed",       "Section", "End",
-      "Variable",    "Hypothesis", "Let"};
-  return words;
-}
 
 struct Sum {
   std::string text;
@@ -77,15 +52,6 @@ bool is_unit_monomial(const proof::Monomial& m) {
 
 }  // namespace
 
-std::string safe_name(const std::string& name) {
-  if (reserved().contains(name) || name.find('_') != std::string::npos ||
-      name.starts_with("nonzero") || name.starts_with("H"))
-    return name + "_v";
-  // Names with a digit could be those of numbered definitions (a0, p1, E2, F1, ...).
-  if (name.find_first_of("0123456789") != std::string::npos) return name + "_v";
-  return name;
-}
-
 Scope plain_scope(const proof::Proof& proof) {
   Scope out;
   for (const proof::Symbol& s : proof.symbols) {
@@ -112,6 +78,17 @@ std::string bracketed(const std::string& text) {
   if (text.empty()) return text;
   if (text.front() != '-' && text.find(' ') == std::string::npos) return text;
   return "(" + text + ")";
+}
+
+std::string enclosed(const std::string& text) {
+  if (text.find(' ') == std::string::npos) return text;
+  int depth = 0;
+  for (std::size_t i = 0; i < text.size(); ++i) {
+    if (text[i] == '(') ++depth;
+    if (text[i] == ')') --depth;
+    if (depth == 0 && i + 1 < text.size()) return "(" + text + ")";
+  }
+  return text;
 }
 
 std::string affine(const Affine& form, const Scope& scope) {
@@ -152,7 +129,7 @@ std::string polynomial(const Polynomial& p, const Scope& scope) {
 
 std::string rational(const mpq_class& value) {
   const mpz_class& num = value.get_num();
-  const std::string above =
+  std::string above =
       num < 0 ? fmt::format("inj ({})", num.get_str()) : fmt::format("inj {}", num.get_str());
   if (value.get_den() == 1) return above;
   return fmt::format("{} / inj {}", above, value.get_den().get_str());
@@ -219,6 +196,7 @@ std::string product(const proof::Product& p, const Scope& scope) {
 Affine substitute(const Affine& form, const Substitution& by) {
   Affine out = form;
   for (const auto& [at, value] : by) {
+    if (at >= form.coefficients.size()) continue;  // a form that the atom does not have
     const long c = form.coefficients[at];
     if (c == 0) continue;
     out.coefficients[at] -= c;

@@ -23,11 +23,18 @@ struct Scope {
 /// Symbol `at` written as the Z term `text` instead.
 [[nodiscard]] Scope with(Scope scope, std::size_t at, const std::string& text);
 
-/// A safe name for a symbol of the claim.
+/// The name in a generated file of the claim's symbol `name`: the same, or with `_v` when that
+/// could be a word of Coq or another name of the file. Different symbols get different names.
 [[nodiscard]] std::string safe_name(const std::string& name);
 
 /// In brackets unless it is one word.
 [[nodiscard]] std::string bracketed(const std::string& text);
+
+/// Whether two texts are one term to Coq: they differ in spaces and redundant brackets at most.
+[[nodiscard]] bool same_term(const std::string& a, const std::string& b);
+
+/// In brackets unless it is one word or stands in brackets already.
+[[nodiscard]] std::string enclosed(const std::string& text);
 
 [[nodiscard]] std::string affine(const proof::Affine& form, const Scope& scope);
 /// A polynomial in integer symbols as a term of type Z, each symbol replaced by `shifted` text if

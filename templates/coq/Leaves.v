@@ -136,4 +136,9 @@ Proof. intros -> E. rewrite E, inj_1. ring. Qed.
 End Leaves.
 
 (** Products and powers of nonzero integers. *)
-Ltac numeric_neq0 := repeat first [apply mul_neq0 | apply pow_neq0]; apply inj_neq0; lia.
+Ltac numeric_neq0 :=
+  repeat lazymatch goal with
+         | |- kmul _ _ <> _ => apply mul_neq0
+         | |- pow _ _ <> _ => apply pow_neq0
+         end;
+  apply inj_neq0; lia.

@@ -99,6 +99,38 @@ Proof.
     + apply inv_neq0, X.
 Qed.
 
+(** Normal form: of one nonzero base there remain the powers to the symbols and to 1.  All
+    powers are taken apart alike, on both sides, so that it does not matter which of them
+    met in a product. *)
+Lemma zpow_plus x m e : (x <> 0)%K -> zpow x (m + e) = (zpow x m * zpow x e)%K.
+Proof. intros X. apply zpow_add; [left; exact X | reflexivity]. Qed.
+
+Lemma zpow_opposite x m : (x <> 0)%K -> zpow x (- m) = (/ zpow x m)%K.
+Proof. intros X. symmetry. apply zpow_inv; [exact X | reflexivity]. Qed.
+
+Lemma zpow_minus x m e : (x <> 0)%K -> zpow x (m - e) = (zpow x m * / zpow x e)%K.
+Proof. intros X. rewrite <- zpow_opposite by exact X. apply (zpow_plus x m (- e) X). Qed.
+
+Lemma zpow_times x c m d : (x <> 0)%K -> c = Z.of_nat d -> zpow x (c * m) = pow (zpow x m) d.
+Proof.
+  intros X ->. induction d as [|d IH]; cbn [pow].
+  - rewrite zpow_0_r. exact (inj_1 K).
+  - rewrite <- IH, <- zpow_plus by exact X. f_equal. lia.
+Qed.
+
+Lemma zpow_times_neg x c m d :
+  (x <> 0)%K -> c = - Z.of_nat d -> zpow x (c * m) = (/ pow (zpow x m) d)%K.
+Proof.
+  intros X ->. rewrite <- (zpow_times x _ m d X eq_refl), <- zpow_opposite by exact X.
+  f_equal. lia.
+Qed.
+
+Lemma zpow_literal x c d : c = Z.of_nat d -> zpow x c = pow (zpow x 1) d.
+Proof. intros C. rewrite zpow_1_r. exact (zpow_value x c d C). Qed.
+
+Lemma zpow_literal_neg x c d : c = - Z.of_nat d -> zpow x c = (/ pow (zpow x 1) d)%K.
+Proof. intros C. rewrite zpow_1_r. exact (zpow_value_neg x c d C). Qed.
+
 (** A unit x^m x^(-m) put into one side of an equation. *)
 Lemma left_zpow_unit x m m' (s t : K) :
   (x <> 0)%K -> m' = - m -> (s * (zpow x m * zpow x m') = t -> s = t)%K.
@@ -169,3 +201,35 @@ Proof.
 Qed.
 
 End Powers.
+
+(** Every power of x <> 0 in the goal in the normal form; X says that x <> 0.  Exponents beyond
+    1000 stay as they are: natural numbers are unary. *)
+Ltac split_power K x X e :=
+  match isZcst e with
+  | true =>
+      let small := eval compute in (Z.abs e <=? 1000) in
+      lazymatch small with true => idtac end;
+      lazymatch e with
+      | 1 => fail
+      | Zneg _ =>
+          let d := eval compute in (Z.to_nat (- e)) in rewrite (zpow_literal_neg K x e d eq_refl)
+      | _ => let d := eval compute in (Z.to_nat e) in rewrite (zpow_literal K x e d eq_refl)
+      end
+  | _ =>
+      lazymatch e with
+      | ?u + ?v => rewrite (zpow_plus K x u v X)
+      | ?u - ?v => rewrite (zpow_minus K x u v X)
+      | - ?u => rewrite (zpow_opposite K x u X)
+      | ?c * ?u =>
+          let d := eval compute in (Z.to_nat (Z.abs c)) in
+          first [ rewrite (zpow_times K x c u d X eq_refl)
+                | rewrite (zpow_times_neg K x c u d X eq_refl) ]
+      end
+  end.
+
+Ltac split_powers K x X :=
+  repeat match goal with |- context [@zpow K x ?e] => split_power K x X e end.
+
+(** What [field] asks for after that. *)
+Ltac nonzero_powers :=
+  repeat match goal with |- _ /\ _ => split end; apply zpow_neq0; assumption.

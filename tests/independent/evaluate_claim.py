@@ -80,7 +80,7 @@ class Sum:
     def __init__(self, table):
         self.summand = parse(table["summand"])
         ranges = table.get("over", [])
-        self.ranges = [(r["index"], parse(r["low"]), parse(r["high"])) for r in ranges]
+        self.ranges = [(r["index"], bound(r["low"]), bound(r["high"])) for r in ranges]
 
     def value(self, point):
         return self.inner(dict(point), 0)
@@ -92,15 +92,37 @@ class Sum:
                 raise NoValue(value.why + " at " + show(point))
             return value
         index, low, high = self.ranges[depth]
-        bounds = definite(low, point), definite(high, point)
-        if any(b.denominator != 1 for b in bounds):
-            raise BadClaim("a bound that is not an integer")
+        first, last = window(low, high, point)
         total = Fraction(0)
-        for k in range(int(bounds[0]), int(bounds[1]) + 1):
+        for k in range(first, last + 1):
             point[index] = Fraction(k)
-            total += self.inner(point, depth + 1)
+            term = self.inner(point, depth + 1)
+            margin = low is None and k < first + MARGIN or high is None and k > last - MARGIN
+            if margin and term != 0:
+                raise BadClaim(f"the support of an infinite range reaches {show(point)}")
+            total += term
         point.pop(index, None)
         return total
+
+
+MARGIN = 4  # terms next to the window of an infinite range that must be 0
+
+
+def bound(text):
+    """A finite bound as an expression, an infinite one as None."""
+    return None if str(text).strip() in ("inf", "-inf") else parse(text)
+
+
+def window(low, high, point):
+    """First and last index: far beyond the support of terms with arguments of this size."""
+    reach = 2 * MARGIN + sum(2 * abs(int(v)) for v in point.values() if v.denominator == 1)
+    ends = [definite(b, point) if b is not None else None for b in (low, high)]
+    if any(e is not None and e.denominator != 1 for e in ends):
+        raise BadClaim("a bound that is not an integer")
+    known = [int(e) for e in ends if e is not None]
+    first = int(ends[0]) if ends[0] is not None else min([-reach, *known])
+    last = int(ends[1]) if ends[1] is not None else max([reach, *known])
+    return first, last
 
 
 def comparison(text):

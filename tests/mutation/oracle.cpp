@@ -3,7 +3,10 @@
 
 #include <optional>
 #include <stdexcept>
+#include <string>
+#include <vector>
 
+#include "claim/reader.hpp"
 #include "term/evaluation.hpp"
 
 namespace sumwright::testing {
@@ -29,6 +32,27 @@ claim::Claim recurrence_only(const claim::Claim& claim) {
   claim::Claim out = claim;
   out.closed = nullptr;
   out.other_sum.reset();
+  return out;
+}
+
+/// An infinite range as one that reaches far beyond the support of all small mutants.
+claim::Claim with_window(const claim::Claim& claim) {
+  claim::Claim out = claim;
+  std::vector<std::string> names{claim.running};
+  std::string reach = "3*" + claim.running + " + 150";
+  for (const claim::Parameter& p : claim.parameters)
+    if (p.ring == claim::Parameter::Ring::integers) {
+      names.push_back(p.name);
+      reach += " + 2*" + p.name;
+    }
+  const auto bound = [&](const std::string& text) {
+    const claim::Source source{"window", text};
+    return claim::parse_expression(source, {0, text.size()}, names);
+  };
+  for (claim::Range& r : out.sum.over) {
+    if (!r.low.value) r.low = {claim::Bound::Kind::finite, bound("-(" + reach + ")"), r.low.place};
+    if (!r.high.value) r.high = {claim::Bound::Kind::finite, bound(reach), r.high.place};
+  }
   return out;
 }
 
@@ -88,11 +112,12 @@ std::optional<std::pair<mpq_class, mpq_class>> identity_sides(const claim::Claim
 Opinion claim_holds(const claim::Claim& claim, long span) {
   Opinion out;
   std::vector<Assignment> samples = term::sample_parameters(claim, 6);
+  const claim::Claim finite = with_window(claim);
   for (long i = 0; i < span; ++i)
     for (Assignment at : samples) {
       at[claim.running] = claim.from + i;
       if (!term::satisfies_hypotheses(claim, at)) continue;
-      const term::Sides sides = term::evaluate_sides(claim, at);
+      const term::Sides sides = term::evaluate_sides(finite, at);
       ++out.cases;
       if (sides.left.number && sides.right.number && *sides.left.number == *sides.right.number)
         continue;
@@ -162,7 +187,8 @@ std::string check_counterexample(const claim::Claim& claim, const proof::Proof& 
   if (!term::satisfies_hypotheses(claim, at)) return "the point does not satisfy the hypotheses";
   // Indices are named where the summand has no value; they are not part of the claim's assignment.
   for (const claim::Range& r : claim.sum.over) at.erase(r.index);
-  const term::Sides sides = term::evaluate_sides(equality ? claim : recurrence_only(claim), at);
+  const term::Sides sides =
+      term::evaluate_sides(with_window(equality ? claim : recurrence_only(claim)), at);
   if (sides.left.number && sides.right.number && *sides.left.number == *sides.right.number)
     return "both sides are equal at the point";
   if (sides.left.number && sides.left.number->get_str() != point.left)

@@ -55,6 +55,30 @@ TEST_F(AtomKeysTest, LiteralAtomsHaveTheirValues) {
     EXPECT_FALSE(is_literal(atom));
 }
 
+// 1/(a+i) ... 1/(a+j-1), also where a has a denominator or a minus sign.
+TEST_F(AtomKeysTest, ReciprocalsOfLiteralLengthAreExpanded) {
+  const testing::Point at{4, 2, 1, mpq_class(1, 2)};
+  const auto scaled = [&](const char* base, long scale) {
+    return term::interval_atom(testing::polynomial_of(setting_, base), scale, affine(setting_, "k"),
+                               affine(setting_, "k + 3"), true);
+  };
+  for (const term::Atom& atom : {interval("x", "0", "1", true), interval("x", "-1", "2", true),
+                                 interval("-x", "2", "4", true), interval("0", "n", "n + 2", true),
+                                 scaled("x", 3), scaled("1", 2), scaled("-4*x - 2", 5)}) {
+    const Expanded made = expanded_reciprocal(atom);
+    mpq_class value = made.constant;
+    for (const term::Atom& one : made.reciprocals) value *= *testing::value_of(one, at);
+    EXPECT_EQ(testing::value_of(atom, at), value);
+    term::Product product;
+    product.multiply(atom);
+    const AtomGroups groups(ring_, product);
+    EXPECT_EQ(groups.expanded.size(), 1U);
+    EXPECT_TRUE(groups.intervals.empty());
+    EXPECT_EQ(groups.reciprocals.empty(), made.reciprocals.empty());
+  }
+  EXPECT_THROW((void)expanded_reciprocal(interval("0", "-1", "1", true)), std::domain_error);
+}
+
 TEST_F(AtomKeysTest, LiteralsOutsideTheirDomainAreFaults) {
   EXPECT_THROW((void)literal_value(ring_, fact("-1")), std::logic_error);
   EXPECT_THROW((void)literal_value(ring_, fact("900000")), std::length_error);

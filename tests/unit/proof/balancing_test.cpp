@@ -51,6 +51,24 @@ TEST(Balancing, FalseBalancesDoNot) {
   }
 }
 
+// Where the factor is 0 the term is, and where it is not the reciprocal factorial is.
+TEST(Balancing, AFactorBesideItsReciprocalFactorial) {
+  const term::Setting setting = testing::usual_setting();
+  const term::Facts facts = testing::usual_facts(setting);
+  const auto first = [&](const std::string& text) {
+    std::string why;
+    return balance(setting, facts, terms_from(setting, text), why)->terms.at(0);
+  };
+  const TermDraft zero = first("m/factorial(-m)");
+  ASSERT_TRUE(zero.zero_atom);
+  ASSERT_TRUE(zero.zero_factor);
+  EXPECT_EQ(term::text(setting, *zero.zero_factor), "m");
+  EXPECT_TRUE(first("(n - k)/factorial(k - n)").zero_factor);
+  EXPECT_FALSE(first("m/factorial(m)").zero_atom);
+  EXPECT_FALSE(first("(m - 1)/factorial(-m)").zero_atom) << "1 at m = 0";
+  EXPECT_FALSE(first("x/factorial(-m)").zero_atom) << "a rational parameter";
+}
+
 // A term with an rfact of negative argument is 0, and is said to be so.
 TEST(Balancing, SupportMakesZero) {
   const term::Setting setting = testing::usual_setting();

@@ -2,33 +2,27 @@
 #pragma once
 
 #include <memory>
+#include <stdexcept>
 #include <string>
 
 #include "../term/term_support.hpp"
 #include "proof/argument.hpp"
 #include "proof/build.hpp"
 #include "proof/evidence.hpp"
+#include "proof/statement.hpp"
 
 namespace sumwright::testing {
 
-/// What the ladder of `build` works on.
+/// What the ladder of `build` works on. Every condition of the terms must be settled.
 inline proof::building::Terms terms_of(const ClaimParts& parts) {
+  proof::Proof proof;
+  std::vector<mpz_class> suspects;
   const auto claim = read_claim(parts);
-  term::Setting setting = term::make_setting(claim);
-  std::optional<proof::building::AuthorRange> range;
-  const long from = claim->from.get_si();
-  term::Facts region = setting.from(from);
-  if (setting.has_index) {
-    range = proof::building::AuthorRange{*term::make_end(setting, claim->sum.over[0].low, false),
-                                         *term::make_end(setting, claim->sum.over[0].high, true)};
-    for (const term::End* end : {&range->low, &range->high})
-      if (end->inside.size() == 1)
-        for (const term::Affine& form : end->inside[0]) region.add(form);
-  }
-  term::Conversion summand = term::convert(setting, region, claim->sum.summand);
-  std::optional<term::Conversion> closed;
-  if (claim->closed) closed = term::convert(setting, setting.from(from), claim->closed);
-  return {std::move(setting), range, region, from, std::move(summand), std::move(closed)};
+  proof.from = claim->from.get_si();
+  const std::unique_ptr<proof::building::Terms> terms =
+      proof::building::convert_terms(claim, proof, suspects);
+  if (!terms) throw std::runtime_error(proof.reason);
+  return std::move(*terms);
 }
 
 inline proof::building::EvidenceDraft evidence_of(const proof::building::Terms& terms) {

@@ -1,0 +1,146 @@
+// Infinite ranges: the sum between any ends beyond which all terms are 0 is the sum between the
+// ends of the support.
+
+#include <fmt/format.h>
+
+#include "writers/coq_comments.hpp"
+#include "writers/coq_section_text.hpp"
+#include "writers/coq_statement.hpp"
+
+namespace sumwright::writers::coq {
+
+namespace {
+
+class FiniteRangeText : private SectionText {
+ public:
+  explicit FiniteRangeText(const proof::Proof& proof) : SectionText(proof) {}
+
+  std::string run() {
+    const claim::Range& author = proof_.claim->sum.over[0];
+    lo_ = author.low.value ? integer_text(proof_, *author.low.value) : "lo_end";
+    hi_ = author.high.value ? integer_text(proof_, *author.high.value) : "hi_end";
+    out_ += heading("An infinite range is a finite one");
+    outside_support();
+    finite_sum();
+    if (!equality_) recurrence();
+    return out_;
+  }
+
+ private:
+  [[nodiscard]] std::string binders(const std::string& type) const {
+    std::string out;
+    for (const std::string& end : end_variables(proof_))
+      out += fmt::format(" ({} : {})", end, type);
+    return out;
+  }
+
+  [[nodiscard]] std::string of_running(const std::string& n) const {
+    std::string out;
+    for (const std::string& end : end_variables(proof_)) out += fmt::format(" ({} {})", end, n);
+    return out;
+  }
+
+  void outside_support() {
+    const proof::FiniteRange& finite = *proof_.finite_range;
+    const proof::Affine n = running(1, 0);
+    out_ += note("Beyond these ends every term is 0, being over (-m)! with m > 0.");
+    out_ += fmt::format(
+        "Lemma outside_support ({0} {1} : Z) : {2} <= {0} -> {3}{4} ->\n  summand {0} {1} = 0%K.\n"
+        "Proof.\n  intros Hn {5}Ho. rewrite (summand_terms {0} {1}) by index.\n"
+        "  {6}.\nQed.\n\n",
+        names_.n, names_.k, from_, index_premise(proof_), beyond_support(proof_),
+        index_premise(proof_).empty() ? "" : "Hk ", either(finite, n));
+  }
+
+  [[nodiscard]] std::string either(const proof::FiniteRange& finite, const proof::Affine& n) const {
+    if (!finite.below) return vanish(finite.above, n, scope_);
+    if (!finite.above) return vanish(finite.below, n, scope_);
+    return fmt::format("destruct Ho as [Ho|Ho]; [{}|{}]", vanish(finite.below, n, scope_),
+                       vanish(finite.above, n, scope_));
+  }
+
+  void finite_sum() {
+    const proof::FiniteRange& finite = *proof_.finite_range;
+    const std::string low = integer_text(proof_, *finite.range.low.value);
+    const std::string high = integer_text(proof_, *finite.range.high.value);
+    const std::string term = fmt::format("summand {} {}", names_.n, names_.k);
+    out_ += note(
+        "Ends beyond which all terms are 0, whatever they are, and those of the support give the "
+        "same sum.");
+    out_ += fmt::format(
+        "Lemma finite_sum ({0} : Z){1} : {2} <= {0} ->\n  {3} ->\n"
+        "  sum {4} {5} (fun {6} : Z => {7}) = left_side {0}.\nProof.\n"
+        "  intros Hn Hv. unfold left_side.\n"
+        "  apply (sum_same K {4} {5} {8} {9} (fun {6} : Z => {7})).\n"
+        "  - intros {6} Hk Ho. cbv beta. apply outside_support; index.\n"
+        "  - intros {6} Hk Ho. cbv beta. first [apply Hv; lia | exfalso; index].\nQed.\n\n",
+        names_.n, binders("Z"), from_, vanishing_text(proof_, term, lo_, hi_), lo_, hi_, names_.k,
+        term, low, high);
+  }
+
+  void recurrence() {
+    const std::string term = fmt::format("summand {} {}", names_.n, names_.k);
+    out_ += note("The sum as a sequence.");
+    out_ += fmt::format(
+        "Lemma finite_sequence{0} (s : Z -> K) :\n"
+        "  (forall {1} : Z, s {1} = sum {2} {3} (fun {4} : Z => {5})) ->\n"
+        "  (forall {1} : Z, {6} <= {1} -> {7}) ->\n"
+        "  forall {1} : Z, {6} <= {1} -> s {1} = left_side {1}.\nProof.\n"
+        "  intros Hs Ho {1} Hn. rewrite Hs. exact (finite_sum {1}{8} Hn (Ho {1} Hn)).\nQed.\n\n",
+        binders("Z -> Z"), names_.n, end_text(proof_, false), end_text(proof_, true), names_.k,
+        term, from_, vanishing_text(proof_, term, end_text(proof_, false), end_text(proof_, true)),
+        of_running(names_.n));
+  }
+
+  std::string lo_;
+  std::string hi_;
+};
+
+}  // namespace
+
+std::string beyond_support(const proof::Proof& proof) {
+  const proof::FiniteRange& finite = *proof.finite_range;
+  const std::string k = names(proof).k;
+  std::string out;
+  if (finite.below) out = fmt::format("{} < {}", k, integer_text(proof, *finite.range.low.value));
+  if (finite.above)
+    out += fmt::format("{}{} < {}", out.empty() ? "" : " \\/ ",
+                       integer_text(proof, *finite.range.high.value), k);
+  return out;
+}
+
+std::string finite_range_section(const proof::Proof& proof) { return FiniteRangeText(proof).run(); }
+
+std::string infinite_claim_section(const proof::Proof& proof) {
+  if (!proof.finite_range || proof.claim->is_equality()) return "";
+  const std::string n = names(proof).n;
+  const std::string from = bracketed(std::to_string(proof.from));
+  std::string binders;
+  std::string ends;
+  for (const std::string& end : end_variables(proof)) {
+    binders += fmt::format(" ({} : Z -> Z)", end);
+    ends += " " + end;
+  }
+  const std::string term = fmt::format("summand {} {}", n, names(proof).k);
+  return note("The recurrence of a sum with infinite ends.") +
+         fmt::format(
+             "Lemma infinite_range{0} (s : Z -> K) :\n"
+             "  (forall {1} : Z, s {1} = sum {2} {3} (fun {4} : Z => {5})) ->\n"
+             "  (forall {1} : Z, {6} <= {1} -> {7}) ->\n"
+             "  forall {1} : Z, {6} <= {1} ->\n  {8}.\nProof.\n"
+             "  intros Hs Ho {1} Hn. rewrite !(finite_sequence{9} s Hs Ho) by lia.\n"
+             "  exact (conclusion {1} Hn).\nQed.\n\n",
+             binders, n, end_text(proof, false), end_text(proof, true), names(proof).k, term, from,
+             vanishing_text(proof, term, end_text(proof, false), end_text(proof, true)),
+             recurrence_equation(proof, "K"), ends);
+}
+
+std::string index_premise(const proof::Proof& proof) {
+  const claim::Range& r = proof.claim->sum.over.at(0);
+  if (!r.low.value && !r.high.value) return "";
+  const std::string low = r.low.value ? integer_text(proof, *r.low.value) + " <= " : "";
+  const std::string high = r.high.value ? " <= " + integer_text(proof, *r.high.value) : "";
+  return low + name_of(r.index) + high + " -> ";
+}
+
+}  // namespace sumwright::writers::coq
