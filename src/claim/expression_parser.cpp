@@ -34,6 +34,41 @@ class Level {
   return {first.offset, end - first.offset};
 }
 
+[[nodiscard]] std::string lower_case(std::string_view text) {
+  std::string out(text);
+  for (char& c : out) {
+    if (c >= 'A' && c <= 'Z') c = static_cast<char>(c - 'A' + 'a');
+  }
+  return out;
+}
+
+// The name that differs from `word` in upper and lower case only.
+[[nodiscard]] std::optional<std::string> same_but_for_case(std::string_view word,
+                                                           const std::vector<std::string>& names) {
+  const std::string wanted = lower_case(word);
+  for (const std::string& name : names) {
+    if (lower_case(name) == wanted) return name;
+  }
+  return std::nullopt;
+}
+
+// The function that people call by another name in formulas and programs.
+[[nodiscard]] std::string_view function_called(std::string_view word) {
+  struct Habit {
+    std::string_view word;  // lower case
+    std::string_view function;
+  };
+  static constexpr Habit habits[] = {
+      {"c", "binomial"},   {"binom", "binomial"}, {"choose", "binomial"},   {"comb", "binomial"},
+      {"ncr", "binomial"}, {"fact", "factorial"}, {"pochhammer", "rising"}, {"poch", "rising"},
+      {"rf", "rising"},    {"ff", "falling"}};
+  const std::string wanted = lower_case(word);
+  for (const Habit& habit : habits) {
+    if (habit.word == wanted) return habit.function;
+  }
+  return {};
+}
+
 class Parser {
  public:
   Parser(const Source& source, const MappedText& text, const Symbols& symbols, const Limits& limits,
@@ -325,7 +360,8 @@ class Parser {
       throw InputError(source_, token.place,
                        fmt::format("{} may not stand here: {}", in_quotes(name), found->second));
     }
-    std::string note = suggestion(name, symbols_.allowed);
+    const auto twin = same_but_for_case(name, symbols_.allowed);
+    std::string note = twin ? did_you_mean(*twin) : suggestion(name, symbols_.allowed);
     if (note.empty()) note = suggestion(name, function_names());
     if (note.empty()) note = "every symbol is an index, the running variable or a parameter";
     throw InputError(source_, token.place, fmt::format("{} is not declared", in_quotes(name)),
@@ -334,11 +370,13 @@ class Parser {
 
   [[noreturn]] void refuse_call(const Token& token) const {
     const std::string name(token.text);
-    std::string note = suggestion(name, function_names());
+    const auto twin = same_but_for_case(name, function_names());
+    std::string note = twin ? did_you_mean(*twin) : suggestion(name, function_names());
+    if (const auto known = function_called(name); !known.empty()) note = did_you_mean(known);
     if (is_allowed(name)) {
       note = fmt::format("there are no implicit products; write {}*(...)", printable(name));
     }
-    if (note.empty()) note = "the functions are " + alternatives(function_names());
+    if (note.empty()) note = "the functions are " + listing(function_names());
     throw InputError(source_, token.place, fmt::format("{} is not a function", in_quotes(name)),
                      note);
   }

@@ -46,7 +46,7 @@ namespace {
   }
   std::string note = home_of(entry.key);
   if (note.empty()) note = suggestion(entry.key, known);
-  if (note.empty()) note = "the keys here are " + alternatives(known);
+  if (note.empty()) note = "the keys here are " + listing(known);
   throw InputError(source, entry.key_place,
                    fmt::format("unknown key {} in {}", in_quotes(entry.key), header), note);
 }

@@ -45,7 +45,7 @@ struct Habit {
   std::string_view advice;
 };
 
-constexpr std::array<Habit, 15> kHabits = {{
+constexpr std::array<Habit, 21> kHabits = {{
     {".", "there are no decimals; write a quotient, such as 3/2"},
     {"!", "write factorial(n)"},
     {"=", "an expression has no equality sign; conditions use <=, <, >=, > or !="},
@@ -61,6 +61,12 @@ constexpr std::array<Habit, 15> kHabits = {{
     {"\xE2\x8B\x85", "write * for a product"},   // U+22C5 dot operator
     {"\xE2\x89\xA4", "write <="},                // U+2264
     {"\xE2\x89\xA5", "write >="},                // U+2265
+    {"\xC2\xB2", "write ^2"},                    // U+00B2 superscript two
+    {"\xC2\xB3", "write ^3"},                    // U+00B3 superscript three
+    {"\xE2\x81\xB4", "write ^4"},                // U+2074 superscript four
+    {"\xE2\x81\xBF", "write ^n"},                // U+207F superscript n
+    {"\xE2\x81\xBB", "write ^(-1)"},             // U+207B superscript minus
+    {"\xE2\x88\x9E", "write inf"},               // U+221E infinity
 }};
 
 }  // namespace

@@ -139,7 +139,7 @@ std::optional<Exclusion::Kind> exclusion_word(const Source& source, const Mapped
     known.push_back(name);
   }
   std::string note = suggestion(word, known);
-  if (note.empty()) note = "the words are " + alternatives(known);
+  if (note.empty()) note = "the words are " + listing(known);
   throw InputError(
       source, text.place,
       fmt::format("{} is neither a rational constant nor a known set of numbers", in_quotes(word)),

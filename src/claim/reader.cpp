@@ -7,15 +7,13 @@
 #include <fmt/format.h>
 
 #include <algorithm>
-#include <cerrno>
-#include <cstring>
-#include <fstream>
 #include <utility>
 
 #include "claim/document.hpp"
 #include "claim/expression_parser.hpp"
 #include "claim/keys.hpp"
 #include "claim/names.hpp"
+#include "claim/regular_file.hpp"
 #include "claim/shapes.hpp"
 #include "claim/text.hpp"
 
@@ -346,7 +344,7 @@ class ClaimReader {
     for (const Entry& entry : certificate.value.entries) {
       if (!is_index(entry.key)) {
         std::string note = suggestion(entry.key, indices);
-        if (note.empty() && !indices.empty()) note = "the indices are " + alternatives(indices);
+        if (note.empty() && !indices.empty()) note = "the indices are " + listing(indices);
         if (indices.empty()) note = "the sum has no index, so it has no certificate";
         refuse(entry.key_place, fmt::format("{} is not an index of the sum", in_quotes(entry.key)),
                note);
@@ -397,37 +395,25 @@ class ClaimReader {
   Names::View evidence_view_;  // the symbols of the summand
 };
 
-[[nodiscard]] std::string file_text(const std::filesystem::path& path, const Limits& limits) {
-  const std::string name = printable(path.string());
-  std::error_code error;
-  if (std::filesystem::is_directory(path, error)) {
-    throw InputError(fmt::format("{}: error: this is a directory, not a claim file", name));
-  }
-  errno = 0;
-  std::ifstream file(path, std::ios::binary);
-  if (!file) {
-    throw InputError(fmt::format("{}: error: cannot be opened: {}", name, std::strerror(errno)));
-  }
-  std::string text(limits.file_bytes + 1, '\0');
-  file.read(text.data(), static_cast<std::streamsize>(text.size()));
-  if (file.bad()) throw InputError(fmt::format("{}: error: cannot be read", name));
-  text.resize(static_cast<std::size_t>(file.gcount()));
-  return text;
+// Nothing but blanks and line ends, behind a byte-order mark or not.
+[[nodiscard]] bool is_blank(std::string_view text) {
+  if (text.starts_with("\xEF\xBB\xBF")) text.remove_prefix(3);
+  return text.find_first_not_of(" \t\r\n") == std::string_view::npos;
 }
 
 }  // namespace
 
 ReadClaim read_claim_text(std::string name, std::string text, const Limits& limits) {
   if (text.size() > limits.file_bytes) {
-    throw InputError(fmt::format("{}: error: the file is larger than {} bytes", printable(name),
-                                 limits.file_bytes));
+    throw InputError(name, fmt::format("the file is larger than {} bytes", limits.file_bytes));
   }
   auto source = std::make_shared<const Source>(Source{std::move(name), std::move(text)});
+  if (is_blank(source->text)) throw InputError(*source, {0, 1}, "the file is empty");
   return ClaimReader(std::move(source), limits).read();
 }
 
 ReadClaim read_claim_file(const std::filesystem::path& path, const Limits& limits) {
-  return read_claim_text(path.string(), file_text(path, limits), limits);
+  return read_claim_text(path.string(), read_regular_file(path, limits.file_bytes), limits);
 }
 
 }  // namespace sumwright::claim

@@ -152,8 +152,12 @@ std::string render(const Source& source, Place place, std::string_view severity,
 
 InputError::InputError(const Source& source, Place place, std::string_view message,
                        std::string_view note)
-    : std::runtime_error(render(source, place, "error", message, note)) {}
+    : std::runtime_error(render(source, place, "error", message, note)),
+      parts_(std::make_shared<const Parts>(Parts{source.name, source.position(place.offset),
+                                                 std::string(message), std::string(note)})) {}
 
-InputError::InputError(const std::string& message) : std::runtime_error(message) {}
+InputError::InputError(const std::string& file, const std::string& message)
+    : std::runtime_error(fmt::format("{}: error: {}", printable(file), printable(message))),
+      parts_(std::make_shared<const Parts>(Parts{file, {0, 0}, message, ""})) {}
 
 }  // namespace sumwright::claim

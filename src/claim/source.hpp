@@ -2,6 +2,7 @@
 #pragma once
 
 #include <cstddef>
+#include <memory>
 #include <stdexcept>
 #include <string>
 #include <string_view>
@@ -34,10 +35,23 @@ struct Source {
 /// The input cannot be used (exit status 2). what() is the rendered message.
 class InputError : public std::runtime_error {
  public:
+  /// The same in parts, for machines. Texts are as given, not made printable.
+  struct Parts {
+    std::string file;
+    Source::Position position;  ///< line 0: the message is about the whole file
+    std::string message;
+    std::string note;
+  };
+
   InputError(const Source& source, Place place, std::string_view message,
              std::string_view note = {});
-  /// For faults without a place (file not readable).
-  explicit InputError(const std::string& message);
+  /// For faults without a place (file not readable): `file: error: message`.
+  InputError(const std::string& file, const std::string& message);
+
+  [[nodiscard]] const Parts& parts() const { return *parts_; }
+
+ private:
+  std::shared_ptr<const Parts> parts_;  // copies of an exception must not throw
 };
 
 }  // namespace sumwright::claim

@@ -15,6 +15,8 @@ namespace {
 
 constexpr std::size_t kQuotedBytes = 60;
 constexpr std::size_t kLongestWord = 40;
+constexpr std::string_view kSuggestionStart = "did you mean ";
+constexpr std::string_view kSuggestionEnd = "?";
 
 [[nodiscard]] unsigned byte_at(std::string_view text, std::size_t offset) {
   return static_cast<unsigned char>(text[offset]);
@@ -52,6 +54,15 @@ void append_printable(std::string& out, std::string_view text, std::size_t offse
     std::swap(last, row);
   }
   return last[b.size()];
+}
+
+[[nodiscard]] std::string joined(const std::vector<std::string>& names, std::string_view last) {
+  std::string out;
+  for (std::size_t i = 0; i < names.size(); ++i) {
+    if (i > 0) out += i + 1 == names.size() ? last : ", ";
+    out += in_quotes(names[i]);
+  }
+  return out;
 }
 
 }  // namespace
@@ -136,16 +147,23 @@ std::optional<std::string> nearest(std::string_view word,
 
 std::string suggestion(std::string_view word, const std::vector<std::string>& candidates) {
   const auto found = nearest(word, candidates);
-  return found ? fmt::format("did you mean {}?", in_quotes(*found)) : std::string();
+  return found ? did_you_mean(*found) : std::string();
 }
 
-std::string alternatives(const std::vector<std::string>& names) {
-  std::string out;
-  for (std::size_t i = 0; i < names.size(); ++i) {
-    if (i > 0) out += i + 1 == names.size() ? " or " : ", ";
-    out += in_quotes(names[i]);
-  }
-  return out;
+std::string did_you_mean(std::string_view name) {
+  return fmt::format("{}{}{}", kSuggestionStart, in_quotes(name), kSuggestionEnd);
 }
+
+std::optional<std::string> suggested(std::string_view note) {
+  if (!note.starts_with(kSuggestionStart) || !note.ends_with(kSuggestionEnd)) return std::nullopt;
+  note.remove_prefix(kSuggestionStart.size());
+  note.remove_suffix(kSuggestionEnd.size());
+  if (note.size() < 2 || note.front() != '\'' || note.back() != '\'') return std::nullopt;
+  return std::string(note.substr(1, note.size() - 2));
+}
+
+std::string alternatives(const std::vector<std::string>& names) { return joined(names, " or "); }
+
+std::string listing(const std::vector<std::string>& names) { return joined(names, " and "); }
 
 }  // namespace sumwright::claim

@@ -39,11 +39,20 @@ struct Character {
 [[nodiscard]] std::optional<std::string> nearest(std::string_view word,
                                                  const std::vector<std::string>& candidates);
 
+/// `did you mean 'x'?`
+[[nodiscard]] std::string did_you_mean(std::string_view name);
+
 /// `did you mean 'x'?` for the nearest candidate, or an empty text.
 [[nodiscard]] std::string suggestion(std::string_view word,
                                      const std::vector<std::string>& candidates);
 
+/// The x of a note that is `did you mean 'x'?`; nothing when it is another note.
+[[nodiscard]] std::optional<std::string> suggested(std::string_view note);
+
 /// `'a', 'b' or 'c'`.
 [[nodiscard]] std::string alternatives(const std::vector<std::string>& names);
+
+/// `'a', 'b' and 'c'`.
+[[nodiscard]] std::string listing(const std::vector<std::string>& names);
 
 }  // namespace sumwright::claim

@@ -1,7 +1,9 @@
 // `check`: the verdict on a claim file, or on an obligation file by its own text.
 #include "cli/commands.hpp"
 #include "cli/decision.hpp"
+#include "cli/input_file.hpp"
 #include "cli/obligations_recheck.hpp"
+#include "cli/output.hpp"
 #include "cli/report.hpp"
 
 namespace sumwright::cli {

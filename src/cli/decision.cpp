@@ -6,10 +6,12 @@
 #include <fmt/format.h>
 
 #include <chrono>
-#include <cstdio>
 #include <new>
 
 #include "claim/reader.hpp"
+#include "claim/text.hpp"
+#include "cli/input_file.hpp"
+#include "cli/output.hpp"
 #include "proof/build.hpp"
 
 namespace sumwright::cli {
@@ -63,6 +65,21 @@ void complete_symbols(proof::Proof& proof) {
   return out;
 }
 
+constexpr std::string_view kSizeLimit = "size limit reached: ";
+
+// Reasons of work that stopped are of two kinds, time and sizes.
+[[nodiscard]] std::string size_limit_text(std::string_view reason) {
+  if (!reason.starts_with(kSizeLimit)) return std::string(reason);
+  return fmt::format("an intermediate result is larger than Sumwright works with ({})",
+                     reason.substr(kSizeLimit.size()));
+}
+
+[[nodiscard]] std::string what_helps(std::string_view reason) {
+  if (!reason.starts_with(kSizeLimit)) return "a larger --time-limit";
+  return "a recurrence and a certificate of your own under [evidence], a smaller --max-order, or "
+         "fewer parameters; more time or memory changes nothing";
+}
+
 class Decider {
  public:
   Decider(const std::shared_ptr<const claim::Claim>& claim, const Options& options,
@@ -73,6 +90,9 @@ class Decider {
     build();
     if (out_.proof.verdict == proof::Verdict::established) audit();
     if (out_.proof.verdict == proof::Verdict::undecided && !claim_->is_question()) look_for_point();
+    if (out_.proof.verdict == proof::Verdict::refuted) out_.proof.would_settle.clear();
+    // Statements that are not proved are the author's, not what the work made of them.
+    if (out_.proof.verdict != proof::Verdict::established) out_.proof.claim = claim_;
     complete_symbols(out_.proof);
     return std::move(out_);
   }
@@ -138,8 +158,15 @@ Status Decision::status() const {
 }
 
 std::shared_ptr<const claim::Claim> read_claim(const std::filesystem::path& path) {
+  if (is_obligations_file(path)) {
+    const std::string shown = claim::printable(path.string());
+    throw Unusable(fmt::format(
+        "{}: this is an obligation file, not a claim file; `sumwright check` verifies it, and the "
+        "claim file that it is about stands in its section `claim`, each line behind a bar",
+        shown));
+  }
   claim::ReadClaim read = claim::read_claim_file(path);
-  for (const std::string& warning : read.warnings) fmt::print(stderr, "{}\n", warning);
+  for (const std::string& warning : read.warnings) say(warning + "\n");
   return std::make_shared<const claim::Claim>(std::move(read.claim));
 }
 
@@ -153,7 +180,8 @@ Decision decide(const std::shared_ptr<const claim::Claim>& claim, const Options&
   try {
     return Decider(claim, options, watch, progress).run();
   } catch (const algebra::TimeUp& reason) {
-    return undecided(reason.what(), reason.interrupted ? "" : "a larger --time-limit");
+    if (reason.interrupted) return undecided(reason.what(), "");
+    return undecided(size_limit_text(reason.what()), what_helps(reason.what()));
   } catch (const std::bad_alloc&) {
     return undecided("memory limit reached", "a larger --memory-limit");
   } catch (const std::length_error& reason) {

@@ -5,12 +5,12 @@
 #include <fmt/format.h>
 
 #include <algorithm>
-#include <cstdio>
 
 #include "claim/text.hpp"
 #include "cli/commands.hpp"
 #include "cli/decision.hpp"
 #include "cli/export_folder.hpp"
+#include "cli/output.hpp"
 #include "cli/report.hpp"
 #include "cli/run_record.hpp"
 #include "writers/output_folder.hpp"
@@ -43,6 +43,16 @@ void append(std::vector<NamedText>& files, std::vector<NamedText> more) {
   return files;
 }
 
+// Before the work: a place that is taken is better known now than in ten minutes. What is written
+// depends on the verdict, and is looked at again then.
+void check_places(const Options& options) {
+  check_export_folder(options.out);
+  std::vector<std::string> paths{"record.json", "run.json", "obligations.txt"};
+  if (wants(options, "latex"))
+    paths.insert(paths.end(), {"appendix.tex", "appendix-standalone.tex"});
+  check_nothing_is_lost(options.out, paths);
+}
+
 [[nodiscard]] std::string files_text(const Options& options, const std::vector<NamedText>& files) {
   std::string out = fmt::format("\nwritten to {}:\n", claim::printable(options.out.string()));
   for (const NamedText& file : files) {
@@ -56,7 +66,7 @@ void append(std::vector<NamedText>& files, std::vector<NamedText> more) {
 Status export_claim(const Options& options) {
   const std::string started = utc_now();
   const std::shared_ptr<const claim::Claim> claim = read_claim(options.input);
-  check_export_folder(options.out);
+  check_places(options);
   Decision decision;
   std::vector<NamedText> files;
   {

@@ -7,10 +7,11 @@
 #include <fmt/format.h>
 
 #include <algorithm>
-#include <cstdio>
 #include <nlohmann/json.hpp>
+#include <optional>
 
 #include "claim/text.hpp"
+#include "cli/output.hpp"
 #include "cli/single_file.hpp"
 #include "cli/status.hpp"
 #include "writers/output_folder.hpp"
@@ -23,6 +24,8 @@ namespace {
 namespace fs = std::filesystem;
 using Json = nlohmann::json;
 
+constexpr const char* kRecordName = "record.json";
+constexpr const char* kRunName = "run.json";
 constexpr std::size_t kRecordBytes = std::size_t{16} << 20U;
 constexpr std::size_t kFileBytes = std::size_t{256} << 20U;
 
@@ -50,10 +53,10 @@ void remove_stale(const fs::path& folder, const ListedFile& file) {
   if (!is_plain_file(folder, file.path)) return;
   const fs::path path = folder / file.path;
   if (writers::sha256(read_whole_file(path, kFileBytes)) != file.sha256) {
-    fmt::print(stderr,
-               "sumwright: warning: {} is of an earlier export and was changed by hand; "
-               "it does not belong to this one\n",
-               claim::printable(path.string()));
+    say(
+        fmt::format("sumwright: warning: {} is of an earlier export and was changed by hand; "
+                    "it does not belong to this one\n",
+                    claim::printable(path.string())));
     return;
   }
   std::error_code code;
@@ -63,6 +66,32 @@ void remove_stale(const fs::path& folder, const ListedFile& file) {
         fmt::format("{}: {}", claim::printable(path.string()), code.message()));
   }
   fs::remove(path.parent_path(), code);  // succeeds only when the folder is empty
+}
+
+// What the record of an earlier export lists; nothing when the folder has no record of Sumwright.
+[[nodiscard]] std::optional<std::vector<ListedFile>> earlier_export(const fs::path& folder) {
+  if (!is_plain_file(folder, kRecordName)) return std::nullopt;
+  const fs::path record = folder / kRecordName;
+  const std::string text = read_whole_file(record, kRecordBytes);
+  const Json json = Json::parse(text, nullptr, false);
+  const bool own = json.is_object() && json.contains("tool") && json["tool"].is_object() &&
+                   json["tool"].value("name", Json()) == "Sumwright";
+  if (!own) return std::nullopt;
+  try {
+    return listed_files(text, record.string());
+  } catch (const Unusable&) {
+    return std::nullopt;  // not as Sumwright writes it
+  }
+}
+
+// Whether the file at `path` is one that exports write and replace; run.json is not listed, as it
+// changes with every replay.
+[[nodiscard]] bool is_known(const std::optional<std::vector<ListedFile>>& earlier,
+                            const std::string& path) {
+  if (!earlier) return false;
+  return path == kRecordName || path == kRunName ||
+         std::any_of(earlier->begin(), earlier->end(),
+                     [&](const ListedFile& file) { return file.path == path; });
 }
 
 }  // namespace
@@ -101,16 +130,26 @@ void check_export_folder(const fs::path& folder) {
   }
 }
 
-void write_export(const fs::path& folder, const std::vector<writers::NamedText>& files) {
-  const fs::path record = folder / "record.json";
-  std::vector<ListedFile> stale;
-  if (is_plain_file(folder, "record.json")) {
-    try {
-      stale = listed_files(read_whole_file(record, kRecordBytes), record.string());
-    } catch (const Unusable&) {
-      stale.clear();  // not a record: it will be replaced, and nothing is known of other files
-    }
+void check_nothing_is_lost(const fs::path& folder, const std::vector<std::string>& paths) {
+  const std::optional<std::vector<ListedFile>> earlier = earlier_export(folder);
+  for (const std::string& path : paths) {
+    if (is_known(earlier, path)) continue;
+    std::error_code code;
+    if (!fs::exists(fs::symlink_status(folder / path, code))) continue;
+    throw Unusable(fmt::format(
+        "{}: exists and is not from an earlier export; move it away, or choose another --out",
+        claim::printable((folder / path).string())));
   }
+}
+
+void write_export(const fs::path& folder, std::vector<writers::NamedText> files) {
+  std::vector<std::string> paths;
+  for (const writers::NamedText& file : files) paths.push_back(file.path);
+  check_nothing_is_lost(folder, paths);
+  const std::vector<ListedFile> stale = earlier_export(folder).value_or(std::vector<ListedFile>());
+  // The record first: whatever a power cut leaves is listed in it, and can be replaced.
+  std::stable_partition(files.begin(), files.end(),
+                        [](const writers::NamedText& file) { return file.path == kRecordName; });
   writers::write_folder(folder, files);
   for (const ListedFile& file : stale) {
     const bool written = std::any_of(files.begin(), files.end(), [&](const writers::NamedText& f) {

@@ -23,10 +23,15 @@ struct ListedFile {
 /// Refuses a folder whose parent does not exist, or that is not a folder. Throws Unusable.
 void check_export_folder(const std::filesystem::path& folder);
 
-/// Writes the files, after removing those that an earlier export wrote, that are unchanged since,
-/// and that this one does not write: an old theorem must not stand beside a new verdict. What was
-/// changed by hand stays, with a warning on stderr. Throws writers::OutputError.
-void write_export(const std::filesystem::path& folder,
-                  const std::vector<writers::NamedText>& files);
+/// Refuses to replace what no export wrote: a file at one of the paths that the folder's
+/// record.json, if it is one of Sumwright, does not list. Throws Unusable.
+void check_nothing_is_lost(const std::filesystem::path& folder,
+                           const std::vector<std::string>& paths);
+
+/// Writes the files, after check_nothing_is_lost; then removes those that an earlier export wrote,
+/// that are unchanged since, and that this one does not write: an old theorem must not stand beside
+/// a new verdict. What was changed by hand stays, with a warning on stderr. Throws
+/// writers::OutputError and Unusable.
+void write_export(const std::filesystem::path& folder, std::vector<writers::NamedText> files);
 
 }  // namespace sumwright::cli

@@ -2,13 +2,12 @@
 // it.
 #include <fmt/format.h>
 
-#include <cstdio>
-
 #include "claim/reader.hpp"
 #include "claim/text.hpp"
 #include "cli/commands.hpp"
 #include "cli/decision.hpp"
 #include "cli/evidence_text.hpp"
+#include "cli/output.hpp"
 #include "cli/report.hpp"
 #include "cli/single_file.hpp"
 
@@ -51,6 +50,20 @@ void check_copy(const claim::Source& source, const std::string& text, const Opti
   return out;
 }
 
+void write_copy(const claim::Claim& claim, const Options& options, const Decision& decision,
+                const std::string& copy) {
+  if (decision.status() != Status::established) {
+    say("sumwright: nothing found, nothing written\n");
+    return;
+  }
+  write_single_file(*options.write, copy);
+  say(fmt::format("sumwright: evidence written to {}\n",
+                  claim::printable(options.write->string())));
+  if (!claim.is_equality() && !claim.is_question()) {
+    say("sumwright: it replaces the recurrence that the file claimed\n");
+  }
+}
+
 }  // namespace
 
 Status find(const Options& options) {
@@ -67,17 +80,10 @@ Status find(const Options& options) {
       check_copy(*claim->source, copy, options, watch, progress);
     }
   }
-  print_result(options.json ? decision_json(decision) : found_text(*claim, decision));
-  if (options.write && decision.status() != Status::established) {
-    fmt::print(stderr, "sumwright: nothing found, nothing written\n");
-  } else if (options.write) {
-    write_single_file(*options.write, copy);
-    fmt::print(stderr, "sumwright: evidence written to {}\n",
-               claim::printable(options.write->string()));
-    if (!claim->is_equality() && !claim->is_question()) {
-      fmt::print(stderr, "sumwright: it replaces the recurrence that the file claimed\n");
-    }
-  }
+  // For people first what was found, should the copy fail; for machines one object for all.
+  if (!options.json) print_result(found_text(*claim, decision));
+  if (options.write) write_copy(*claim, options, decision, copy);
+  if (options.json) print_result(decision_json(decision));
   return decision.status();
 }
 

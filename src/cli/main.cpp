@@ -1,17 +1,21 @@
 // The program: arguments, limits, one command, one exit status.
 //
 // Every exception ends here. Input errors are the user's (2), running out of time or memory decides
-// nothing (3), anything else is a fault of Sumwright (4).
+// nothing (3), anything else is a fault of Sumwright (4). With --json each of them is an object on
+// stdout as well.
 #include <fmt/format.h>
 
 #include <cstdio>
+#include <cstring>
 #include <exception>
 #include <new>
 
 #include "algebra/limits.hpp"
 #include "claim/source.hpp"
 #include "claim/text.hpp"
+#include "cli/failure.hpp"
 #include "cli/options.hpp"
+#include "cli/output.hpp"
 #include "cli/session.hpp"
 #include "writers/output_folder.hpp"
 
@@ -19,9 +23,23 @@ namespace {
 
 using sumwright::cli::Status;
 
-int failed(Status status, const char* what) {
-  fmt::print(stderr, "sumwright: {}\n", sumwright::claim::printable(what));
+// The object of a run that cannot print its result; when stdout fails too, there is nothing left.
+void print_failure(const std::string& json) {
+  if (!sumwright::cli::take_json()) return;
+  const bool printed = std::fputs(json.c_str(), stdout) >= 0 && std::fflush(stdout) == 0;
+  (void)printed;
+}
+
+int failed(Status status, const std::string& what) {
+  sumwright::cli::say(fmt::format("sumwright: {}\n", sumwright::claim::printable(what)));
+  print_failure(sumwright::cli::failure_json(status, what));
   return static_cast<int>(status);
+}
+
+int unusable(const sumwright::claim::InputError& error) {
+  sumwright::cli::say(std::string(error.what()) + "\n");  // rendered, with lines of its own
+  print_failure(sumwright::cli::failure_json(error.parts()));
+  return static_cast<int>(Status::unusable);
 }
 
 int run(int count, char** arguments) {
@@ -32,20 +50,25 @@ int run(int count, char** arguments) {
 }
 
 int fault(const std::string& what) {
-  fmt::print(stderr, "sumwright: this is a fault of Sumwright, not of the claim: {}\n", what);
-  fmt::print(stderr, "sumwright: please report it together with the claim file\n");
+  sumwright::cli::say(
+      fmt::format("sumwright: this is a fault of Sumwright, not of the claim: {}\n"
+                  "sumwright: please report it together with the claim file\n",
+                  what));
+  print_failure(sumwright::cli::failure_json(Status::fault, what));
   return static_cast<int>(Status::fault);
 }
 
 }  // namespace
 
 int main(int count, char** arguments) {
+  for (int i = 1; i < count; ++i) {
+    if (std::strcmp(arguments[i], "--json") == 0) sumwright::cli::json_is_due = true;
+  }
   try {
     sumwright::cli::prepare_process();
     return run(count, arguments);
   } catch (const sumwright::claim::InputError& error) {
-    fmt::print(stderr, "{}\n", error.what());  // rendered, with lines of its own
-    return static_cast<int>(Status::unusable);
+    return unusable(error);
   } catch (const sumwright::cli::Unusable& error) {
     return failed(Status::unusable, error.what());
   } catch (const sumwright::writers::OutputError& error) {

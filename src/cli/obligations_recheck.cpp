@@ -4,21 +4,21 @@
 
 #include <fmt/format.h>
 
-#include <fstream>
 #include <nlohmann/json.hpp>
 
 #include "claim/reader.hpp"
 #include "claim/text.hpp"
 #include "cli/report.hpp"
 #include "cli/table.hpp"
-#include "writers/obligations_document.hpp"
 #include "writers/obligations_reader.hpp"
+#include "writers/print_text.hpp"
 
 namespace sumwright::cli {
 
 namespace {
 
 constexpr std::size_t kDifferencesShown = 10;
+constexpr std::string_view kEstablished = "established";
 
 [[nodiscard]] claim::ExpressionPtr parsed(const std::string& name, const std::string& text,
                                           const std::vector<std::string>& symbols) {
@@ -76,7 +76,7 @@ class Rebuilder {
         claim::read_claim_text("claim of " + options_.input.filename().string(), file_.claim_text);
     const auto claim = std::make_shared<const claim::Claim>(read.claim);
     const bool own = !claim->evidence.recurrence.empty() && says_brought(file_);
-    if (file_.recurrence.empty() || own) return decided(claim);
+    if (file_.verdict != kEstablished || file_.recurrence.empty() || own) return decided(claim);
     Rebuilt with_evidence = with_evidence_of_file(*claim);
     if (with_evidence.agrees() || !claim->is_equality()) return with_evidence;
     Rebuilt searched = decided(claim);
@@ -103,8 +103,10 @@ class Rebuilder {
     return out;
   }
 
+  // How far an undecided claim got depends on limits; there is nothing to compare.
   void compare(Rebuilt& rebuilt) {
-    if (rebuilt.decision.status() != Status::established) return;
+    if (rebuilt.decision.status() == Status::undecided) return;
+    if (writers::word(rebuilt.decision.proof.verdict) != file_.verdict) return;
     progress_.show("comparison");
     rebuilt.differences = writers::differences(file_, rebuilt.decision.proof);
   }
@@ -121,22 +123,68 @@ class Rebuilder {
   return recheck.identities_hold ? "hold, by the file's own text" : "DO NOT HOLD";
 }
 
+[[nodiscard]] std::string verdict_words(const Recheck& recheck) {
+  switch (recheck.outcome()) {
+    case Recheck::Outcome::holds:
+      return "the file holds";
+    case Recheck::Outcome::confirmed:
+      return "the file's verdict is confirmed: the claim is " + recheck.stated;
+    case Recheck::Outcome::fails:
+      return recheck.stated == "undecided" ? "the file is out of date" : "the file does not hold";
+    case Recheck::Outcome::undecided:
+      break;
+  }
+  return "undecided: what the file says could not be decided again";
+}
+
+[[nodiscard]] std::string comparison_line(const Recheck& recheck) {
+  const std::string again = writers::word(recheck.rebuilt.proof.verdict);
+  if (recheck.rebuilt.status() == Status::undecided) {
+    return "no item: how far an undecided claim gets depends on limits and version";
+  }
+  if (again != recheck.stated) {
+    return fmt::format("the file says {}, the claim decided again is {}: export it again",
+                       recheck.stated, again);
+  }
+  const std::size_t count = recheck.differences.size();
+  if (count == 0) {
+    return recheck.stated == kEstablished
+               ? "every item agrees with the proof rebuilt from the claim's text"
+               : "every item agrees with the refutation made again from the claim's text";
+  }
+  return count == 1 ? "1 item does not agree" : fmt::format("{} items do not agree", count);
+}
+
+[[nodiscard]] std::string stated_line(const Recheck& recheck) {
+  if (recheck.stated_point.empty()) return recheck.stated;
+  return recheck.stated + ": " + recheck.stated_point;
+}
+
 }  // namespace
 
-bool is_obligations_file(const std::filesystem::path& path) {
-  std::ifstream in(path, std::ios::binary);
-  std::string start(writers::kObligationsFirstLine.size(), '\0');
-  in.read(start.data(), static_cast<std::streamsize>(start.size()));
-  return in && start == writers::kObligationsFirstLine;
+Recheck::Outcome Recheck::outcome() const {
+  const bool established = stated == kEstablished;
+  if (!identities_open.empty()) return Outcome::undecided;
+  if (established && has_identities && !identities_hold) return Outcome::fails;
+  const bool same = writers::word(rebuilt.proof.verdict) == stated;
+  if (rebuilt.status() == Status::undecided) {
+    return same ? Outcome::confirmed : Outcome::undecided;
+  }
+  if (!same || !differences.empty()) return Outcome::fails;
+  return established ? Outcome::holds : Outcome::confirmed;
 }
 
 Status Recheck::status() const {
-  if (!identities_open.empty()) return Status::undecided;
-  if (has_identities && !identities_hold) return Status::refuted;
-  if (rebuilt.status() == Status::refuted) return Status::refuted;
-  if (rebuilt.status() == Status::established && stated != "established") return Status::refuted;
-  if (rebuilt.status() == Status::established && !differences.empty()) return Status::refuted;
-  return rebuilt.status();
+  switch (outcome()) {
+    case Outcome::holds:
+    case Outcome::confirmed:
+      return rebuilt.status();
+    case Outcome::fails:
+      return Status::refuted;
+    case Outcome::undecided:
+      break;
+  }
+  return Status::undecided;
 }
 
 Recheck recheck_obligations(const Options& options, const Watch& watch, Progress& progress) {
@@ -144,6 +192,9 @@ Recheck recheck_obligations(const Options& options, const Watch& watch, Progress
   const writers::ObligationsFile file = writers::read_obligations_file(options.input);
   Recheck out;
   out.stated = file.verdict;
+  for (const writers::ObligationsEntry& entry : file.entries) {
+    if (entry.section.empty() && entry.key == "counterexample") out.stated_point = entry.value;
+  }
   out.has_identities = file.has_equality || !file.classes.empty();
   progress.show("identities");
   try {
@@ -158,17 +209,11 @@ Recheck recheck_obligations(const Options& options, const Watch& watch, Progress
 }
 
 std::string recheck_text(const Recheck& recheck) {
-  static constexpr std::string_view words[] = {"the file holds", "the file does not hold", "",
-                                               "undecided"};
-  std::string out = labelled("verdict", words[static_cast<std::size_t>(recheck.status())]);
-  out += labelled("file says", claim::printable(recheck.stated));
+  std::string out = labelled("verdict", verdict_words(recheck));
+  out += labelled("file says", claim::printable(stated_line(recheck)));
   out += labelled("identities", claim::printable(identities_line(recheck)));
+  out += labelled("compared", comparison_line(recheck));
   const std::size_t count = recheck.differences.size();
-  if (recheck.rebuilt.status() == Status::established) {
-    out += labelled("compared", count == 0 ? "every item agrees with the proof rebuilt from the "
-                                             "claim's text"
-                                           : fmt::format("{} items do not agree", count));
-  }
   for (std::size_t i = 0; i < std::min(count, kDifferencesShown); ++i) {
     out += labelled("", claim::printable(recheck.differences[i]));
   }
@@ -180,7 +225,8 @@ std::string recheck_text(const Recheck& recheck) {
 
 std::string recheck_json(const Recheck& recheck) {
   using Json = nlohmann::ordered_json;
-  Json out = {{"file_says", recheck.stated},
+  Json out = {{"verdict", verdict_words(recheck)},
+              {"file_says", recheck.stated},
               {"identities", identities_line(recheck)},
               {"differences", recheck.differences},
               {"rebuilt", Json::parse(decision_json(recheck.rebuilt))},

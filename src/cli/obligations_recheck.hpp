@@ -1,7 +1,6 @@
 // Re-verification of an obligation file from its own text.
 #pragma once
 
-#include <filesystem>
 #include <string>
 #include <vector>
 
@@ -9,18 +8,25 @@
 
 namespace sumwright::cli {
 
-/// Whether the file begins as obligation files do. Throws Unusable when it cannot be read.
-[[nodiscard]] bool is_obligations_file(const std::filesystem::path& path);
-
 /// What a re-check found.
 struct Recheck {
+  enum class Outcome {
+    holds,      ///< a proof, and it is right
+    confirmed,  ///< a refutation, or a claim left undecided, and so it is
+    fails,      ///< it says what is not so
+    undecided   ///< the proof or refutation could not be rebuilt
+  };
+
   std::string stated;                    ///< the verdict that the file states
+  std::string stated_point;              ///< of a refutation: what fails where, by the file
   bool identities_hold = false;          ///< its polynomial identities, by themselves
   bool has_identities = false;           ///< whether it states any
   std::string identities_open;           ///< why they could not be decided, if so
   Decision rebuilt;                      ///< from the claim's text and the file's evidence
   std::vector<std::string> differences;  ///< what the file says otherwise than `rebuilt`
 
+  [[nodiscard]] Outcome outcome() const;
+  /// That of the claim, but for a file that says what is not so: refuted.
   [[nodiscard]] Status status() const;
 };
 

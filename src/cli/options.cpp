@@ -141,15 +141,27 @@ void add_option(CLI::App& app, const OptionRow& row, Options& options) {
                       [&](const CommandRow& row) { return row.name == word; });
 }
 
-[[nodiscard]] Arguments unknown_command(const std::string& word) {
+[[nodiscard]] std::vector<std::string> command_names() {
   std::vector<std::string> names;
   for (const CommandRow& row : command_rows()) names.emplace_back(row.name);
-  const std::string hint = claim::suggestion(word, names);
-  fmt::print(stderr, "sumwright: no command {}; {}\n", claim::in_quotes(word),
-             hint.empty() ? "there are " + claim::alternatives(names) : hint);
-  Arguments out;
-  out.exit_status = static_cast<int>(Status::unusable);
-  return out;
+  return names;
+}
+
+[[noreturn]] void refuse_command(const std::string& word) {
+  const std::string hint = claim::suggestion(word, command_names());
+  throw Unusable(fmt::format("no command {}; {}", claim::in_quotes(word),
+                             hint.empty() ? "there are " + claim::listing(command_names()) : hint));
+}
+
+[[noreturn]] void refuse_arguments(int count, const char* const* arguments,
+                                   const std::string& message) {
+  const std::string command = count > 1 ? arguments[1] : "";
+  if (command.empty() || command.starts_with('-')) {
+    throw Unusable(fmt::format("a command is needed: {}; `sumwright --help` tells more",
+                               claim::alternatives(command_names())));
+  }
+  throw Unusable(
+      fmt::format("{}: {}; `sumwright {} --help` lists what it takes", command, message, command));
 }
 
 }  // namespace
@@ -191,7 +203,7 @@ const std::vector<CommandRow>& command_rows() {
 }
 
 Arguments read_arguments(int count, const char* const* arguments) {
-  if (count > 1 && is_unknown_command(arguments[1])) return unknown_command(arguments[1]);
+  if (count > 1 && is_unknown_command(arguments[1])) refuse_command(arguments[1]);
   CLI::App app{"Sumwright proves summation identities and exports the proofs."};
   app.name("sumwright");
   app.set_version_flag("--version", "sumwright " SUMWRIGHT_VERSION);
@@ -213,7 +225,8 @@ Arguments read_arguments(int count, const char* const* arguments) {
   try {
     app.parse(count, arguments);
   } catch (const CLI::ParseError& error) {
-    out.exit_status = app.exit(error) == 0 ? 0 : static_cast<int>(Status::unusable);
+    if (error.get_exit_code() != 0) refuse_arguments(count, arguments, error.what());
+    out.exit_status = app.exit(error);  // prints help or version
     return out;
   }
   out.options.input = input;

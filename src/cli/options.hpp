@@ -53,14 +53,14 @@ struct CommandRow {
 [[nodiscard]] const std::vector<CommandRow>& command_rows();
 
 /// The result of reading the arguments: a command to run, or an exit status because
-/// everything was said already (help, version, a refusal).
+/// everything was said already (help, version).
 struct Arguments {
   const CommandRow* command = nullptr;
   Options options;
   int exit_status = 0;
 };
 
-/// Reads the arguments; help goes to stdout, refusals to stderr.
+/// Reads the arguments; help goes to stdout. Throws Unusable.
 [[nodiscard]] Arguments read_arguments(int count, const char* const* arguments);
 
 }  // namespace sumwright::cli

@@ -4,9 +4,8 @@
 #include <fmt/format.h>
 #include <unistd.h>
 
-#include <cstdio>
-
 #include "claim/text.hpp"
+#include "cli/output.hpp"
 
 namespace sumwright::cli {
 
@@ -15,15 +14,13 @@ Progress::Progress() : terminal_(::isatty(STDERR_FILENO) == 1) {}
 void Progress::show(const std::string& stage) {
   if (!terminal_) return;
   const std::chrono::duration<double> taken = std::chrono::steady_clock::now() - start_;
-  fmt::print(stderr, "\r\033[K{:6.1f} s  {}", taken.count(), claim::printable(stage).substr(0, 60));
-  std::fflush(stderr);
+  say(fmt::format("\r\033[K{:6.1f} s  {}", taken.count(), claim::printable(stage).substr(0, 60)));
   shown_ = true;
 }
 
 void Progress::clear() {
   if (!shown_) return;
-  fmt::print(stderr, "\r\033[K");
-  std::fflush(stderr);
+  say("\r\033[K");
   shown_ = false;
 }
 

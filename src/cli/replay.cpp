@@ -7,7 +7,6 @@
 #include <unistd.h>
 
 #include <algorithm>
-#include <cstdio>
 #include <nlohmann/json.hpp>
 #include <thread>
 
@@ -15,6 +14,7 @@
 #include "cli/commands.hpp"
 #include "cli/coq_run.hpp"
 #include "cli/export_folder.hpp"
+#include "cli/output.hpp"
 #include "cli/progress.hpp"
 #include "cli/report.hpp"
 #include "cli/run_record.hpp"
@@ -81,6 +81,7 @@ class Replay {
 
   void read_export() {
     const fs::path record = options_.input / "record.json";
+    check_folder(record);
     const std::string text = read_whole_file(record, kFileBytes);
     const std::vector<ListedFile> files = listed_files(text, record.string());
     for (const ListedFile& file : files) read_listed(file);
@@ -98,6 +99,19 @@ class Replay {
       }
     }
     look_at_scripts();
+  }
+
+  void check_folder(const fs::path& record) const {
+    const std::string shown = claim::printable(options_.input.string());
+    std::error_code code;
+    const fs::file_status status = fs::status(options_.input, code);
+    if (!fs::exists(status)) throw Unusable(shown + ": no such folder");
+    if (!fs::is_directory(status)) {
+      throw Unusable(shown + ": not a folder; `replay` takes the folder that `export` wrote");
+    }
+    if (fs::status(record, code).type() == fs::file_type::not_found) {
+      throw Unusable(shown + ": not a folder written by `export`: it has no record.json");
+    }
   }
 
   void read_listed(const ListedFile& file) {
@@ -172,19 +186,30 @@ class Replay {
     say(version_ + "\n");
   }
 
+  // Ended by the system, which says nothing of the script.
+  [[nodiscard]] static bool ended_early(const ChildResult& result) {
+    return result.signal != 0 || result.output.find("Out of memory") != std::string::npos;
+  }
+
+  [[nodiscard]] static std::string_view word_for(const ChildResult& result) {
+    if (result.succeeded()) return "";
+    if (result.timed_out) return "stopped at its time limit";
+    return ended_early(result) ? "ended early" : "FAILED";
+  }
+
   void finished(const CoqStep& step) {
-    say(fmt::format("{:8.2f} s  {:<6}  {}{}\n", step.result.seconds, step.tool, step.name,
-                    step.result.succeeded() ? "" : "  FAILED"));
+    const std::string_view word = word_for(step.result);
+    say(fmt::format("{:8.2f} s  {:<6}  {}{}{}\n", step.result.seconds, step.tool, step.name,
+                    word.empty() ? "" : "  ", word));
     steps_.push_back({{"tool", step.tool},
                       {"name", step.name},
                       {"seconds", step.result.seconds},
                       {"accepted", step.result.succeeded()}});
     if (step.result.succeeded()) return;
     if (step.result.timed_out) {
-      problems_.push_back(step.name + ": time limit reached");
+      problems_.push_back(step.name + ": time limit reached; a larger --time-limit may settle it");
       failed_ = Status::undecided;
-    } else if (step.result.signal != 0 ||
-               step.result.output.find("Out of memory") != std::string::npos) {
+    } else if (ended_early(step.result)) {
       problems_.push_back(fmt::format("{}: {} ended by itself (memory limit, or signal {})",
                                       step.name, step.tool, step.result.signal));
       failed_ = Status::undecided;
@@ -221,8 +246,8 @@ class Replay {
 
   Status conclude(Status status) {
     write_run_record(status);
-    for (const std::string& note : notes_) fmt::print(stderr, "sumwright: note: {}\n", note);
-    for (const std::string& problem : problems_) fmt::print(stderr, "sumwright: {}\n", problem);
+    for (const std::string& note : notes_) cli::say(fmt::format("sumwright: note: {}\n", note));
+    for (const std::string& problem : problems_) cli::say(fmt::format("sumwright: {}\n", problem));
     static constexpr std::string_view words[] = {"accepted", "refused", "", "undecided"};
     const std::string word(words[static_cast<std::size_t>(status)]);
     if (options_.json) {

@@ -3,13 +3,11 @@
 
 #include <fmt/format.h>
 
-#include <cerrno>
-#include <cstdio>
-#include <cstring>
 #include <nlohmann/json.hpp>
 
 #include "claim/text.hpp"
 #include "cli/evidence_text.hpp"
+#include "cli/readable.hpp"
 #include "cli/table.hpp"
 #include "writers/claim_text.hpp"
 #include "writers/print_text.hpp"
@@ -68,14 +66,35 @@ using Json = nlohmann::ordered_json;
                      proof.claim->from.get_str());
 }
 
-[[nodiscard]] std::string recurrence_text(const proof::Proof& proof) {
-  std::string out = line("recurrence", shortened(recurrence_line(proof)));
-  if (out.empty() || proof.verdict == proof::Verdict::refuted) return out;
-  std::string remark = proof.evidence_brought ? "brought by the author" : "found";
+[[nodiscard]] std::string remark_text(const proof::Proof& proof) {
+  std::string out = writers::stated_recurrence(proof).brought ? "brought by the author" : "found";
   if (proof.claim->is_equality()) {
-    remark = fmt::format("for S({}), the sum on the left; {}", proof.claim->running, remark);
+    out = fmt::format("for S({}), the sum on the left; {}", proof.claim->running, out);
   }
-  return out + line("", remark) + line("certificate", shortened(proof.certificate_text));
+  if (proof.verdict == proof::Verdict::undecided) return out + "; not proved";
+  if (proof.threshold > proof.from) {
+    out += fmt::format("; for {} >= {}, smaller {} checked one by one", proof.claim->running,
+                       proof.threshold, proof.claim->running);
+  }
+  return out;
+}
+
+// The recurrence under the name that it deserves. Beside a refuted claim stands only what the
+// author wrote.
+[[nodiscard]] std::string recurrence_text(const proof::Proof& proof) {
+  const std::string text = shortened(recurrence_line(proof));
+  if (text.empty()) return "";
+  switch (proof.verdict) {
+    case proof::Verdict::established:
+      return line("recurrence", text) + line("", remark_text(proof)) +
+             line("certificate", shortened(writers::stated_recurrence(proof).certificate));
+    case proof::Verdict::refuted:
+      return writers::stated_recurrence(proof).brought ? line("recurrence", text) : "";
+    case proof::Verdict::undecided:
+      break;
+  }
+  return line("candidate", text) + line("", remark_text(proof)) +
+         line("certificate", shortened(writers::stated_recurrence(proof).certificate));
 }
 
 [[nodiscard]] std::string audit_text(const audit::AuditReport& report) {
@@ -88,14 +107,8 @@ using Json = nlohmann::ordered_json;
 }  // namespace
 
 std::string recurrence_line(const proof::Proof& proof) {
-  std::vector<std::string> coefficients = proof.recurrence_text;
-  std::string right_side = proof.right_side_text;
-  if (coefficients.empty()) {
-    for (const claim::ExpressionPtr& text : proof.claim->evidence.recurrence) {
-      coefficients.push_back(to_text(*text));
-    }
-    if (proof.claim->evidence.right_side) right_side = to_text(*proof.claim->evidence.right_side);
-  }
+  const writers::StatedRecurrence stated = writers::stated_recurrence(proof);
+  const std::vector<std::string>& coefficients = stated.coefficients;
   std::string out;
   for (std::size_t i = 0; i < coefficients.size(); ++i) {
     const std::string shift = i == 0 ? "" : fmt::format(" + {}", i);
@@ -110,7 +123,8 @@ std::string recurrence_line(const proof::Proof& proof) {
     }
   }
   if (out.empty()) return out;
-  return out + " = " + (right_side.empty() ? "0" : right_side);
+  return stated.right_side.empty() ? out + ", right side not known"
+                                   : out + " = " + stated.right_side;
 }
 
 std::string verdict_text(const Decision& decision) {
@@ -124,7 +138,7 @@ std::string verdict_text(const Decision& decision) {
   out += line("claim", proof.claim->title);
   out += line("", claimed_text(proof));
   out += recurrence_text(proof);
-  out += line("reason", proof.reason);
+  out += line("reason", readable_inequalities(proof.reason));
   if (proof.counterexample) {
     out += line("point", fmt::format("{} fails at {}", proof.counterexample->what,
                                      point_text(*proof.counterexample)));
@@ -138,7 +152,7 @@ std::string verdict_text(const Decision& decision) {
                 "the equality itself is not decided by this; `sumwright find` may give "
                 "evidence that settles it");
   }
-  out += line("would settle", proof.would_settle);
+  out += line("would settle", readable_inequalities(proof.would_settle));
   if (decision.audit) out += line("audit", audit_text(*decision.audit));
   return out;
 }
@@ -151,8 +165,10 @@ std::string conditions_text(const proof::Proof& proof) {
     std::string settled = writers::word(condition.settled);
     if (!condition.method.empty()) settled += ": " + condition.method;
     rows.push_back({condition.id,
-                    claim::printable(condition.text) + " [" + writers::word(condition.kind) + "]",
-                    claim::printable(condition.region), claim::printable(settled)});
+                    claim::printable(readable_inequalities(condition.text)) + " [" +
+                        writers::word(condition.kind) + "]",
+                    claim::printable(readable_inequalities(condition.region)),
+                    claim::printable(settled)});
   }
   return table({4, 30, 20, 20}, rows);
 }
@@ -173,13 +189,6 @@ std::string decision_json(const Decision& decision) {
   }
   out["exit_status"] = static_cast<int>(decision.status());
   return out.dump(2, ' ', false, Json::error_handler_t::replace) + "\n";
-}
-
-void print_result(const std::string& text) {
-  const bool written = std::fwrite(text.data(), 1, text.size(), stdout) == text.size();
-  if (!written || std::fflush(stdout) != 0) {
-    throw Unusable(fmt::format("standard output: {}", std::strerror(errno)));
-  }
 }
 
 }  // namespace sumwright::cli

@@ -9,7 +9,7 @@
 namespace sumwright::cli {
 
 /// `(n + 1)*S(n + 1) - ... = 0`: the recurrence of the proof with S(n) for the sum; empty when
-/// there is none.
+/// there is none. Of a candidate that is not proved, the right side may be unknown.
 [[nodiscard]] std::string recurrence_line(const proof::Proof& proof);
 
 /// Verdict, reason, counterexample, residue: a few lines within 80 columns.
@@ -23,8 +23,5 @@ namespace sumwright::cli {
 
 /// Everything that record.json says of the proof, the audit's findings, and the exit status.
 [[nodiscard]] std::string decision_json(const Decision& decision);
-
-/// Writes to stdout and makes sure that it arrived. Throws Unusable when it did not.
-void print_result(const std::string& text);
 
 }  // namespace sumwright::cli

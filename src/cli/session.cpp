@@ -9,11 +9,12 @@
 #include <unistd.h>
 
 #include <chrono>
-#include <cstdio>
 #include <cstdlib>
-#include <cstring>
 #include <exception>
 #include <new>
+#include <string_view>
+
+#include "cli/output.hpp"
 
 namespace sumwright::cli {
 
@@ -21,11 +22,33 @@ namespace {
 
 using algebra::Deadline;
 
+// Objects of runs that end where nothing can be composed any more.
+constexpr std::string_view kInterruptedJson =
+    "{\n  \"verdict\": \"undecided\",\n  \"reason\": \"interrupted\",\n  \"exit_status\": 3\n}\n";
+constexpr std::string_view kMemoryJson =
+    "{\n  \"verdict\": \"undecided\",\n  \"reason\": \"memory limit reached\",\n"
+    "  \"would_settle\": \"a larger --memory-limit\",\n  \"exit_status\": 3\n}\n";
+constexpr std::string_view kFaultJson =
+    "{\n  \"verdict\": \"fault\",\n  \"message\": \"an exception where none may pass\",\n"
+    "  \"exit_status\": 4\n}\n";
+constexpr std::string_view kTimeJson =
+    "{\n  \"verdict\": \"undecided\",\n  \"reason\": \"time limit reached\",\n"
+    "  \"would_settle\": \"a larger --time-limit\",\n  \"exit_status\": 3\n}\n";
+constexpr std::string_view kTimeText =
+    "verdict       undecided\n"
+    "reason        time limit reached, in the middle of one long step\n"
+    "would settle  a larger --time-limit\n";
+
+// Safe in a signal handler and where memory is short.
+void write_now(int fd, std::string_view text) {
+  const ssize_t ignored = ::write(fd, text.data(), text.size());
+  (void)ignored;
+}
+
 void on_signal(int) {
   if (!Deadline::interrupt_flag.exchange(true)) return;
-  constexpr char text[] = "\nsumwright: interrupted\n";
-  const ssize_t ignored = ::write(STDERR_FILENO, text, sizeof text - 1);
-  (void)ignored;
+  write_now(STDERR_FILENO, "\nsumwright: interrupted\n");
+  if (take_json()) write_now(STDOUT_FILENO, kInterruptedJson);
   ::_exit(static_cast<int>(Status::undecided));
 }
 
@@ -52,9 +75,10 @@ void release(void* memory, std::size_t) { std::free(memory); }
 // An exception met code that lets none pass: most often memory that ran out inside a library.
 [[noreturn]] void on_terminate() {
   const bool memory = memory_is_short();
-  std::fputs(memory ? "sumwright: memory limit reached\n"
-                    : "sumwright: this is a fault of Sumwright: an exception where none may pass\n",
-             stderr);
+  write_now(STDERR_FILENO,
+            memory ? "sumwright: memory limit reached\n"
+                   : "sumwright: this is a fault of Sumwright: an exception where none may pass\n");
+  if (take_json()) write_now(STDOUT_FILENO, memory ? kMemoryJson : kFaultJson);
   std::_Exit(static_cast<int>(memory ? Status::undecided : Status::fault));
 }
 
@@ -69,6 +93,7 @@ void release(void* memory, std::size_t) { std::free(memory); }
 }  // namespace
 
 void prepare_process() {
+  reserve_standard_streams();
   mp_set_memory_functions(allocate, reallocate, release);
   algebra::install_abort_hook();
   std::set_terminate(on_terminate);
@@ -121,14 +146,8 @@ void Watch::wait(double seconds, bool json) {
   const std::chrono::duration<double> grace(seconds + std::max(2.0, seconds / 10));
   std::unique_lock<std::mutex> lock(mutex_);
   if (changed_.wait_for(lock, grace, [this] { return over_; })) return;
-  if (json) {
-    std::fputs("{\n  \"verdict\": \"undecided\",\n  \"reason\": \"time limit reached\"\n}\n",
-               stdout);
-  } else {
-    std::fputs("undecided: time limit reached\n", stdout);
-  }
-  std::fflush(stdout);
-  std::fputs("sumwright: stopped inside a step that does not ask for the time\n", stderr);
+  if (!json) write_now(STDOUT_FILENO, kTimeText);
+  if (take_json()) write_now(STDOUT_FILENO, kTimeJson);
   std::_Exit(static_cast<int>(Status::undecided));
 }
 

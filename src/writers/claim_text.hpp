@@ -24,8 +24,21 @@ namespace sumwright::writers {
 /// The hypotheses of the theorem, in its order: exclusions, lower bounds, assumptions, `n >= from`.
 [[nodiscard]] std::vector<std::string> hypothesis_texts(const claim::Claim& claim);
 
-/// The statement that was to be proved, in one sentence.
+/// The statement in one sentence: what is proved, or, while nothing is, what the author wrote. A
+/// question that is not answered asks for a recurrence and states none.
 [[nodiscard]] std::string statement_text(const proof::Proof& proof);
+
+/// A recurrence in the claim language, as far as it may be shown: empty right side: not known.
+struct StatedRecurrence {
+  std::vector<std::string> coefficients;  ///< empty: no recurrence
+  std::string right_side;
+  std::string certificate;  ///< empty: none
+  bool brought = false;     ///< by the author, as the claim or as evidence
+};
+
+/// That of an established proof; else the author's, as written; else a candidate that was found and
+/// is not proved, without a right side.
+[[nodiscard]] StatedRecurrence stated_recurrence(const proof::Proof& proof);
 
 /// The kind of claim: `equality`, `recurrence`, `question`.
 [[nodiscard]] std::string claim_kind(const proof::Proof& proof);

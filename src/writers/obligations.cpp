@@ -120,21 +120,25 @@ void write_symbols(ObligationsDocument& out, const proof::Proof& proof) {
 
 void write_recurrence(ObligationsDocument& out, const proof::Proof& proof,
                       const TextPrinter& print) {
-  if (proof.recurrence_text.empty()) return;
+  const StatedRecurrence stated = stated_recurrence(proof);
+  if (stated.coefficients.empty()) return;
+  const bool established = proof.verdict == proof::Verdict::established;
   out.heading("recurrence");
   out.remark(
       "coefficient 0 * S(n) + coefficient 1 * S(n + 1) + ... = right side, S the sum and n "
       "the running variable.");
+  if (!established) out.remark("That the sum satisfies it for every n is NOT proved.");
   out.blank();
-  out.statement("evidence", proof.evidence_brought ? "brought by the author" : "found");
-  out.statement("order", std::to_string(proof.order));
+  const std::string origin = stated.brought ? "brought by the author" : "found";
+  out.statement("evidence", established ? origin : origin + "; not proved");
+  out.statement("order", std::to_string(stated.coefficients.size() - 1));
   out.statement("from", std::to_string(proof.from));
-  out.statement("threshold", std::to_string(proof.threshold));
-  for (std::size_t i = 0; i < proof.recurrence_text.size(); ++i) {
-    out.definition(fmt::format("coefficient {}", i), proof.recurrence_text[i]);
+  if (established) out.statement("threshold", std::to_string(proof.threshold));
+  for (std::size_t i = 0; i < stated.coefficients.size(); ++i) {
+    out.definition(fmt::format("coefficient {}", i), stated.coefficients[i]);
   }
-  out.definition("right side", proof.right_side_text.empty() ? "0" : proof.right_side_text);
-  if (!proof.certificate_text.empty()) out.definition("certificate", proof.certificate_text);
+  if (!stated.right_side.empty()) out.definition("right side", stated.right_side);
+  if (!stated.certificate.empty()) out.definition("certificate", stated.certificate);
   for (std::size_t i = 0; i < proof.boundary.size(); ++i) {
     out.definition(fmt::format("boundary {}", i + 1), print.product(proof.boundary[i]));
   }

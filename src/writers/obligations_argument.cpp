@@ -185,12 +185,26 @@ void write_equality(ObligationsDocument& out, const TextPrinter& print, const pr
   out.definition("normal form", print.polynomial(telescoping.normal_form));
 }
 
+void write_finite_range(ObligationsDocument& out, const TextPrinter& print,
+                        const proof::FiniteRange& finite) {
+  out.remark(
+      "An infinite end of the author's range stands for every finite one beyond which all terms "
+      "are 0; these ends are used in its place.");
+  out.blank();
+  out.statement("finite low", claim::to_text(*finite.range.low.value));
+  out.statement("finite high", claim::to_text(*finite.range.high.value));
+  write_zero_range(out, print, "finite zero below", finite.below);
+  write_zero_range(out, print, "finite zero above", finite.above);
+  out.blank();
+}
+
 void write_ranges(ObligationsDocument& out, const TextPrinter& print, const proof::Proof& proof) {
   out.heading("ranges");
   out.remark(
       "The author's sum at n + i is the sum of F(n + i, k) over low..high, plus the given "
       "numbers of terms just below low and just above high.");
   out.blank();
+  if (proof.finite_range) write_finite_range(out, print, *proof.finite_range);
   for (const proof::RangeStep& step : proof.ranges) {
     const std::string key = fmt::format("range {}", step.shift);
     out.statement(key, fmt::format("{} below, {} above", step.low_points, step.high_points));
@@ -209,7 +223,10 @@ void write_balance(ObligationsDocument& out, const TextPrinter& print, const std
     const std::string value = print.product(term.product);
     out.definition(key + " value", value);
     if (term.zero) {
-      const std::string by = term.zero_atom ? print.atom(*term.zero_atom) + " = 0, " : "";
+      const std::string first =
+          term.zero_factor ? print.affine(*term.zero_factor) + " = 0 or " : std::string();
+      const std::string by =
+          term.zero_atom ? first + print.atom(*term.zero_atom) + " = 0, " : std::string();
       out.statement(key + " vanishes", by + *term.zero);
     }
     if (term.instance) write_instance(out, print, key, *term.instance, value);
@@ -231,7 +248,10 @@ void write_initial_values(ObligationsDocument& out, const TextPrinter& print,
     for (std::size_t s = 0; s < initial.sums.size(); ++s) {
       const proof::LiteralSum& sum = initial.sums[s];
       const std::string sum_key = fmt::format("{} sum {}", key, s + 1);
-      out.statement(sum_key, fmt::format("S({}), index {}..{}", sum.at, sum.low, sum.high));
+      const std::size_t symbols = proof.symbols.size();
+      out.statement(sum_key, fmt::format("S({}), index {}..{}", sum.at,
+                                         print.affine(sum.point(symbols, sum.low)),
+                                         print.affine(sum.point(symbols, sum.high))));
       write_zero_range(out, print, sum_key + " zero below", sum.below);
       write_zero_range(out, print, sum_key + " zero above", sum.above);
     }

@@ -7,6 +7,8 @@
 
 namespace sumwright::writers {
 
+/// How the first line starts in every format.
+inline constexpr std::string_view kObligationsTitle = "Sumwright obligations";
 inline constexpr std::string_view kObligationsFirstLine = "Sumwright obligations, format 1";
 inline constexpr std::size_t kObligationsColumns = 80;
 

@@ -72,8 +72,8 @@ void append(Rows& out, const Rows& more) { out.insert(out.end(), more.begin(), m
 [[nodiscard]] Rows recurrence_keys() {
   return {
       {"evidence", ':', ValueKind::text, true},      {"order", ':', ValueKind::integer, true},
-      {"from", ':', ValueKind::integer, true},       {"threshold", ':', ValueKind::integer, true},
-      {"coefficient #", '=', ValueKind::text, true}, {"right side", '=', ValueKind::text, true},
+      {"from", ':', ValueKind::integer, true},       {"threshold", ':', ValueKind::integer, false},
+      {"coefficient #", '=', ValueKind::text, true}, {"right side", '=', ValueKind::text, false},
       {"certificate", '=', ValueKind::text, false},  {"boundary #", '=', ValueKind::text, false}};
 }
 
@@ -124,7 +124,11 @@ void append(Rows& out, const Rows& more) { out.insert(out.end(), more.begin(), m
       {"base term", base_keys()},
       {"equality", equality_keys()},
       {"ranges",
-       {{"range #", ':', ValueKind::text, true},
+       {{"finite low", ':', ValueKind::text, false},
+        {"finite high", ':', ValueKind::text, false},
+        {"finite zero below", ':', ValueKind::text, false},
+        {"finite zero above", ':', ValueKind::text, false},
+        {"range #", ':', ValueKind::text, true},
         {"range # zero below", ':', ValueKind::text, false},
         {"range # zero above", ':', ValueKind::text, false}}},
       {"ends", balance_keys("")},

@@ -17,6 +17,8 @@ namespace sumwright::writers {
 namespace {
 
 constexpr std::string_view kContinuation = "    ";
+constexpr const char* kChangedNote =
+    "a mail program or an editor may have changed the file; get it again, packed or attached";
 
 [[nodiscard]] bool key_character(char c) {
   return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z') || (c >= '0' && c <= '9') || c == '_' ||
@@ -74,10 +76,19 @@ class LineReader {
   }
 
   void first_line() {
-    if (!next_line() || line_ != kObligationsFirstLine) {
-      refuse(fmt::format("expected `{}` as the first line", kObligationsFirstLine), 0,
-             line_.size());
+    const bool any = next_line();
+    if (any && line_ == kObligationsFirstLine) return;
+    const std::size_t last = line_.find_last_not_of(" \t\r");
+    if (any && line_.substr(0, last + 1) == kObligationsFirstLine) refuse_trailing(last + 1);
+    if (any && line_.starts_with(kObligationsTitle)) {
+      refuse("an obligation file of another format", 0, line_.size(),
+             fmt::format("this version reads `{}`", kObligationsFirstLine));
     }
+    refuse(fmt::format("expected `{}` as the first line", kObligationsFirstLine), 0, line_.size());
+  }
+
+  [[noreturn]] void refuse_trailing(std::size_t column) const {
+    refuse("blanks at the end of a line", column, line_.size() - column, kChangedNote);
   }
 
   void check_plain() const {
@@ -88,7 +99,7 @@ class LineReader {
       }
       at += character.length;
     }
-    if (line_.ends_with(' ')) refuse("blanks at the end of a line", line_.size() - 1);
+    if (line_.ends_with(' ')) refuse_trailing(line_.find_last_not_of(' ') + 1);
   }
 
   void block_line() {
@@ -129,7 +140,10 @@ class LineReader {
   }
 
   void entry() {
-    if (block_open_) block_open_ = false;
+    if (block_open_ && line_ == "|") {
+      refuse("the blank behind the bar is gone", 0, line_.size(), kChangedNote);
+    }
+    block_open_ = false;
     std::size_t end = 0;
     while (end < line_.size() && key_character(line_[end])) ++end;
     std::string_view key = line_.substr(0, end);

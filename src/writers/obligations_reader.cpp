@@ -7,9 +7,11 @@
 #include <fmt/format.h>
 
 #include <algorithm>
-#include <fstream>
 #include <map>
+#include <optional>
+#include <utility>
 
+#include "claim/regular_file.hpp"
 #include "claim/text.hpp"
 #include "writers/obligations_lines.hpp"
 #include "writers/sha256.hpp"
@@ -20,10 +22,53 @@ namespace {
 
 constexpr std::string_view kNotEstablished = "NOT ESTABLISHED, ";
 
+constexpr const char* kConvertedNote =
+    "the line ends of the file were converted on its way; get it again, packed or attached";
+
+// The text if it has that many bytes, with its last line end or without.
+[[nodiscard]] std::optional<std::string> of_size(std::string text, std::string_view line_end,
+                                                 long bytes) {
+  if (std::cmp_equal(text.size(), bytes)) return text;
+  if (!text.ends_with(line_end)) return std::nullopt;
+  text.resize(text.size() - line_end.size());
+  if (std::cmp_equal(text.size(), bytes)) return text;
+  return std::nullopt;
+}
+
+[[nodiscard]] std::string with_crlf(std::string_view text) {
+  std::string out;
+  for (const char c : text) {
+    if (c == '\n') out += '\r';
+    out += c;
+  }
+  return out;
+}
+
+// Version control and mail give text files the line ends of the machine, and editors put a
+// byte-order mark before them; neither says anything. Gives whether line ends were converted.
+bool normalise(std::string& text) {
+  constexpr std::string_view mark = "\xEF\xBB\xBF";
+  if (text.starts_with(mark)) text.erase(0, mark.size());
+  const std::size_t first = text.find('\n');
+  if (first == std::string::npos || first == 0 || text[first - 1] != '\r') return false;
+  std::string out;
+  out.reserve(text.size());
+  for (std::size_t at = 0; at < text.size(); ++at) {
+    const bool pair = text[at] == '\r' && at + 1 < text.size() && text[at + 1] == '\n';
+    if (!pair) out += text[at];
+  }
+  text = std::move(out);
+  return true;
+}
+
 class FileBuilder {
  public:
-  FileBuilder(const claim::Source& source, const ObligationsLimits& limits)
-      : limits_(limits), source_(source), lines_(read_lines(source, limits)) {
+  // `converted`: the line ends are not those that were written.
+  FileBuilder(const claim::Source& source, const ObligationsLimits& limits, bool converted)
+      : limits_(limits),
+        source_(source),
+        converted_(converted),
+        lines_(read_lines(source, limits)) {
     for (const ReadEntry& entry : lines_.entries) {
       index_[{entry.section->name, entry.key}] = &entry;
     }
@@ -106,17 +151,23 @@ class FileBuilder {
   }
 
   void claim_text() {
-    out_.claim_text = lines_.block;
     const long bytes = values().small_integer(at("claim", "bytes").value);
-    const auto size = static_cast<long>(out_.claim_text.size());
-    if (bytes == size - 1) {
-      out_.claim_text.pop_back();
-    } else if (bytes != size) {
-      refuse(at("claim", "bytes").place, fmt::format("the claim's text has {} bytes", size));
-    }
     out_.claim_sha256 = text("claim", "sha256");
+    std::optional<std::string> found = of_size(lines_.block, "\n", bytes);
+    // A conversion of line ends may have taken or left those of the claim's text: the hash decides.
+    if (converted_ && (!found || sha256(*found) != out_.claim_sha256)) {
+      if (auto other = of_size(with_crlf(lines_.block), "\r\n", bytes)) found = std::move(other);
+    }
+    const std::string note = converted_ ? kConvertedNote : "";
+    if (!found) {
+      throw claim::InputError(source_, at("claim", "bytes").place,
+                              fmt::format("the claim's text has {} bytes", lines_.block.size()),
+                              note);
+    }
+    out_.claim_text = *std::move(found);
     if (sha256(out_.claim_text) != out_.claim_sha256) {
-      refuse(at("claim", "sha256").place, "this is not the SHA-256 of the claim's text below");
+      throw claim::InputError(source_, at("claim", "sha256").place,
+                              "this is not the SHA-256 of the claim's text below", note);
     }
   }
 
@@ -166,7 +217,11 @@ class FileBuilder {
       out_.recurrence.push_back(entry->value.text);
     }
     if (out_.recurrence.empty()) return;
-    out_.right_side = text("recurrence", "right side");
+    if (out_.verdict == "established") {  // a candidate may lack both
+      static_cast<void>(at("recurrence", "threshold"));
+      static_cast<void>(at("recurrence", "right side"));
+    }
+    if (has("recurrence", "right side")) out_.right_side = text("recurrence", "right side");
     if (has("recurrence", "certificate")) out_.certificate = text("recurrence", "certificate");
   }
 
@@ -234,6 +289,7 @@ class FileBuilder {
 
   const ObligationsLimits& limits_;
   const claim::Source& source_;
+  bool converted_;
   ReadLines lines_;
   std::map<std::pair<std::string, std::string>, const ReadEntry*> index_;
   ObligationsFile out_;
@@ -243,26 +299,19 @@ class FileBuilder {
 
 ObligationsFile read_obligations_text(std::string name, std::string text,
                                       const ObligationsLimits& limits) {
-  const claim::Source source{std::move(name), std::move(text)};
-  if (source.text.size() > limits.file_bytes) {
-    throw claim::InputError(fmt::format("{}: error: the file is larger than {} bytes",
-                                        claim::printable(source.name), limits.file_bytes));
+  if (text.size() > limits.file_bytes) {
+    throw claim::InputError(name,
+                            fmt::format("the file is larger than {} bytes", limits.file_bytes));
   }
-  return FileBuilder(source, limits).build();
+  const bool converted = normalise(text);
+  const claim::Source source{std::move(name), std::move(text)};
+  return FileBuilder(source, limits, converted).build();
 }
 
 ObligationsFile read_obligations_file(const std::filesystem::path& path,
                                       const ObligationsLimits& limits) {
-  const std::string shown = claim::printable(path.string());
-  std::ifstream in(path, std::ios::binary);
-  if (!in) throw claim::InputError(shown + ": error: the file cannot be opened");
-  std::string text(limits.file_bytes + 1, '\0');
-  in.read(text.data(), static_cast<std::streamsize>(text.size()));
-  if (in.bad() || (in.fail() && !in.eof())) {
-    throw claim::InputError(shown + ": error: the file cannot be read");
-  }
-  text.resize(static_cast<std::size_t>(in.gcount()));
-  return read_obligations_text(path.string(), std::move(text), limits);
+  return read_obligations_text(path.string(), claim::read_regular_file(path, limits.file_bytes),
+                               limits);
 }
 
 }  // namespace sumwright::writers

@@ -70,7 +70,8 @@ struct ObligationsLimits {
   unsigned long exponent = 1000000;
 };
 
-/// Reads a file. Throws claim::InputError.
+/// Reads a file. A byte-order mark, and line ends converted to CR LF throughout, are accepted.
+/// Throws claim::InputError.
 [[nodiscard]] ObligationsFile read_obligations_file(const std::filesystem::path& path,
                                                     const ObligationsLimits& limits = {});
 

@@ -107,6 +107,11 @@ void check_paths(const std::vector<NamedText>& files) {
   return open_folder(parent, name, shown);
 }
 
+[[nodiscard]] bool exists(int parent, const std::string& name) {
+  struct stat status {};
+  return ::fstatat(parent, name.c_str(), &status, AT_SYMLINK_NOFOLLOW) == 0;
+}
+
 // What stands at a file's place must be nothing or a regular file.
 void check_target(int parent, const std::string& name, const std::string& shown) {
   struct stat status {};
@@ -122,7 +127,7 @@ class Stage {
  public:
   Stage(const fs::path& parent, const std::string& name) {
     std::string pattern = (parent / ("." + name + ".part-XXXXXX")).string();
-    if (::mkdtemp(pattern.data()) == nullptr) fail(pattern, errno);
+    if (::mkdtemp(pattern.data()) == nullptr) fail(parent.string(), errno);
     path_ = pattern;
   }
   Stage(const Stage&) = delete;
@@ -150,6 +155,13 @@ class Stage {
 
 void synchronise(int fd, const std::string& shown) {
   if (::fsync(fd) != 0 && errno != EINVAL && errno != EROFS) fail(shown, errno);
+}
+
+// The entry of a folder that was made. Where its parent may be written but not read, the system has
+// to do without.
+void synchronise_folder(const fs::path& path) {
+  const Descriptor folder(::open(path.c_str(), O_RDONLY | O_DIRECTORY | O_CLOEXEC));
+  if (folder.get() >= 0) synchronise(folder.get(), path.string());
 }
 
 void write_all(int fd, const std::string& text, const std::string& shown) {
@@ -186,10 +198,13 @@ void write_folder(const fs::path& folder, const std::vector<NamedText>& files, F
   if (!target.has_filename()) target = target.parent_path();
   const std::string name = target.filename().string();
   if (name.empty()) fail(folder.string(), "not a folder that can be made");
-  const Descriptor parent(::open(target.parent_path().c_str(), O_RDONLY | O_DIRECTORY | O_CLOEXEC));
+  const Descriptor parent(::open(target.parent_path().c_str(), O_PATH | O_DIRECTORY | O_CLOEXEC));
   if (parent.get() < 0) fail(target.parent_path().string(), errno);
 
-  const Stage stage(target.parent_path(), name);
+  const bool there = exists(parent.get(), name);
+  Descriptor root(-1);
+  if (there) root = open_folder(parent.get(), name, target.string());
+  const Stage stage(there ? target : target.parent_path(), there ? "sumwright" : name);
   for (const NamedText& file : files) {
     const fs::path path = stage.path() / file.path;
     std::error_code code;
@@ -198,10 +213,9 @@ void write_folder(const fs::path& folder, const std::vector<NamedText>& files, F
     sink.write(path, file.text);
   }
 
-  const Descriptor root = make_folder(parent.get(), name, target.string());
-  const Descriptor staged(
-      ::open(stage.path().c_str(), O_RDONLY | O_DIRECTORY | O_NOFOLLOW | O_CLOEXEC));
-  if (staged.get() < 0) fail(stage.path().string(), errno);
+  if (!there) root = make_folder(parent.get(), name, target.string());
+  const Descriptor staged = open_folder(there ? root.get() : parent.get(),
+                                        stage.path().filename().string(), stage.path().string());
   std::vector<std::pair<Descriptor, Descriptor>> places;  // all checked before the first move
   for (const NamedText& file : files) {
     const auto parts = parts_of(file.path);
@@ -217,7 +231,7 @@ void write_folder(const fs::path& folder, const std::vector<NamedText>& files, F
     }
   }
   for (const auto& place : places) synchronise(place.second.get(), target.string());
-  synchronise(parent.get(), target.string());
+  if (!there) synchronise_folder(target.parent_path());
 }
 
 }  // namespace sumwright::writers

@@ -26,11 +26,12 @@ class FileSink {
 
 /// Writes all files below `folder`, which is created if it is not there (its parent must exist).
 ///
-/// Everything is written to a hidden folder beside `folder` first, each file synchronised and
-/// closed; only then are the files moved to their places, one atomic rename each. When something
-/// fails before that, nothing below `folder` has changed and no file is left; the hidden folder is
-/// removed also when an exception passes. Existing files of the same names are replaced; others are
-/// not touched.
+/// Everything is written to a hidden folder first, each file synchronised and closed; only then are
+/// the files moved to their places, one atomic rename each, in the order given. The hidden folder
+/// stands in `folder` when that exists (it may be a volume of its own, below a parent that cannot
+/// be written), else beside it. When something fails before the moves, no file below `folder` has
+/// changed and none is left; the hidden folder is removed also when an exception passes. Existing
+/// files of the same names are replaced; others are not touched.
 ///
 /// Refused with OutputError: paths that are empty, absolute, or have `.`, `..` or empty parts; two
 /// files of the same path; symbolic links at `folder`, at a folder below it or at a file's place;

@@ -138,7 +138,11 @@ std::string TextPrinter::unit(const proof::Unit& value) const {
 
 std::string TextPrinter::step(const proof::AtomStep& value) const {
   const std::string factor = factored(value.factor);
-  const std::string to = atom(value.to);
+  std::string to = atom(value.to);
+  if (!value.reciprocals.empty()) {
+    to.clear();
+    for (const proof::Atom& one : value.reciprocals) to += (to.empty() ? "" : " * ") + atom(one);
+  }
   return fmt::format("{} = {}{}", atom(value.from), factor == "1" ? to : factor + " * " + to,
                      bracketed_ids(value.conditions));
 }

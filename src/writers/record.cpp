@@ -35,12 +35,15 @@ using Json = nlohmann::ordered_json;
 }
 
 [[nodiscard]] Json recurrence_json(const proof::Proof& proof) {
-  Json out = {{"order", proof.order},
-              {"threshold", proof.threshold},
-              {"brought", proof.evidence_brought},
-              {"coefficients", proof.recurrence_text},
-              {"right_side", proof.right_side_text.empty() ? "0" : proof.right_side_text}};
-  if (!proof.certificate_text.empty()) out["certificate"] = proof.certificate_text;
+  const bool established = proof.verdict == proof::Verdict::established;
+  const StatedRecurrence stated = stated_recurrence(proof);
+  if (stated.coefficients.empty()) return nullptr;
+  Json out = {{"order", stated.coefficients.size() - 1}};
+  if (established) out["threshold"] = proof.threshold;
+  out["brought"] = stated.brought;
+  out["coefficients"] = stated.coefficients;
+  if (!stated.right_side.empty()) out["right_side"] = stated.right_side;
+  if (!stated.certificate.empty()) out["certificate"] = stated.certificate;
   return out;
 }
 
@@ -87,7 +90,11 @@ std::string record_json(const proof::Proof& proof, const std::vector<NamedText>&
   if (!proof.would_settle.empty()) out["would_settle"] = proof.would_settle;
   if (!proof.residue.empty()) out["residue"] = proof.residue;
   if (proof.counterexample) out["counterexample"] = counterexample_json(*proof.counterexample);
-  if (!proof.recurrence_text.empty()) out["recurrence"] = recurrence_json(proof);
+  if (const Json recurrence = recurrence_json(proof); !recurrence.is_null()) {
+    // What is not proved of the sum must not be found where a proved recurrence stands.
+    const bool established = proof.verdict == proof::Verdict::established;
+    out[established ? "recurrence" : "candidate"] = recurrence;
+  }
   out["sizes"] = sizes_json(proof);
   out["conditions"] = Json::array();
   for (const proof::Condition& condition : proof.conditions) {

@@ -87,13 +87,15 @@ TEST(Arguments, Refusals) {
     std::vector<std::string> arguments;
     std::string message;
   } cases[] = {
-      {{}, "A subcommand is required"},
-      {{"prove", "x.toml"}, "no command 'prove'; there are 'find', 'check', 'export' or 'replay'"},
+      {{}, "sumwright: a command is needed: 'find', 'check', 'export' or 'replay'"},
+      {{"prove", "x.toml"}, "no command 'prove'; there are 'find', 'check', 'export' and 'replay'"},
       {{"chekc", "x.toml"}, "no command 'chekc'; did you mean 'check'?"},
-      {{"check"}, "FILE is required"},
+      {{"check"}, "sumwright: check: FILE is required; `sumwright check --help` lists what"},
       {{"check", "a.toml", "b.toml"}, "b.toml"},
       {{"check", "a.toml", "--out", "x"}, "--out"},
-      {{"export", "a.toml"}, "--out is required"},
+      {{"export", "a.toml"}, "sumwright: export: --out is required"},
+      {{"check", "a.toml", "--memory-limit", "1KiB"},
+       "sumwright: check: --memory-limit: '1KiB': a size"},
       {{"check", "a.toml", "--memory-limit", "1KiB"}, "at least 64MiB"},
       {{"export", "a.toml", "--out", "x", "--as", "pdf"}, "no target 'pdf'"},
       {{"export", "a.toml", "--out", "x", "--coq-prefix", "a; rm"}, "a name is a letter"},

@@ -1,5 +1,6 @@
 // `export`: which files for which verdict, the same bytes every time, and nothing half written.
 #include <gtest/gtest.h>
+#include <unistd.h>
 
 #include <nlohmann/json.hpp>
 
@@ -160,6 +161,70 @@ TEST(Export, WhatWasChangedByHandStaysWithAWarning) {
   EXPECT_EQ(read_file(folder.path() / "out/appendix.tex"), "mine now\n");
 }
 
+// What an author keeps in the folder is not replaced without a word.
+TEST(Export, FilesOfTheAuthorAreNotReplaced) {
+  const TestFolder folder;
+  folder.write("c.toml", squares_claim());
+  fs::create_directory(folder.path() / "out");
+  for (const std::string name :
+       {"obligations.txt", "appendix.tex", "record.json", "run.json", "coq"}) {
+    const fs::path mine = folder.write("out/" + name, "{\"files\": []}\n");
+    const Outcome outcome = folder.sumwright({"export", "c.toml", "--out", "out"});
+    EXPECT_EQ(outcome.status, 2) << name;
+    if (name != "coq") {
+      EXPECT_EQ(outcome.err, "sumwright: out/" + name +
+                                 ": exists and is not from an earlier export; move it away, or "
+                                 "choose another --out\n");
+    }
+    EXPECT_EQ(read_file(mine), "{\"files\": []}\n");
+    EXPECT_EQ(folder.files(), (std::vector<std::string>{"c.toml", "out/" + name}));
+    fs::remove(mine);
+  }
+  // Beside an export, what it does not list is still the author's.
+  EXPECT_EQ(folder.sumwright({"export", "c.toml", "--out", "out", "--as", "obligations"}).status,
+            0);
+  folder.write("out/appendix.tex", "mine\n");
+  EXPECT_EQ(folder.sumwright({"export", "c.toml", "--out", "out"}).status, 2);
+  EXPECT_EQ(read_file(folder.path() / "out/appendix.tex"), "mine\n");
+  EXPECT_EQ(folder.sumwright({"export", "c.toml", "--out", "out", "--as", "obligations"}).status,
+            0);
+}
+
+// A mounted volume: the folder is there and may be written, what is above it may not.
+TEST(Export, OnlyTheFolderItselfIsWritten) {
+  const TestFolder folder;
+  folder.write("c.toml", squares_claim());
+  fs::create_directories(folder.path() / "above/out");
+  const bool root = ::geteuid() == 0;
+  fs::permissions(folder.path(), fs::perms(0755));
+  fs::permissions(folder.path() / "above", fs::perms(0555));
+  fs::permissions(folder.path() / "above/out", fs::perms(0777));
+  std::vector<std::string> arguments{SUMWRIGHT_PROGRAM, "export", "c.toml", "--out", "above/out"};
+  if (root) {
+    const std::vector<std::string> as_nobody{"setpriv", "--reuid=65534", "--regid=65534",
+                                             "--clear-groups"};
+    arguments.insert(arguments.begin(), as_nobody.begin(), as_nobody.end());
+  }
+  const Outcome outcome = run_program(arguments, folder.path());
+  fs::permissions(folder.path() / "above", fs::perms(0755));
+  EXPECT_EQ(outcome.status, 0) << outcome.err;
+  EXPECT_TRUE(has(folder.files(), "above/out/coq/Claim.v"));
+  for (const auto& entry : fs::directory_iterator(folder.path() / "above/out")) {
+    EXPECT_FALSE(entry.path().filename().string().starts_with(".")) << entry.path();
+  }
+}
+
+TEST(Export, AnUnansweredQuestionIsArchivedAsOne) {
+  const TestFolder folder;
+  folder.write("c.toml",
+               replaced(squares_claim(), "[equals]\nclosed  = \"binomial(2*n, n)\"\n", ""));
+  EXPECT_EQ(folder.sumwright({"export", "c.toml", "--out", "out", "--max-order", "0"}).status, 3);
+  const json record = json::parse(read_file(folder.path() / "out/record.json"));
+  EXPECT_EQ(record.at("claim").at("statement"),
+            "a recurrence for S(n) = sum(k = 0..n, binomial(n, k)^2) for every integer n >= 0");
+  EXPECT_FALSE(record.contains("recurrence"));
+}
+
 // A record from a stranger must not lead to files elsewhere.
 TEST(Export, RecordThatPointsOutsideRemovesNothing) {
   const TestFolder folder;
@@ -169,7 +234,12 @@ TEST(Export, RecordThatPointsOutsideRemovesNothing) {
   folder.write("out/record.json", R"({"files": [{"path": "../precious", "sha256": ")" +
                                       writers::sha256("x") + R"("}]})");
   EXPECT_EQ(folder.sumwright({"export", "c.toml", "--out", "out", "--as", "obligations"}).status,
-            0);
+            2);
+  folder.write("out/record.json",
+               R"({"tool": {"name": "Sumwright"}, "files": [{"path": "../precious", "sha256": ")" +
+                   writers::sha256("x") + R"("}]})");
+  EXPECT_EQ(folder.sumwright({"export", "c.toml", "--out", "out", "--as", "obligations"}).status,
+            2);
   EXPECT_EQ(read_file(folder.path() / "precious"), "x");
 }
 

@@ -32,6 +32,7 @@ TEST(Find, AnswersAQuestionWithARightSide) {
   EXPECT_EQ(outcome.status, 0);
   EXPECT_NE(outcome.out.find("S(n) = factorial(n + 1) - 1"), std::string::npos) << outcome.out;
   EXPECT_NE(outcome.out.find("right_side  = \"factorial(n + 1) - 1\"\n"), std::string::npos);
+  EXPECT_EQ(outcome.out.find("one by one"), std::string::npos);
 }
 
 TEST(Find, NothingWithinTheOrder) {

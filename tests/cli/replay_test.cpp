@@ -116,12 +116,16 @@ TEST_F(Replay, TimeLimit) {
   const Outcome outcome = replay({"--time-limit", "0.5"});
   EXPECT_EQ(outcome.status, 3);
   EXPECT_NE(outcome.err.find("time limit reached"), std::string::npos) << outcome.err;
+  EXPECT_NE(outcome.out.find("  stopped at its time limit\n"), std::string::npos) << outcome.out;
+  EXPECT_EQ(outcome.out.find("FAILED"), std::string::npos) << outcome.out;
   EXPECT_TRUE(outcome.out.ends_with("undecided\n"));
 }
 
 TEST_F(Replay, AProgramEndedByASignalDecidesNothing) {
   stand_in("coqc", "kill -9 $$");
-  EXPECT_EQ(replay().status, 3);
+  const Outcome outcome = replay();
+  EXPECT_EQ(outcome.status, 3);
+  EXPECT_EQ(outcome.out.find("FAILED"), std::string::npos) << outcome.out;
 }
 
 TEST_F(Replay, NoAssistant) {
@@ -200,7 +204,10 @@ TEST_F(Replay, Json) {
 
 TEST(ReplayFolder, NoExport) {
   const TestFolder folder;
-  EXPECT_EQ(folder.sumwright({"replay", "."}).status, 2);
+  const Outcome empty = folder.sumwright({"replay", "."});
+  EXPECT_EQ(empty.status, 2);
+  EXPECT_EQ(empty.err, "sumwright: .: not a folder written by `export`: it has no record.json\n");
+  EXPECT_EQ(folder.sumwright({"replay", "none"}).err, "sumwright: none: no such folder\n");
   folder.write("record.json", "{}");
   const Outcome outcome = folder.sumwright({"replay", "."});
   EXPECT_EQ(outcome.status, 2);

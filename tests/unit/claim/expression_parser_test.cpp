@@ -173,11 +173,16 @@ TEST(ParseExpression, RefusesForeignCharacters) {
 TEST(ParseExpression, RefusesUndeclaredNames) {
   expect_refused("k + q", "1:5", "'q' is not declared");
   expect_refused("facotrial(n)", "1:1", "did you mean 'factorial'?");
-  expect_refused("choose(n, k)", "1:1", "the functions are");
+  expect_refused("choose(n, k)", "1:1", "did you mean 'binomial'?");
+  expect_refused("C(n, k)", "1:1", "did you mean 'binomial'?");
+  expect_refused("Binomial(n, k)", "1:1", "did you mean 'binomial'?");
+  expect_refused("pochhammer(n, k)", "1:1", "did you mean 'rising'?");
+  expect_refused("sqrt(n)", "1:1", "'floor', 'min' and 'max'");
   expect_refused("binomail", "1:1", "did you mean 'binomial'?");
   expect_refused("inf", "1:1", "only as a whole bound");
   expect_refused("n + inf", "1:5", "only as a whole bound");
-  expect_refused("N", "1:1", "'N' is not declared");
+  expect_refused("N", "1:1", "did you mean 'n'?");
+  expect_refused("Q", "1:1", "every symbol is an index");
 }
 
 TEST(ParseExpression, SuggestsDeclaredNames) {

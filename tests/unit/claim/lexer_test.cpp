@@ -59,6 +59,15 @@ TEST(Lexer, RefusesEveryOtherAsciiCharacter) {
   }
 }
 
+TEST(Lexer, SuperscriptsAreNamed) {
+  try {
+    (void)kinds_of("n\xC2\xB2");
+    FAIL();
+  } catch (const InputError& error) {
+    EXPECT_NE(std::string(error.what()).find("note: write ^2"), std::string::npos) << error.what();
+  }
+}
+
 TEST(Lexer, AnIncompleteNotEqualIsRefused) { EXPECT_THROW((void)kinds_of("a ! = b"), InputError); }
 
 }  // namespace

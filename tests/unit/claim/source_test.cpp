@@ -126,7 +126,17 @@ TEST(InputErrorTest, WhatIsTheRenderedMessage) {
   const Source source{"f", "ab"};
   EXPECT_EQ(std::string(InputError(source, {0, 2}, "m", "n").what()),
             "f:1:1: error: m\n  ab\n  ^~\nnote: n");
-  EXPECT_EQ(std::string(InputError("plain").what()), "plain");
+  const InputError placed(Source{"g", "ab\ncd"}, {4, 1}, "m", "n");
+  EXPECT_EQ(placed.parts().file, "g");
+  EXPECT_EQ(placed.parts().position.line, 2U);
+  EXPECT_EQ(placed.parts().position.column, 2U);
+  EXPECT_EQ(placed.parts().message, "m");
+  EXPECT_EQ(placed.parts().note, "n");
+  const InputError whole("f\n", "not readable");
+  EXPECT_EQ(std::string(whole.what()), "f\\x0a: error: not readable");
+  EXPECT_EQ(whole.parts().file, "f\n");
+  EXPECT_EQ(whole.parts().position.line, 0U);
+  EXPECT_EQ(whole.parts().message, "not readable");
 }
 
 }  // namespace

@@ -62,6 +62,16 @@ TEST(Nearest, FindsNearMissesOnly) {
 TEST(Alternatives, JoinsWithOr) {
   EXPECT_EQ(alternatives({"a"}), "'a'");
   EXPECT_EQ(alternatives({"a", "b", "c"}), "'a', 'b' or 'c'");
+  EXPECT_EQ(listing({"a"}), "'a'");
+  EXPECT_EQ(listing({"a", "b", "c"}), "'a', 'b' and 'c'");
+}
+
+TEST(Suggested, ReadsWhatSuggestionWrites) {
+  EXPECT_EQ(suggested(suggestion("sumand", {"summand"})), "summand");
+  for (const char* other : {"", "write a*b", "did you mean ?", "did you mean '?", "did you mean x?",
+                            "did you mean 'x'? or not"}) {
+    EXPECT_FALSE(suggested(other).has_value()) << other;
+  }
 }
 
 }  // namespace

@@ -237,7 +237,10 @@ TEST(Obligations, RefusalsSayWhereAndWhat) {
   const std::string text = obligations_text(fixture::squares());
   const std::vector<std::tuple<std::string, std::string, std::string>> cases = {
       {"Sumwright obligations, format 1", "Sumwright obligations, format 2",
-       "o.txt:1:1: error: expected"},
+       "o.txt:1:1: error: an obligation file of another format"},
+      {"Sumwright obligations, format 1", "Obligations", "o.txt:1:1: error: expected"},
+      {"Sumwright obligations, format 1", "Sumwright obligations, format 1 ",
+       "o.txt:1:32: error: blanks at the end of a line"},
       {"== base term =", "== base terms ", "did you mean 'base term'?"},
       {"== base term =", "== base term ", "a heading is"},
       {"evidence: found", "evidence = found", "expected `:` after this key"},
@@ -323,6 +326,44 @@ TEST(Obligations, NotEstablishedSaysSoAtTheTop) {
   const std::string forged = replaced(replaced(text, "NOT ESTABLISHED, refuted", "established"),
                                       "verdict: refuted", "verdict: established");
   EXPECT_NE(refusal(forged).find("has no open conditions"), std::string::npos);
+}
+
+TEST(Obligations, ACandidateHasNoThreshold) {
+  proof::Proof proof = fixture::squares();
+  proof.verdict = proof::Verdict::undecided;
+  const std::string text = obligations_text(proof);
+  EXPECT_NE(text.find("\nevidence: found; not proved\n"), std::string::npos) << text;
+  EXPECT_EQ(text.find("\nthreshold"), std::string::npos);
+  EXPECT_EQ(text.find("\nright side = "), std::string::npos);
+  const ObligationsFile file = read_obligations_text("o.txt", text);
+  EXPECT_EQ(file.verdict, "undecided");
+  EXPECT_EQ(file.right_side, "");
+  // An established file must have both.
+  const std::string proved = obligations_text(fixture::squares());
+  EXPECT_NE(refusal(replaced(proved, "\nthreshold: 0\n", "\n")).find("`threshold` is missing"),
+            std::string::npos);
+  EXPECT_NE(refusal(replaced(proved, "\nright side = 0\n", "\n")).find("`right side` is missing"),
+            std::string::npos);
+}
+
+TEST(Obligations, LineEndsOfOtherMachinesAreRead) {
+  const auto crlf = [](std::string text) {
+    for (std::size_t at = 0; (at = text.find('\n', at)) != std::string::npos; at += 2) {
+      text.replace(at, 1, "\r\n");
+    }
+    return text;
+  };
+  const std::string text = obligations_text(fixture::squares());
+  const ObligationsFile file = read_obligations_text("o.txt", text);
+  for (const std::string& other :
+       {crlf(text), "\xEF\xBB\xBF" + text, "\xEF\xBB\xBF" + crlf(text)}) {
+    const ObligationsFile read = read_obligations_text("o.txt", other);
+    EXPECT_EQ(read.claim_text, file.claim_text);
+    EXPECT_TRUE(differences(read, fixture::squares()).empty());
+  }
+  // Altered as well: the conversion is not blamed for what it did not do, but it is named.
+  EXPECT_NE(refusal(crlf(replaced(text, "| running", "| Running"))).find("were converted"),
+            std::string::npos);
 }
 
 TEST(Obligations, GrammarNamesEveryKeyAndSection) {
