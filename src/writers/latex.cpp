@@ -31,6 +31,7 @@ LatexDocument::LatexDocument(const proof::Proof& proof, const std::string& oblig
 
 std::string LatexDocument::appendix() {
   opening();
+  long_names();
   theorem();
   conventions();
   say("\\begin{proof}\n");
@@ -53,8 +54,22 @@ void LatexDocument::head(const std::string& title) {
   out_ += "\\par\\medskip\\noindent\\textbf{" + title + ".}\\enspace\n";
 }
 
-void LatexDocument::code_paragraph(const std::string& text) {
-  out_ += "\\begin{quote}\\raggedright\\small\n" + latex_code(text) + "\n\\end{quote}\n";
+void LatexDocument::code_paragraph(const std::string& text, const std::string& label) {
+  const std::string number =
+      label.empty() ? "" : "\\refstepcounter{equation}\\label{" + label + "}(\\theequation)\\quad ";
+  out_ +=
+      "\\begin{quote}\\raggedright\\small " + number + "\n" + latex_code(text) + "\n\\end{quote}\n";
+}
+
+void LatexDocument::explain_dots() {
+  if (dots_explained_ || values_.abbreviated() == 0) return;
+  dots_explained_ = true;
+  say("Here and below, dots stand for terms that are not printed: all polynomials are in full in "
+      "the file \\texttt{obligations.txt}, whose SHA-256 is given at the end. ");
+}
+
+std::string LatexDocument::coefficient(std::size_t i) const {
+  return fmt::format("{}_{{{}}}({})", names_.letter('a'), i, running(0));
 }
 
 std::string LatexDocument::reference(const std::string& name) const {
@@ -62,13 +77,13 @@ std::string LatexDocument::reference(const std::string& name) const {
 }
 
 std::string LatexDocument::running(long shift) const {
-  const std::string name = names_.symbol(claim_.running).tex;
+  std::string name = names_.symbol(claim_.running).tex;
   if (shift == 0) return name;
   return fmt::format("{}{}{}", name, shift < 0 ? "-" : "+", std::abs(shift));
 }
 
 bool LatexDocument::has_index() const {
-  return proof_.symbols.size() > 1 && !proof_.symbols[1].name.empty() &&
+  return !claim_.sum.over.empty() && proof_.symbols.size() > 1 && !proof_.symbols[1].name.empty() &&
          proof_.symbols[1].kind == proof::SymbolKind::index;
 }
 
@@ -112,7 +127,7 @@ std::vector<NamedText> latex_files(const proof::Proof& proof) {
   const std::string appendix = std::string(kNotice) + std::string(kEnvironment) + body;
   const std::string standalone =
       std::string(kNotice) +
-      "\\documentclass{amsart}\n\\usepackage{amsmath,amsthm}\n\\begin{document}\n" +
+      "\\documentclass{amsart}\n\\usepackage{amsmath,amsthm}\n\\raggedbottom\n\\begin{document}\n" +
       std::string(kEnvironment) + body + "\\end{document}\n";
   return {{"appendix.tex", appendix}, {"appendix-standalone.tex", standalone}};
 }

@@ -2,6 +2,8 @@
 // induction.
 #include <fmt/format.h>
 
+#include <algorithm>
+
 #include "writers/latex_document.hpp"
 #include "writers/latex_text.hpp"
 
@@ -11,16 +13,22 @@ namespace {
 
 constexpr std::size_t kListed = 12;  // initial values and terms shown one by one
 
-[[nodiscard]] std::string base_name(const LatexNames& names, std::size_t group) {
-  return fmt::format("{}_{{{}}}", names.letter('E'), group + 1);
+constexpr double kShownSum = 8 * kRoom;  // sums that give 0 are written out up to eight lines
+
+[[nodiscard]] bool has_zeros(const proof::Balance& balance) {
+  return std::any_of(balance.terms.begin(), balance.terms.end(),
+                     [](const proof::BalanceTerm& term) { return term.zero.has_value(); });
 }
 
 }  // namespace
 
 std::string LatexDocument::zero_reason(const proof::BalanceTerm& term) {
   if (!term.zero_atom) return "a polynomial factor is $0$";
-  return "${1/" + inline_tex(values_.atom(*term.zero_atom)) + "}=0$ (" + latex_text(*term.zero) +
-         ")";
+  const std::string atom = "${1/" + inline_tex(values_.atom(*term.zero_atom)) + "}=0$";
+  const std::string id = " (" + latex_text(*term.zero) + ")";
+  if (!term.zero_factor) return atom + id;
+  const std::string factor = inline_tex(values_.affine(*term.zero_factor));
+  return "it has the factor $" + factor + "$, and " + atom + " unless $" + factor + "=0$" + id;
 }
 
 // The term in the letters of the argument, with its sign: what `product` is the value of.
@@ -37,8 +45,10 @@ Formula LatexDocument::term_label(const proof::BalanceTerm& term, std::optional<
   const std::string point = inline_tex(values_.affine(term.point));
   const std::string f_value =
       has_index() ? fmt::format("{}({},{})", f, n, point) : fmt::format("{}({})", f, n);
-  const std::string a = fmt::format("{}_{{{}}}{}\\,", names_.letter('a'), term.shift,
-                                    at ? "(" + std::to_string(*at) + ")" : "");
+  const std::string a = without_coefficients()
+                            ? ""
+                            : fmt::format("{}_{{{}}}{}\\,", names_.letter('a'), term.shift,
+                                          at ? "(" + std::to_string(*at) + ")" : "");
   const bool weighted = !at && proof_.telescoping && !weight_is_one();
   const std::string d = weighted ? names_.letter('d') + "(" + running(0) + ")\\," : "";
   const auto label = [](const std::string& tex) {
@@ -79,91 +89,110 @@ void LatexDocument::balance_zeros(const proof::Balance& balance, std::optional<l
   say("These terms vanish:\n\\begin{itemize}\\raggedright\n" + items + "\\end{itemize}\n");
 }
 
-void LatexDocument::balance_group(const proof::Balance& balance, const proof::BalanceGroup& group,
-                                  std::optional<long> at) {
-  const auto position = static_cast<std::size_t>(&group - balance.groups.data());
+void LatexDocument::balance_group(const proof::Balance& balance, std::size_t position,
+                                  const std::string& place, std::optional<long> at) {
+  const proof::BalanceGroup& group = balance.groups[position];
   const bool trivial = group.base.product.atoms.empty();
-  const Formula base = piece(base_name(names_, position), 1.2);
+  Formula base = piece("1", 0.52);
   if (!trivial) {
+    base = piece(fmt::format("{}_{{{}}}", names_.letter('E'), ++bases_), 1.2);
     say("With\n" + display(base, values_.product(group.base.product), "", ""));
-    say(balance.groups.size() == 1 ? "the terms that remain are\n" : "the similar terms are\n");
+    say(balance.groups.size() > 1 ? "the similar terms are\n"
+        : has_zeros(balance)      ? "the terms that remain are\n"
+                                  : "the terms are\n");
   } else {
     say("The terms without factorials and powers are\n");
   }
   std::vector<DisplayRow> rows;
   Formula sum;
+  const std::size_t abbreviated = values_.abbreviated();
   for (std::size_t m = 0; m < group.members.size(); ++m) {
-    Formula share = values_.factored(group.polynomials[m], trivial);
-    const Formula factor = values_.factored(group.polynomials[m], false);
-    append_term(sum, factor);
-    if (!trivial) {
-      const std::string tex = inline_tex(share);
-      if (tex == "1") share = piece("", 0);
-      if (tex == "-1") share = piece("-", 0.8);
-      append_tex(share, "\\," + inline_tex(base), 1.4);
-    }
-    rows.push_back({term_label(balance.terms[group.members[m]], at), share});
+    const Formula share = values_.factored(group.polynomials[m], false);
+    append_term(sum, share);
+    rows.push_back({term_label(balance.terms[group.members[m]], at),
+                    trivial ? values_.factored(group.polynomials[m]) : of_function(share, base)});
   }
   say(display_list(rows, ","));
-  if (group.members.size() > 1 && width_of(sum) < 3 * kRoom) {
+  if (values_.abbreviated() == abbreviated && width_of(sum) <= kShownSum) {
     say("and\n" + display(sum, piece("0", 0.52), "", "."));
-  } else {
-    say("and their coefficients add up to $0$.\n");
+    return;
   }
+  say(
+      fmt::format("and {} add up to $0$; {} in full in \\texttt{{obligations.txt}} under "
+                  "\\texttt{{{}class {} share}}.\n",
+                  trivial ? "they" : "the polynomials before $" + inline_tex(base) + "$",
+                  trivial ? "they are" : "these are", place, position + 1));
+  explain_dots();
 }
 
-void LatexDocument::balance(const proof::Balance& balance, std::optional<long> at) {
+void LatexDocument::balance(const proof::Balance& balance, const std::string& place,
+                            std::optional<long> at) {
   balance_zeros(balance, at);
   if (balance.groups.size() > 1) {
     say(fmt::format(
-        "The other terms fall into {} classes of similar terms, each of which adds up to $0$ "
+        "The {}terms fall into {} classes of similar terms, each of which adds up to $0$ "
         "by itself. ",
-        balance.groups.size()));
+        has_zeros(balance) ? "other " : "", balance.groups.size()));
   }
-  for (const proof::BalanceGroup& group : balance.groups) balance_group(balance, group, at);
+  for (std::size_t g = 0; g < balance.groups.size(); ++g) balance_group(balance, g, place, at);
 }
 
 void LatexDocument::ends() {
   if (!proof_.ends) return;
-  const bool one = !proof_.telescoping || weight_is_one();
-  head("The ends of the range");
-  say(fmt::format(
-      "It remains to collect the values of ${}$ at the ends and the single terms above, and to "
-      "compare them with the right side of {}{}. ",
-      names_.letter('G'), reference("claim"),
-      one ? "" : " times $" + inline_tex(of_running('d', 0)) + "$"));
-  say("Written on one side, they add up to $0$, as follows. ");
+  if (proof_.telescoping) {
+    head("The ends of the range");
+    say(fmt::format(
+        "It remains to collect the values of ${}$ at the ends and the single terms above, and to "
+        "compare them with the right side of {}{}. ",
+        names_.letter('G'), reference("claim"),
+        weight_is_one() ? "" : " times $" + inline_tex(of_running('d', 0)) + "$"));
+  } else {
+    single_term();
+  }
+  if (proof_.right_side && !proof_.right_side->products.empty()) {
+    say(fmt::format("Write ${}$ for the right side of {}; in factorials and powers,\n",
+                    inline_tex(of_running('b', 0)), reference("claim")));
+    parts('b', of_running('b', 0), proof_.right_side->products);
+  }
+  say(proof_.telescoping ? "Written on one side, they add up to $0$, as follows. "
+                         : "Written on one side, the terms add up to $0$, as follows. ");
   balance(*proof_.ends);
 }
 
 void LatexDocument::closed_form() {
   if (!proof_.closed_recurrence) return;
-  head("The closed form");
-  const std::string s = names_.letter('S');
-  const std::string c = names_.letter('C');
+  if (proof_.telescoping) {
+    head("The closed form");
+  } else {
+    single_term();
+  }
   say(fmt::format("Write ${}$ for the right side of {}; in factorials and powers,\n",
                   inline_tex(of_running('C', 0)), reference("claim")));
-  Formula closed;
-  for (const proof::Product& product :
-       proof_.closed ? proof_.closed->products : std::vector<proof::Product>{}) {
-    append_term(closed, values_.product(product));
-  }
-  say(display(of_running('C', 0), closed, "", "."));
+  parts('C', of_running('C', 0),
+        proof_.closed ? proof_.closed->products : std::vector<proof::Product>{});
+  const std::size_t count =
+      proof_.telescoping ? proof_.telescoping->coefficients.size() : proof_.recurrence_text.size();
+  const char left = proof_.telescoping ? 'S' : 'F';
   Formula sum;
-  // Without an index the two sides are compared directly.
-  const std::size_t count = proof_.telescoping ? proof_.telescoping->coefficients.size() : 1;
   for (std::size_t i = 0; i < count; ++i) {
-    const auto shift = static_cast<long>(i);
-    append_term(sum,
-                piece(fmt::format("{}_{{{}}}({})\\bigl({}({})-{}({})\\bigr)", names_.letter('a'), i,
-                                  running(0), s, running(shift), c, running(shift)),
-                      8.5 + (i == 0 ? 0 : 3)));
+    const Formula value = of_running(left, static_cast<long>(i));
+    Formula both = value;
+    subtract(both, of_running('C', static_cast<long>(i)));
+    if (without_coefficients()) {
+      sum = both;
+    } else {
+      append_term(sum, piece(coefficient(i) + "\\bigl(" + inline_tex(both) + "\\bigr)",
+                             3.8 + width_of(both)));
+    }
   }
   say("We claim that\n" + display(sum, piece("0", 0.52), label("difference"), ""));
-  say(fmt::format(
-      "for ${}\\ge {}$. By the summation above, this says that the values of ${}$ at the ends, the "
-      "single terms and the terms with ${}$ add up to $0$. ",
-      running(0), proof_.threshold, names_.letter('G'), c));
+  say(fmt::format("for ${}\\ge {}$. ", running(0), proof_.threshold));
+  if (proof_.telescoping) {
+    say(
+        fmt::format("By the summation above, this says that the values of ${}$ at the ends, the "
+                    "single terms and the terms with ${}$ add up to $0$. ",
+                    names_.letter('G'), names_.letter('C')));
+  }
   balance(*proof_.closed_recurrence);
 }
 
@@ -207,11 +236,10 @@ std::string LatexDocument::nonzero_reason(const proof::Nonzero& nonzero) {
 }
 
 void LatexDocument::leading() {
-  if (!proof_.leading) return;
+  if (!proof_.leading || without_coefficients()) return;
   head("The leading coefficient");
-  const std::string a = fmt::format("{}_{{{}}}({})", names_.letter('a'), proof_.order, running(0));
-  say(fmt::format("The coefficient ${}$, for ${}\\ge {}$, {}.\n", a, running(0), proof_.threshold,
-                  nonzero_reason(*proof_.leading)));
+  say(fmt::format("The coefficient ${}$, for ${}\\ge {}$, {}.\n", coefficient(proof_.order),
+                  running(0), proof_.threshold, nonzero_reason(*proof_.leading)));
 }
 
 void LatexDocument::initial_values() {
@@ -243,12 +271,13 @@ void LatexDocument::initial_values() {
     }
   }
   say(".\n");
-  for (const proof::InitialValue& value : proof_.initial) {
+  for (std::size_t v = 0; v < proof_.initial.size(); ++v) {
+    const proof::InitialValue& value = proof_.initial[v];
     if (value.value || value.balance.groups.empty()) continue;
     say(fmt::format(
         "At ${}={}$ the sum has the terms below; with the right side they add up to $0$. ",
         running(0), value.at));
-    balance(value.balance, value.at);
+    balance(value.balance, fmt::format("value {} ", v + 1), value.at);
   }
 }
 
@@ -263,7 +292,8 @@ void LatexDocument::conclusion() {
   }
   if (proof_.order == 0) {
     say(fmt::format(
-        "Since the coefficient is not zero, {} gives {} for ${}\\ge {}$.{}\n",
+        "{}{} gives {} for ${}\\ge {}$.{}\n",
+        without_coefficients() ? "Equation " : "Since the coefficient is not zero, ",
         reference("difference"), reference("claim"), n, proof_.threshold,
         proof_.initial.empty() ? "" : " For smaller values it has been computed directly."));
     return;

@@ -35,7 +35,9 @@ void LatexDocument::conditions() {
   say(std::string("\\smallskip") + std::string(kRule));
   for (const proof::Condition& condition : proof_.conditions) {
     std::string statement = expressions_.mixed(condition.text);
-    if (!condition.region.empty()) statement += " for " + expressions_.mixed(condition.region);
+    if (!condition.region.empty() && !condition.text.ends_with(" at " + condition.region)) {
+      statement += " for " + expressions_.mixed(condition.region);
+    }
     std::string settled = word(condition.settled);
     if (!condition.method.empty()) settled += ": " + expressions_.mixed(condition.method);
     say(row(latex_text(condition.id), word(condition.kind), statement, settled));
@@ -56,13 +58,15 @@ void LatexDocument::trust() {
       "statement says what the theorem says; neither the program that wrote the script nor these "
       "pages "
       "have to be trusted. ");
-  say("The same obligations, with every polynomial in full, are in the text file "
+  // A paragraph that is not divided, so that the digits do not stand alone on a page.
+  say("\n\n{\\raggedright\\widowpenalty10000 \\clubpenalty10000\n"
+      "The same obligations, with every polynomial in full, are in the text file "
       "\\texttt{obligations.txt} with SHA-256\n");
   std::string hash;
   for (std::size_t i = 0; i < obligations_sha256_.size(); i += 16) {
     hash += (i == 0 ? "" : "\\allowbreak ") + obligations_sha256_.substr(i, 16);
   }
-  say("\\begin{quote}\\raggedright\\small\\texttt{" + hash + "}\\end{quote}\n");
+  say("\\texttt{" + hash + "}.\\par}\n");
 }
 
 }  // namespace sumwright::writers

@@ -22,6 +22,7 @@ class LatexDocument {
  private:
   // latex_statement.cpp: what is claimed, and conventions
   void opening();
+  void long_names();
   void theorem();
   [[nodiscard]] std::string hypotheses() const;
   [[nodiscard]] std::string parameter_sentence() const;
@@ -33,23 +34,41 @@ class LatexDocument {
 
   // latex_argument.cpp: certificate, base term, equality
   void certificate();
-  void coefficient_list();
+  /// a_0(n), a_1(n), ... and, when `weighted`, the factor d(n) of the identity, if it is not 1.
+  void coefficient_list(bool weighted);
   void base_term();
   void equality();
+  /// d(n) (a_0(n) F(n,k) + a_1(n) F(n+1,k) + ...)
+  [[nodiscard]] Formula weighted_sum();
+  /// G(n,k+1) - G(n,k)
+  [[nodiscard]] Formula difference() const;
+  [[nodiscard]] Formula equality_left();
+  void multiplied_out();
 
   // latex_summation.cpp
+  void finite_range();
   void summation();
   [[nodiscard]] Formula range_sum(const proof::RangeStep& step);
   void pieces();
+  /// `F(n,k) = ...`, for several products with names for each: `F_1(n,k) + F_2(n,k)`, where ...
+  void parts(char letter, const Formula& name, const std::vector<proof::Product>& products);
   [[nodiscard]] std::string vanishing_clause(const proof::Vanishing& vanishing);
+
+  // latex_without_index.cpp
+  /// The recurrence is S(n) = ... itself: no coefficients are written.
+  [[nodiscard]] bool without_coefficients() const;
+  void single_term();
 
   // latex_conclusion.cpp: ends, closed form, leading coefficient, initial values
   void ends();
   void closed_form();
   /// `at`: the literal n of an initial value.
-  void balance(const proof::Balance& balance, std::optional<long> at = std::nullopt);
+  /// `place`: the beginning of its keys in obligations.txt.
+  void balance(const proof::Balance& balance, const std::string& place = "",
+               std::optional<long> at = std::nullopt);
   void balance_zeros(const proof::Balance& balance, std::optional<long> at);
-  void balance_group(const proof::Balance& balance, const proof::BalanceGroup& group,
+  /// The class `position` of similar terms; `place` is where obligations.txt has it.
+  void balance_group(const proof::Balance& balance, std::size_t position, const std::string& place,
                      std::optional<long> at);
   [[nodiscard]] Formula term_label(const proof::BalanceTerm& term, std::optional<long> at);
   [[nodiscard]] std::string zero_reason(const proof::BalanceTerm& term);
@@ -66,9 +85,13 @@ class LatexDocument {
   // small things
   void head(const std::string& title);
   void say(const std::string& text) { out_ += text; }
-  /// `text` as a paragraph of its own in typewriter type, for what no formula can hold.
-  void code_paragraph(const std::string& text);
+  /// Says once where the terms are that dots stand for, when there have been any.
+  void explain_dots();
+  /// `text` as a paragraph of its own in typewriter type, for what no formula can hold; with the
+  /// number of an equation when there is a label.
+  void code_paragraph(const std::string& text, const std::string& label = "");
   [[nodiscard]] std::string label(const std::string& name) const { return prefix_ + name; }
+  [[nodiscard]] std::string coefficient(std::size_t i) const;  ///< `a_{1}(n)`
   [[nodiscard]] std::string reference(const std::string& name) const;
   [[nodiscard]] std::string running(long shift) const;  ///< `n+1`
   /// `F(n+1,k)`, the index shifted by `index_shift`; without an index when there is none.
@@ -82,6 +105,9 @@ class LatexDocument {
   [[nodiscard]] Formula right_side();
   [[nodiscard]] bool recurrence_is_short();
   [[nodiscard]] bool weight_is_one() const;
+  /// a_i(n), when it is known as a polynomial or can be printed as the claim has it.
+  [[nodiscard]] std::optional<Formula> coefficient_value(std::size_t i);
+  [[nodiscard]] bool coefficients_printable();
 
   const proof::Proof& proof_;
   const claim::Claim& claim_;
@@ -90,6 +116,8 @@ class LatexDocument {
   LatexNames names_;
   LatexValues values_;
   LatexExpressions expressions_;
+  std::size_t bases_ = 0;  ///< base terms E_1, E_2, ... of classes of similar terms so far
+  bool dots_explained_ = false;
   std::string out_;
 };
 

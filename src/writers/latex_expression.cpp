@@ -17,16 +17,10 @@ namespace {
 using claim::Expression;
 using claim::Operation;
 
-constexpr double kPlus = 1.25;
 constexpr double kScript = 0.75;
 constexpr double kWidestFraction = 20;
 constexpr std::size_t kLongest = 3000;  // characters of an expression set as a formula
 constexpr std::size_t kDeepest = 40;    // braces inside one another; TeX has 255 group levels
-
-[[nodiscard]] bool starts_with_digit(const Formula& formula) {
-  const std::string tex = inline_tex(formula);
-  return !tex.empty() && tex[0] >= '0' && tex[0] <= '9';
-}
 
 [[nodiscard]] std::size_t deepest_brace(const std::string& tex) {
   std::size_t depth = 0;
@@ -36,10 +30,6 @@ constexpr std::size_t kDeepest = 40;    // braces inside one another; TeX has 25
     if (c == '}' && depth > 0) --depth;
   }
   return most;
-}
-
-[[nodiscard]] Formula single(const Formula& formula) {
-  return piece(inline_tex(formula), width_of(formula));
 }
 
 }  // namespace
@@ -67,51 +57,39 @@ ExpressionFormula LatexExpressions::quotient(const Expression& expression) const
     const bool negative = starts_with_minus(factor);  // of a product: of the whole fraction
     if (negative) factor.front().tex.erase(0, 1);
     out.tall = true;
-    out.formula =
-        piece(std::string(negative ? "-" : "") + "\\frac{1}{" + inline_tex(below) + "}\\,",
-              width_of(below) + 1.4);
-    if (starts_with_digit(factor)) prepend_tex(factor, "\\cdot ", 0.8);
-    append(out.formula, factor, 1);
+    out.formula = piece(std::string(negative ? "-" : "") + "\\frac{1}{" + inline_tex(below) + "}",
+                        width_of(below) + 1.2);
+    multiply(out.formula, factor, true);
     return out;
   }
+  out.strength = Strength::quotient;
   out.formula = factor;
-  append_tex(out.formula, "\\,\\big/", 0.8);
-  append(out.formula, bracketed(below), 1);
+  divide(out.formula, bracketed(below));
   return out;
 }
 
 ExpressionFormula LatexExpressions::binary(const Expression& expression) const {
-  const Expression& u = *expression.children[0];
-  const Expression& v = *expression.children[1];
-  ExpressionFormula out;
   if (expression.operation == Operation::divide) return quotient(expression);
   const bool product = expression.operation == Operation::multiply;
-  const ExpressionFormula left = print(u);
-  ExpressionFormula right = print(v);
+  const ExpressionFormula left = print(*expression.children[0]);
+  const ExpressionFormula right = print(*expression.children[1]);
+  ExpressionFormula out;
   out.tall = left.tall || right.tall;
   out.strength = product ? Strength::product : Strength::sum;
   out.formula = left.strength >= out.strength ? left.formula : bracketed(left.formula, left.tall);
-  const bool negative = starts_with_minus(right.formula);
-  const Strength needed = product ? Strength::signed_product : Strength::product;
-  const bool fraction = v.operation == Operation::divide;
-  if ((right.strength < needed && !(product && fraction)) || negative) {
-    right.formula = bracketed(right.formula, right.tall);
+  const bool fraction = expression.children[1]->operation == Operation::divide;
+  const Strength needed = !product   ? Strength::quotient
+                          : fraction ? Strength::product
+                                     : Strength::signed_product;
+  const bool brackets = right.strength < needed || starts_with_minus(right.formula);
+  const Formula second = brackets ? bracketed(right.formula, right.tall) : right.formula;
+  if (product) {
+    multiply(out.formula, second, out.tall);
+  } else if (expression.operation == Operation::add) {
+    append_term(out.formula, second);
+  } else {
+    subtract(out.formula, second);
   }
-  if (!product) {
-    const bool plus = expression.operation == Operation::add;
-    prepend_tex(right.formula, plus ? "+" : "-", kPlus);
-    right.formula.front().product = false;
-    append(out.formula, right.formula);
-    return out;
-  }
-  if (starts_with_digit(right.formula)) {
-    prepend_tex(right.formula, "\\cdot ", 0.8);
-  } else if (out.tall ||
-             (u.operation == Operation::symbol && inline_tex(left.formula).starts_with("\\math"))) {
-    prepend_tex(right.formula, "\\,", 0.2);
-  }
-  right.formula.front().product = true;
-  append(out.formula, right.formula, 1);
   return out;
 }
 
@@ -139,14 +117,14 @@ ExpressionFormula LatexExpressions::call(const Expression& expression) const {
                         std::max(width_of(above), width_of(below)) + 1.5);
     out.tall = true;
   } else if (expression.name == "factorial") {
-    out.formula = single(at_least(u, Strength::primary));
+    out.formula = unbroken(at_least(u, Strength::primary));
     append_tex(out.formula, "!", 0.3);
     if (u.operation == Operation::call && u.name == "factorial") {
       out.formula = piece("(" + inline_tex(formula(u)) + ")!", width_of(formula(u)) + 1.1);
     }
   } else if (expression.name == "rising" || expression.name == "falling") {
     const bool nested = u.operation == Operation::call && u.name != "binomial";
-    out.formula = single(nested ? bracketed(formula(u)) : at_least(u, Strength::primary));
+    out.formula = unbroken(nested ? bracketed(formula(u)) : at_least(u, Strength::primary));
     const Formula length = formula(*expression.children[1]);
     const std::string line = expression.name == "rising" ? "\\overline" : "\\underline";
     append_tex(out.formula, "^{" + line + "{" + inline_tex(length) + "}}",
@@ -164,7 +142,7 @@ ExpressionFormula LatexExpressions::call(const Expression& expression) const {
     const std::string name = expression.name == "min" || expression.name == "max"
                                  ? "\\" + expression.name
                                  : "\\mathrm{" + latex_text(expression.name) + "}";
-    out.formula = single(bracketed(inside));
+    out.formula = unbroken(bracketed(inside));
     prepend_tex(out.formula, name, 2);
   }
   return out;
@@ -202,7 +180,7 @@ ExpressionFormula LatexExpressions::print(const Expression& expression) const {
 
 Formula LatexExpressions::formula(const Expression& expression, bool as_factor) const {
   const ExpressionFormula printed = print(expression);
-  if (!as_factor || printed.strength != Strength::sum) return printed.formula;
+  if (!as_factor || printed.strength >= Strength::product) return printed.formula;
   return bracketed(printed.formula, printed.tall);
 }
 

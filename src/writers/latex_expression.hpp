@@ -11,18 +11,18 @@
 
 namespace sumwright::writers {
 
-/// How tightly a formula holds together: decides where brackets are needed.
-enum class Strength { sum, product, signed_product, power, primary };
+/// How tightly a formula holds together: decides where brackets are needed. A quotient is one in a
+/// row, with a stroke.
+enum class Strength { sum, quotient, product, signed_product, power, primary };
 
 struct ExpressionFormula {
   Formula formula;
   Strength strength = Strength::primary;
-  bool tall = false;          ///< contains fractions or binomials
-  bool fraction_end = false;  ///< starts with a digit when it is placed behind a factor
+  bool tall = false;  ///< contains fractions or binomials
 };
 
 /// Prints parse trees node by node. Expressions that are too long or too deep for a page are the
-/// caller's business: see `printable_size`.
+/// caller's business: see `fits`.
 class LatexExpressions {
  public:
   explicit LatexExpressions(const LatexNames& names) : names_(names) {}

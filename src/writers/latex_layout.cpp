@@ -16,6 +16,23 @@ constexpr double kRelation = 1.4;
 constexpr double kIndent = 2.2;          // continuation lines: \quad, and a sign
 constexpr double kShortLeft = 9.0;       // left sides up to this width align what follows
 constexpr std::size_t kPageBreaks = 10;  // displays of more lines may be broken over pages
+constexpr double kSign = 1.3;            // a multiplication sign that starts a line
+
+// What a line starts with when it starts at the piece.
+[[nodiscard]] std::string opening(const Piece& piece) {
+  switch (piece.join) {
+    case Join::product:
+      return "{}\\times ";
+    case Join::quotient:
+      return "{}\\big/";
+    default:
+      return "{}";
+  }
+}
+
+[[nodiscard]] double sign_width(const Piece& piece) {
+  return piece.join == Join::product || piece.join == Join::quotient ? kSign : 0;
+}
 
 class LineFiller {
  public:
@@ -36,14 +53,18 @@ class LineFiller {
       std::size_t end = begin + 1;
       while (end < to && formula[end].depth > depth) ++end;
       double width = 0;
-      for (std::size_t i = begin; i < end; ++i) width += formula[i].width;
-      if (width <= left_) {
-        add(formula, begin, end, width);
-      } else if (width <= room_ || end - begin == 1) {
-        if (!line_.empty()) new_line(formula[begin].product);
+      for (std::size_t i = begin; i < end; ++i) {
+        width += formula[i].width + (i == begin ? 0 : formula[i].glue_width);
+      }
+      const double glue = fresh_ ? 0 : formula[begin].glue_width;
+      if (width + glue <= left_) {
+        add(formula, begin, end, width + glue);
+      } else if (width <= room_ - sign_width(formula[begin]) || end - begin == 1) {
+        new_line(formula[begin]);
         add(formula, begin, end, width);
       } else {
-        if (!line_.empty() && left_ < room_ / 3) new_line(formula[begin].product);
+        const bool term = depth == 0 && formula[begin].join == Join::sum;
+        if (term || left_ < room_ / 3) new_line(formula[begin]);
         place(formula, begin, end, depth + 1);
       }
       begin = end;
@@ -51,18 +72,26 @@ class LineFiller {
   }
 
   void add(const Formula& formula, std::size_t begin, std::size_t end, double width) {
-    for (std::size_t i = begin; i < end; ++i) line_ += formula[i].tex;
+    for (std::size_t i = begin; i < end; ++i) {
+      if (!fresh_) line_ += formula[i].glue;
+      line_ += formula[i].tex;
+      fresh_ = false;
+    }
     left_ -= width;
   }
 
-  void new_line(bool product) {
+  // Nothing when a line has just been started.
+  void new_line(const Piece& piece) {
+    if (fresh_) return;
     lines_.push_back(line_);
-    line_ = product ? "{}\\times " : "{}";
-    left_ = room_ - (product ? 1.3 : 0);
+    line_ = opening(piece);
+    left_ = room_ - sign_width(piece);
+    fresh_ = true;
   }
 
   double room_;
   double left_;
+  bool fresh_ = true;  ///< the line has no piece yet
   std::string line_;
   std::vector<std::string> lines_;
 };
@@ -78,8 +107,8 @@ class LineFiller {
   std::vector<std::string> rows;
   const double left_width = width_of(left);
   if (left_width <= kShortLeft && !right.empty()) {
-    LineFiller filler(room - left_width - kRelation, room - left_width - kRelation - kIndent);
-    const auto lines = filler.fill(right);
+    const double own = room - left_width - kRelation;
+    const auto lines = broken_lines(right, own, own - kIndent);
     for (std::size_t i = 0; i < lines.size(); ++i) {
       rows.push_back(i == 0 ? inline_tex(left) + " ={}& " + first_line(lines[i])
                             : "&\\quad " + lines[i]);
@@ -97,7 +126,7 @@ class LineFiller {
   }
   const double inner = room - 2 - kRelation;
   bool first = true;
-  for (const std::string& line : LineFiller(inner, inner - kIndent).fill(right)) {
+  for (const std::string& line : broken_lines(right, inner, inner - kIndent)) {
     rows.push_back((first ? "&\\qquad = " : "&\\qquad\\quad ") + line);
     first = false;
   }
@@ -118,73 +147,16 @@ class LineFiller {
   }
   const std::string environment = numbered ? "align" : "align*";
   std::string text = fmt::format("\\begin{{{0}}}\n{1}\\end{{{0}}}\n", environment, out);
-  if (rows.size() > kPageBreaks) text = "{\\allowdisplaybreaks\n" + text + "}\n";
+  // A blank behind the brace would indent what follows the display.
+  if (rows.size() > kPageBreaks) text = "{\\allowdisplaybreaks\n" + text + "}\\ignorespaces\n";
   return text;
 }
 
 }  // namespace
 
-double width_of(const Formula& formula) {
-  double width = 0;
-  for (const Piece& part : formula) width += part.width;
-  return width;
+std::vector<std::string> broken_lines(const Formula& formula, double first_room, double room) {
+  return LineFiller(first_room, room).fill(formula);
 }
-
-double widest(const Formula& formula) {
-  double width = 0;
-  for (const Piece& part : formula) width = std::max(width, part.width);
-  return width;
-}
-
-std::string inline_tex(const Formula& formula) {
-  std::string out;
-  for (const Piece& part : formula) out += part.tex;
-  return out;
-}
-
-Formula piece(std::string tex, double width) { return {{std::move(tex), width, 0, false}}; }
-
-void append(Formula& out, const Formula& more, int deeper) {
-  for (const Piece& part : more) {
-    out.push_back(part);
-    out.back().depth += deeper;
-  }
-}
-
-void prepend_tex(Formula& formula, const std::string& tex, double width) {
-  if (formula.empty()) formula = piece("", 0);
-  formula.front().tex = tex + formula.front().tex;
-  formula.front().width += width;
-}
-
-void append_tex(Formula& formula, const std::string& tex, double width) {
-  if (formula.empty()) formula = piece("", 0);
-  formula.back().tex += tex;
-  formula.back().width += width;
-}
-
-Formula bracketed(const Formula& formula, bool tall) {
-  if (tall) {
-    return piece("\\left(" + inline_tex(formula) + "\\right)", width_of(formula) + 1.4);
-  }
-  Formula out;
-  append(out, formula, 1);
-  if (!out.empty()) out.front().depth = 0;
-  prepend_tex(out, "(", 0.4);
-  append_tex(out, ")", 0.4);
-  return out;
-}
-
-Formula big_bracketed(const Formula& formula) {
-  Formula out;
-  append(out, formula, 1);
-  if (!out.empty()) out.front().depth = 0;
-  prepend_tex(out, "\\bigl(", 0.5);
-  append_tex(out, "\\bigr)", 0.5);
-  return out;
-}
-
-double digits_width(const std::string& digits) { return 0.52 * static_cast<double>(digits.size()); }
 
 std::string display(const Formula& left, const Formula& right, const std::string& label,
                     const std::string& end) {
@@ -207,7 +179,7 @@ std::string display_list(const std::vector<DisplayRow>& rows, const std::string&
     if (aligned) {
       const double room = kRoom - left - kRelation;
       bool first = true;
-      for (const std::string& line : LineFiller(room, room - kIndent).fill(rows[r].right)) {
+      for (const std::string& line : broken_lines(rows[r].right, room, room - kIndent)) {
         own.push_back(first ? inline_tex(rows[r].left) + " &= " + line : "&\\quad " + line);
         first = false;
       }

@@ -81,9 +81,7 @@ class Scanner {
       if (!text_.substr(at_).starts_with(sign.text)) continue;
       const bool number_before = at_ > 0 && is_digit(text_[at_ - 1]);
       at_ += sign.text.size();
-      if (sign.text == "*" && number_before && at_ < text_.size() && !is_digit(text_[at_])) {
-        return {Token::Kind::math, "", 0, false};
-      }
+      if (sign.text == "*") return times(number_before);
       return {Token::Kind::math, std::string(sign.tex), sign.width, false};
     }
     const bool comma = text_[at_] == ',';
@@ -96,6 +94,20 @@ class Scanner {
               latex_text(text_.substr(at_, length)), 0.4, false};
     at_ += length;
     return out;
+  }
+
+  // A dot between numbers, nothing between a number and a letter.
+  [[nodiscard]] Token times(bool number_before) const {
+    const std::size_t next = std::min(text_.find_first_not_of(' ', at_), text_.size());
+    if (next < text_.size() && is_digit(text_[next])) {
+      return {Token::Kind::math, "\\cdot ", 0.8, false};
+    }
+    std::size_t end = next;
+    while (end < text_.size() && (is_letter(text_[end]) || is_digit(text_[end]))) ++end;
+    const std::string name(text_.substr(next, end - next));
+    const bool word = names_.is_symbol(name) && is_word(names_.symbol(name).tex);
+    if (number_before && !word) return {Token::Kind::math, "", 0, false};
+    return {Token::Kind::math, "\\,", 0.2, false};
   }
 
   static Token math(const std::string& tex) {
@@ -174,9 +186,15 @@ std::string LatexExpressions::mixed(const std::string& text) const {
     if (!math.empty()) out += "$" + math + "$";
     math.clear();
   };
-  for (const Token& token : Scanner(names_, text).scan()) {
+  const std::vector<Token> tokens = Scanner(names_, text).scan();
+  for (std::size_t t = 0; t < tokens.size(); ++t) {
+    const Token& token = tokens[t];
     const bool inside = !math.empty() && depth > 0;
-    if (token.kind == Token::Kind::math) {
+    // Brackets around words are no mathematics.
+    const bool words =
+        math.empty() && (token.tex == ")" || (token.tex == "(" && t + 1 < tokens.size() &&
+                                              tokens[t + 1].kind == Token::Kind::other));
+    if (token.kind == Token::Kind::math && !words) {
       if (math.empty() && token.blank_before && !out.empty()) out += ' ';
       // Two names in a row are a product only where the text says so.
       if (!math.empty() && token.blank_before && is_letter(token.tex[0]) && !math.ends_with(' ') &&

@@ -3,10 +3,11 @@
 
 #include <map>
 #include <string>
+#include <utility>
 #include <vector>
 
 #include "proof/proof.hpp"
-#include "writers/latex_layout.hpp"
+#include "writers/latex_formula.hpp"
 
 namespace sumwright::writers {
 
@@ -20,6 +21,11 @@ class LatexNames {
   [[nodiscard]] bool is_symbol(const std::string& name) const { return symbols_.contains(name); }
   [[nodiscard]] const Piece& symbol(const std::string& name) const { return symbols_.at(name); }
 
+  /// Symbols whose names are too long for formulas, each with the letter that stands for it.
+  [[nodiscard]] const std::vector<std::pair<std::string, std::string>>& replaced() const {
+    return replaced_;
+  }
+
   /// A letter of the argument: S F G R B C E (functions, base terms), a p c d u v b.
   [[nodiscard]] std::string letter(char letter) const;
   /// Variables that no symbol of the claim uses, for conventions: a number, a length.
@@ -28,9 +34,12 @@ class LatexNames {
 
  private:
   void add(const std::string& name);
+  /// A letter for a long name: one of `wanted` if it is free, then others.
+  void replace(const std::string& name, const std::string& wanted);
   [[nodiscard]] bool taken(char letter) const;
 
   std::map<std::string, Piece> symbols_;
+  std::vector<std::pair<std::string, std::string>> replaced_;
   std::string number_;
   std::string length_;
 };

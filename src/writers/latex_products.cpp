@@ -13,7 +13,8 @@ namespace sumwright::writers {
 
 namespace {
 
-constexpr double kScript = 0.75;  // size of exponents
+constexpr double kScript = 0.75;    // size of exponents
+constexpr double kWidestAtom = 16;  // wider ones may be broken
 
 [[nodiscard]] proof::Affine difference(const proof::Affine& a, const proof::Affine& b) {
   proof::Affine out = a;
@@ -62,7 +63,7 @@ Formula LatexValues::interval(const proof::Atom& value) {
     if (!is_zero(low)) append_term(top, affine(low));
     base = bare && value.base_scale == 1 ? top : bracketed(top);
   }
-  Formula out = piece(inline_tex(base), width_of(base));
+  Formula out = width_of(base) > kWidestAtom ? base : unbroken(base);
   const Formula exponent = affine(length);
   append_tex(out, "^{\\overline{" + inline_tex(exponent) + "}}",
              kScript * width_of(exponent) + 0.1);
@@ -76,7 +77,7 @@ Formula LatexValues::power(const proof::Atom& value) {
                     (writers::is_integer(value.base, &number) && number >= 0);
   Formula base = polynomial(value.base);
   if (!bare) base = bracketed(base);
-  Formula out = piece(inline_tex(base), width_of(base));
+  Formula out = width_of(base) > kWidestAtom ? base : unbroken(base);
   const Piece exponent = script("^", affine(value.argument));
   append_tex(out, exponent.tex, exponent.width);
   return out;
@@ -89,7 +90,7 @@ Formula LatexValues::atom(const proof::Atom& value) {
       Formula argument = affine(value.argument);
       if (!is_simple(value.argument)) argument = bracketed(argument);
       append_tex(argument, "!", 0.3);
-      return piece(inline_tex(argument), width_of(argument));
+      return width_of(argument) > kWidestAtom ? argument : unbroken(argument);
     }
     case proof::AtomKind::power:
       return power(value);
@@ -116,52 +117,45 @@ void LatexValues::add_atom(Fraction& out, const proof::Atom& value, unsigned exp
     const std::string text = std::to_string(exponent);
     append_tex(next, "^{" + text + "}", kScript * digits_width(text));
   }
-  Formula& side = below ? out.below : out.above;
-  if (!side.empty() && !reciprocal) append_tex(side, "\\,", 0.2);
-  append(side, next);
-  side.back().product = true;
+  multiply(below ? out.below : out.above, next, true);
 }
 
 Formula LatexValues::product(const proof::Product& value) {
   if (value.coefficient.constant == 0) return piece("0", 0.52);
+  if (value.atoms.empty()) return factored(value.coefficient);
   Fraction fraction;
   for (const auto& [atom, exponent] : value.atoms) add_atom(fraction, atom, exponent);
   const bool alone =
       value.atoms.size() == 1 || (value.atoms.size() == 2 && !fraction.above.empty());
   for (const auto& [atom, exponent] : value.atoms) {  // a sum alone below needs no brackets
     if (alone && exponent == 1 && atom.kind == proof::AtomKind::reciprocal) {
-      const Formula sum = polynomial(atom.base);
-      fraction.below = piece(inline_tex(sum), width_of(sum));
+      fraction.below = unbroken(polynomial(atom.base));
     }
   }
+  proof::Factored coefficient = value.coefficient;
+  coefficient.constant = abs(coefficient.constant);
   Formula out;
-  const bool unit = value.coefficient.factors.empty() && abs(value.coefficient.constant) == 1;
-  if (!unit || value.atoms.empty()) {
-    out = factored(value.coefficient, value.atoms.empty());
-    if (value.atoms.empty()) return out;
-  } else if (value.coefficient.constant < 0) {
-    out = piece("-", 0.8);
+  if (fraction.above.empty() && coefficient.constant.get_den() == 1) {
+    fraction.above = factored(coefficient);  // one fraction
+  } else {
+    if (fraction.above.empty()) fraction.above = piece("1", 0.52);
+    if (coefficient.constant != 1 || !coefficient.factors.empty()) {
+      out = factored(coefficient, false);
+    }
   }
-  if (fraction.below.empty()) {
-    Formula above = fraction.above;
-    if (!out.empty() && !unit) prepend_tex(above, "\\cdot ", 0.8);
-    append(out, above);
-    return out;
-  }
-  if (fraction.above.empty()) fraction.above = piece("1", 0.52);
   const double width = std::max(width_of(fraction.above), width_of(fraction.below)) + 0.4;
-  if (width <= kNumberedRoom - 9) {
-    if (!out.empty() && !unit) append_tex(out, "\\,", 0.2);
-    append(out,
-           piece("\\frac{" + inline_tex(fraction.above) + "}{" + inline_tex(fraction.below) + "}",
-                 width));
-    return out;
+  if (fraction.below.empty()) {
+    multiply(out, fraction.above);
+  } else if (width <= kNumberedRoom - 9) {
+    multiply(out,
+             piece("\\frac{" + inline_tex(fraction.above) + "}{" + inline_tex(fraction.below) + "}",
+                   width),
+             true);
+  } else {  // too wide for a bar
+    multiply(out, out.empty() && is_sum(coefficient) ? bracketed(fraction.above) : fraction.above);
+    divide(out, bracketed(fraction.below));
   }
-  Formula wide = fraction.above;  // too wide for a bar
-  append_tex(wide, "\\,\\bigm/", 1);
-  append(wide, bracketed(fraction.below), 0);
-  if (!out.empty() && !unit) prepend_tex(wide, "\\cdot ", 0.8);
-  append(out, wide);
+  if (value.coefficient.constant < 0) prepend_tex(out, "-", 0.8);
   return out;
 }
 

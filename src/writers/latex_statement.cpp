@@ -102,6 +102,17 @@ std::string LatexDocument::hypotheses() const {
   return out + (out.empty() ? "For " : "Then, for ") + range;
 }
 
+// Before the theorem, which uses the letters.
+void LatexDocument::long_names() {
+  if (names_.replaced().empty()) return;
+  std::vector<std::string> letters;
+  for (const auto& [name, letter] : names_.replaced()) {
+    letters.push_back("$" + letter + "$ for " + latex_code(name));
+  }
+  say("{\\raggedright In formulas we write " + enumeration(letters) +
+      ", the names in the claim file.\\par}\n\n");
+}
+
 void LatexDocument::theorem() {
   say("\\begin{sumwrighttheorem}\\sloppy\n" + hypotheses());
   statement_display();
@@ -111,9 +122,10 @@ void LatexDocument::theorem() {
 void LatexDocument::statement_display() {
   const bool fits = expressions_.fits(*claim_.sum.summand);
   const bool right_fits = !claim_.closed || expressions_.fits(*claim_.closed);
-  if (!fits || !right_fits) {
+  const bool symbolic = !claim_.is_equality() && !recurrence_is_short();
+  if (!fits || !right_fits || (symbolic && !coefficients_printable())) {
     say(", with the notation of the claim file,\n");
-    code_paragraph(statement_text(proof_));
+    code_paragraph(statement_text(proof_), label("claim"));
     return;
   }
   const Formula sum = expressions_.sum(claim_.sum);
@@ -124,14 +136,13 @@ void LatexDocument::statement_display() {
     say(display(sum, right, label("claim"), "."));
     return;
   }
-  say(fmt::format(", the sums\n{}satisfy the recurrence\n",
+  say(fmt::format(", the {}\n{}satisfy the recurrence\n", has_index() ? "sums" : "terms",
                   display(of_running('S', 0), sum, label("sum"), "")));
-  const bool symbolic = !recurrence_is_short();
   say(display(recurrence_left(symbolic), right_side(), label("claim"), symbolic ? "," : "."));
   const bool right_named = inline_tex(right_side()) == inline_tex(of_running('b', 0));
   if (symbolic) {
     say("where\n");
-    coefficient_list();
+    coefficient_list(false);
   }
   if (right_named) {
     say("Here $" + inline_tex(of_running('b', 0)) + "$ is, as in a claim file,\n");
@@ -146,21 +157,16 @@ Formula LatexDocument::recurrence_left(bool symbolic) {
   for (std::size_t i = 0; i < proof_.recurrence_text.size(); ++i) {
     const std::string& text = proof_.recurrence_text[i];
     if (text == "0") continue;
-    Formula term;
+    Formula factor;
     if (symbolic) {
-      term = piece(fmt::format("{}_{{{}}}({})\\,", names_.letter('a'), i, running(0)), 3);
-    } else if (text == "-1") {
-      term = piece("-", 0.8);
-    } else if (text != "1") {
+      factor = piece(coefficient(i), 3);
+    } else {
       const auto printed = expressions_.parsed(text, symbol_names());
-      term = !printed                             ? piece("", 100 * kRoom)  // not on a page
-             : printed->strength == Strength::sum ? bracketed(printed->formula, printed->tall)
-                                                  : printed->formula;
-      append_tex(term, "\\,", 0.2);
+      factor = !printed                                ? piece("", 100 * kRoom)  // not on a page
+               : printed->strength < Strength::product ? bracketed(printed->formula, printed->tall)
+                                                       : printed->formula;
     }
-    const Formula value = of_running('S', static_cast<long>(i));
-    append_tex(term, inline_tex(value), width_of(value));
-    append_term(out, term);
+    append_term(out, of_function(factor, of_running('S', static_cast<long>(i))));
   }
   return out;
 }

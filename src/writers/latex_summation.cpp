@@ -47,6 +47,28 @@ Formula LatexDocument::range_sum(const proof::RangeStep& step) {
   return out;
 }
 
+/// Why a sum over an infinite range is one of finitely many terms.
+void LatexDocument::finite_range() {
+  if (!proof_.finite_range) return;
+  const proof::FiniteRange& finite = *proof_.finite_range;
+  const std::string f = inline_tex(at('F', 0));
+  const std::string k = names_.symbol(proof_.symbols[1].name).tex;
+  const auto clause = [&](const std::optional<proof::Vanishing>& vanishing, const char* relation,
+                          const claim::Bound& bound) {
+    if (!vanishing) return;
+    say(fmt::format("For ${}{}{}$ we have ${}=0$, {}.\n", k, relation,
+                    inline_tex(expressions_.formula(*bound.value)), f,
+                    vanishing_clause(*vanishing)));
+  };
+  clause(finite.below, "<", finite.range.low);
+  clause(finite.above, ">", finite.range.high);
+  say(
+      fmt::format("The sum over the infinite range therefore has only finitely many terms that are "
+                  "not $0$, and is the sum over ${}\\le {}\\le {}$.\n\n",
+                  inline_tex(expressions_.formula(*finite.range.low.value)), k,
+                  inline_tex(expressions_.formula(*finite.range.high.value))));
+}
+
 void LatexDocument::summation() {
   if (!proof_.telescoping || proof_.ranges.empty()) return;
   const proof::Telescoping& t = *proof_.telescoping;
@@ -54,6 +76,7 @@ void LatexDocument::summation() {
   proof::Affine beyond = t.high;
   ++beyond.constant;
   head("Summation");
+  finite_range();
   say(fmt::format(
       "Let ${}\\ge {}$ and sum {} over ${}\\le {}\\le {}$. The right side telescopes to "
       "${}({},{})-{}({},{})$. For the left side,\n",
@@ -76,9 +99,9 @@ void LatexDocument::summation() {
   }
   say(display_list(rows, "."));
   if (reasons.empty()) return;
-  say("The claim's own ends and these differ by terms that "
-      "vanish:\n\\begin{itemize}\\raggedright\n" +
-      reasons + "\\end{itemize}\n");
+  say(std::string(proof_.finite_range ? "Those ends" : "The claim's own ends") +
+      " and these differ by terms that vanish:\n\\begin{itemize}\\raggedright\n" + reasons +
+      "\\end{itemize}\n");
 }
 
 }  // namespace sumwright::writers

@@ -15,9 +15,8 @@ namespace sumwright::writers {
 
 namespace {
 
-constexpr double kPlus = 1.25;       // a binary sign with its spaces
 constexpr double kScript = 0.75;     // size of exponents
-constexpr double kWholePage = 1300;  // em on one page
+constexpr double kLongest = 700;     // em of one polynomial: most of a page
 constexpr double kShort = 100;       // polynomials below are always shown
 constexpr std::size_t kDigits = 24;  // digits kept together
 
@@ -30,29 +29,18 @@ constexpr std::size_t kDigits = 24;  // digits kept together
   return 0;
 }
 
+[[nodiscard]] bool shorter(const std::string& a, const std::string& b) {
+  return a.size() < b.size();
+}
+
 }  // namespace
-
-bool starts_with_minus(const Formula& formula) {
-  return !formula.empty() && !formula.front().tex.empty() && formula.front().tex[0] == '-';
-}
-
-void append_term(Formula& out, const Formula& more) {
-  Formula term = more;
-  if (!term.empty()) term.front().product = false;
-  if (!out.empty() && !starts_with_minus(term)) prepend_tex(term, "+", kPlus);
-  append(out, term);
-}
-
-Piece script(const std::string& mark, const Formula& formula) {
-  return {mark + "{" + inline_tex(formula) + "}", kScript * width_of(formula) + 0.05, 0, false};
-}
 
 Formula integer_formula(const mpz_class& value) {
   const std::string digits = value.get_str();
   Formula out;
   for (std::size_t at = 0; at < digits.size(); at += kDigits) {
     const std::string part = digits.substr(at, kDigits);
-    out.push_back({part, digits_width(part), at == 0 ? 0 : 9, false});
+    out.push_back({part, digits_width(part), at == 0 ? 0 : 9});
   }
   return out;
 }
@@ -60,28 +48,27 @@ Formula integer_formula(const mpz_class& value) {
 Piece LatexValues::symbol(std::size_t position) const {
   const std::string& name = symbols_[position].name;
   if (names_.is_symbol(name)) return names_.symbol(name);
-  return {"\\mathit{?}", 1, 0, false};
+  return {"\\mathit{?}", 1};
 }
 
 Formula LatexValues::monomial(const proof::Monomial& value) const {
   Formula out;
   bool powers = false;
   for (const unsigned long e : value.exponents) powers = powers || e != 0;
-  if (!powers || abs(value.coefficient) != 1) {
-    out = integer_formula(value.coefficient);
-  } else if (value.coefficient < 0) {
-    out = piece("-", 0.8);
-  } else {
-    out = piece("", 0);
-  }
+  const bool written = !powers || abs(value.coefficient) != 1;
+  if (written) out = integer_formula(abs(value.coefficient));
+  bool word = false;  // what stands last is one
   for (std::size_t i = 0; i < value.exponents.size(); ++i) {
     if (value.exponents[i] == 0) continue;
     const Piece name = symbol(i);
+    if (!out.empty() && (word || is_word(name.tex))) append_tex(out, "\\,", 0.2);
+    word = is_word(name.tex);
     append_tex(out, name.tex, name.width);
     if (value.exponents[i] == 1) continue;
     const std::string exponent = std::to_string(value.exponents[i]);
     append_tex(out, "^{" + exponent + "}", kScript * digits_width(exponent));
   }
+  if (value.coefficient < 0) prepend_tex(out, "-", 0.8);
   return out;
 }
 
@@ -91,7 +78,7 @@ Formula LatexValues::shortened(const proof::Polynomial& value) const {
   Formula out;
   for (std::size_t i = 0; i < value.terms.size(); ++i) {
     if (i >= kFirst && i + kLast < value.terms.size()) continue;
-    if (i + kLast == value.terms.size()) append(out, piece("+\\cdots", 2.5));
+    if (i + kLast == value.terms.size()) append_term(out, piece("\\cdots", 1.3));
     append_term(out, monomial(value.terms[i]));
   }
   return out;
@@ -106,7 +93,7 @@ Formula LatexValues::polynomial(const proof::Polynomial& value) {
   }
   const double width = width_of(out);
   if (width <= kShort || value.terms.size() <= 8) return out;
-  if (width > std::min(kWholePage, room_)) {
+  if (width > std::min(kLongest, room_)) {
     ++abbreviated_;
     return shortened(value);
   }
@@ -118,10 +105,11 @@ Formula LatexValues::affine(const proof::Affine& value) const {
   Formula out;
   const auto add = [&](long c, std::size_t position) {
     const Piece name = symbol(position);
-    Formula term = c == 1    ? piece("", 0)
-                   : c == -1 ? piece("-", 0.8)
-                             : integer_formula(mpz_class(c));
+    Formula term;
+    if (c != 1 && c != -1) term = integer_formula(abs(mpz_class(c)));
+    if (!term.empty() && is_word(name.tex)) append_tex(term, "\\,", 0.2);
     append_tex(term, name.tex, name.width);
+    if (c < 0) prepend_tex(term, "-", 0.8);
     append_term(out, term);
   };
   // Positive parts first, so that 1 - k does not start with a sign.
@@ -144,13 +132,14 @@ Formula LatexValues::affine(const proof::Affine& value) const {
 
 Formula LatexValues::factor(const proof::Polynomial& base, long exponent) {
   std::size_t which = 0;
-  Formula out =
-      writers::is_symbol(base, &which) ? Formula{symbol(which)} : bracketed(polynomial(base));
+  const bool single = base.terms.size() == 1 && base.terms[0].coefficient > 0 && exponent == 1;
+  Formula out = writers::is_symbol(base, &which) ? Formula{symbol(which)}
+                : single                         ? monomial(base.terms[0])
+                                                 : bracketed(polynomial(base));
   if (exponent != 1) {
     const std::string text = std::to_string(exponent);
     append_tex(out, "^{" + text + "}", kScript * digits_width(text));
   }
-  out.front().product = true;
   return out;
 }
 
@@ -163,36 +152,22 @@ Formula LatexValues::factored(const proof::Factored& value, bool as_sum) {
   if (value.constant == 0) return piece("0", 0.52);
   if (as_sum && is_sum(value) && value.constant == 1) return polynomial(value.factors[0].first);
   Formula out;
-  const mpz_class& numerator = value.constant.get_num();
-  if (value.constant.get_den() != 1) {
-    const mpz_class absolute = abs(numerator);
-    const std::string text = fmt::format("{}\\tfrac{{{}}}{{{}}}", numerator < 0 ? "-" : "",
-                                         absolute.get_str(), value.constant.get_den().get_str());
-    out = piece(text, digits_width(absolute.get_str()) + 1);
-  } else if (value.factors.empty() || abs(numerator) != 1) {
+  const mpz_class numerator = abs(value.constant.get_num());
+  const std::string denominator = value.constant.get_den().get_str();
+  if (denominator != "1") {
+    out = piece("\\tfrac{" + numerator.get_str() + "}{" + denominator + "}",
+                0.75 * digits_width(std::max(numerator.get_str(), denominator, shorter)) + 0.5);
+  } else if (value.factors.empty() || numerator != 1) {
     out = integer_formula(numerator);
-  } else {
-    out = piece(numerator < 0 ? "-" : "", numerator < 0 ? 0.8 : 0);
   }
-  bool first = true;
   for (const auto& [base, exponent] : value.factors) {
-    Formula next = factor(base, exponent);
-    if (first) {  // the coefficient stays with the first factor
-      prepend_tex(next, inline_tex(out), width_of(out));
-      if (widest(out) < width_of(out)) {
-        next = factor(base, exponent);
-        append(out, next, 1);
-        next = out;
-      }
-      out = next;
-      first = false;
+    if (out.size() == 1 && &base == &value.factors.front().first) {
+      out = held(out, factor(base, exponent));  // the coefficient stays with the first factor
     } else {
-      append(out, next, 1);
-      for (std::size_t i = out.size() - next.size(); i < out.size(); ++i) {
-        if (i > out.size() - next.size()) ++out[i].depth;
-      }
+      multiply(out, factor(base, exponent));
     }
   }
+  if (value.constant < 0) prepend_tex(out, "-", 0.8);
   return out;
 }
 

@@ -48,20 +48,11 @@ class LatexValues {
 
   const std::vector<proof::Symbol>& symbols_;
   const LatexNames& names_;
-  double room_ = 3400;  ///< em of long polynomials still to be shown in full: about three pages
+  double room_ = 2000;  ///< em of long polynomials still to be shown in full: about three pages
   std::size_t abbreviated_ = 0;
 };
 
 /// An integer; long ones in pieces between which lines may be broken.
 [[nodiscard]] Formula integer_formula(const mpz_class& value);
-
-/// `more` as a further term of the sum `out`: with a plus sign unless it has a minus sign.
-void append_term(Formula& out, const Formula& more);
-
-/// Whether the formula starts with a minus sign.
-[[nodiscard]] bool starts_with_minus(const Formula& formula);
-
-/// `formula` as an exponent or index: `^{...}`.
-[[nodiscard]] Piece script(const std::string& mark, const Formula& formula);
 
 }  // namespace sumwright::writers

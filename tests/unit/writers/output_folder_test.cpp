@@ -99,6 +99,25 @@ TEST_F(OutputFolder, RefusesAFileWhereTheFolderShouldBe) {
   EXPECT_EQ(all(), (std::set<std::string>{"out"}));
 }
 
+// An existing folder may be a volume of its own: nothing is staged outside of it.
+TEST_F(OutputFolder, AnExistingFolderIsAllThatIsNeeded) {
+  class Spy : public FileSink {
+   public:
+    void write(const fs::path& path, const std::string& text) override {
+      places.push_back(path.parent_path().parent_path());
+      FileSink::write(path, text);
+    }
+    std::vector<fs::path> places;
+  };
+  Spy sink;
+  write_folder(root_ / "out", {{"a", "x"}}, sink);
+  EXPECT_EQ(sink.places.back(), root_);
+  write_folder(root_ / "out", {{"a", "y"}}, sink);
+  EXPECT_EQ(sink.places.back(), root_ / "out");
+  EXPECT_EQ(read(root_ / "out/a"), "y");
+  EXPECT_EQ(all(), (std::set<std::string>{"out", "out/a"}));
+}
+
 // /dev/full takes the place of the disk: opening works, the bytes do not arrive.
 class FullDisk : public FileSink {
  public:

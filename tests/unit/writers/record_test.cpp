@@ -45,7 +45,35 @@ TEST(Record, Refuted) {
   EXPECT_EQ(json["subject"], "evidence");
   EXPECT_EQ(json["counterexample"]["values"]["k"], "1/2");
   EXPECT_EQ(json["counterexample"]["left"], "1/3");
+  EXPECT_FALSE(json.contains("recurrence"));  // that name is kept for what is proved
   EXPECT_TRUE(json["reason"].get<std::string>().starts_with("the \"certificate\"\nis wrong "));
+}
+
+// While nothing is proved, the statement is the author's.
+TEST(Record, UndecidedStatesWhatTheAuthorWrote) {
+  const std::string sum =
+      "format = 1\ntitle = \"t\"\nrunning = \"n\"\nfrom = 0\n[sum]\nsummand = \"n*k\"\n"
+      "over = [ { index = \"k\", low = \"0\", high = \"n\" } ]\n";
+  proof::Proof question = fixture::bare(sum);
+  question.recurrence_text = {"n", "1"};
+  question.right_side_text = "n^3";
+  auto json = nlohmann::ordered_json::parse(record_json(question, {}));
+  EXPECT_EQ(json["claim"]["kind"], "question");
+  EXPECT_EQ(json["claim"]["statement"],
+            "a recurrence for S(n) = sum(k = 0..n, n*k) for every integer n >= 0");
+  EXPECT_EQ(json["candidate"].dump(), R"({"order":1,"brought":false,"coefficients":["n","1"]})");
+
+  proof::Proof claimed =
+      fixture::bare(sum + "[evidence]\nrecurrence = [\"n/2\", \"1\"]\nright_side = \"n + 1\"\n");
+  claimed.symbols = {{"n", proof::SymbolKind::running}};
+  claimed.recurrence_text = {"n", "2"};  // as the work has it
+  claimed.right_side_text = "0";
+  json = nlohmann::ordered_json::parse(record_json(claimed, {}));
+  EXPECT_EQ(json["claim"]["statement"],
+            "n/2*S(n) + S(n + 1) = n + 1 for every integer n >= 0, where S(n) = sum(k = "
+            "0..n, n*k)");
+  EXPECT_EQ(json["candidate"].dump(),
+            R"({"order":1,"brought":true,"coefficients":["n/2","1"],"right_side":"n + 1"})");
 }
 
 }  // namespace
