@@ -8,7 +8,7 @@
 #include <set>
 
 #include "claim/affine.hpp"
-#include "term/conversion.hpp"
+#include "term/contradiction.hpp"
 
 namespace sumwright::term {
 
@@ -57,31 +57,6 @@ long checked_long(const Setting& setting, const mpz_class& value, claim::Place p
   if (!value.fits_slong_p())
     throw claim::InputError(*setting.claim->source, place, "this number is too large");
   return value.get_si();
-}
-
-void refuse_contradiction(const Setting& setting) {
-  const claim::Claim& claim = *setting.claim;
-  for (const claim::Assumption& a : claim.assumptions) {
-    if (a.comparison != Comparison::not_equal) continue;
-    if (!a.over_integers) {
-      const auto left = to_rational_function(setting, *a.left);
-      const auto right = to_rational_function(setting, *a.right);
-      if (left && right && *left == *right)
-        throw claim::InputError(*claim.source, a.place, "no values satisfy this condition",
-                                "a claim about nothing is refused");
-      continue;
-    }
-    const Affine difference = to_affine(setting, *a.left) - to_affine(setting, *a.right);
-    if (setting.from(checked_long(setting, claim.from, {})).implies_zero(difference))
-      throw claim::InputError(*claim.source, a.place, "no values satisfy this condition",
-                              "a claim about nothing is refused");
-  }
-  if (!setting.from(checked_long(setting, claim.from, {})).contradictory()) return;
-  const claim::Place place =
-      claim.assumptions.empty() ? claim::Place{} : claim.assumptions.back().place;
-  throw claim::InputError(*claim.source, place,
-                          "no values satisfy the conditions between the parameters",
-                          "a claim about nothing is refused");
 }
 
 std::vector<Conjunction> combine(const std::vector<Conjunction>& a,
