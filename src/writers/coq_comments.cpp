@@ -7,6 +7,7 @@
 
 #include <cctype>
 
+#include "claim/text.hpp"
 #include "writers/claim_text.hpp"
 #include "writers/coq_sections.hpp"
 #include "writers/coq_statement.hpp"
@@ -146,7 +147,7 @@ class Legend {
 std::string comment_text(const std::string& text) {
   // Nothing in a comment may end it or open another, nor look like a string.
   std::string out;
-  for (const char ch : text) {
+  for (const char ch : claim::printable(text)) {  // no mark that changes the direction of writing
     const auto byte = static_cast<unsigned char>(ch);
     const bool plain = ch == ' ' || ch == ',' || ch == '.' || ch == '-' || ch == ':' || ch == '=' ||
                        ch == '+' || ch == '^' || std::isalnum(byte) != 0 || byte >= 0x80;
@@ -186,12 +187,20 @@ std::string opening_comment(const proof::Proof& proof) {
   for (std::size_t at = statement.find('\n'); at != std::string::npos;
        at = statement.find('\n', at + 1))
     statement.insert(at + 1, "      ");
-  return out + "\n" + renamed(proof) +
-         fmt::format(
-             "    The last two theorems say it: [claim], and [claim_defined], that "
-             "everything in the claim\n    has a value.  Statement.v has the "
-             "definitions.  The statement of [claim] is\n\n      {}. *)\n\n",
-             statement);
+  const char* theorems =
+      proof.finite_range
+          ? "    The last three theorems say it: [claim], where an infinite end of the range "
+            "stands "
+            "for every\n    finite one beyond which all terms are 0; [claim_defined], that "
+            "everything "
+            "in the claim has a\n    value; [claim_support], that there are such ends.  "
+            "Statement.v "
+            "has the definitions.\n    The statement of [claim] is\n\n"
+          : "    The last two theorems say it: [claim], and [claim_defined], that everything in "
+            "the "
+            "claim\n    has a value.  Statement.v has the definitions.  The statement of [claim] "
+            "is\n\n";
+  return out + "\n" + renamed(proof) + theorems + fmt::format("      {}. *)\n\n", statement);
 }
 
 std::string legend(const proof::Proof& proof) { return Legend(proof).run(); }
