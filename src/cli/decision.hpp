@@ -20,6 +20,8 @@ struct Decision {
   proof::Proof proof;
   std::optional<audit::AuditReport> audit;  ///< of an established proof
   std::vector<std::pair<std::string, double>> seconds;
+  /// `find`: a closed form of the sum, proved as a claim of its own; empty when there is none.
+  std::string closed_form = {};
 
   [[nodiscard]] Status status() const;
 };

@@ -10,6 +10,7 @@
 #include "cli/output.hpp"
 #include "cli/report.hpp"
 #include "cli/single_file.hpp"
+#include "proof/closed_form.hpp"
 
 namespace sumwright::cli {
 
@@ -38,6 +39,28 @@ void check_copy(const claim::Source& source, const std::string& text, const Opti
   if (decision.status() != Status::established) {
     throw Fault("the evidence found does not pass when it is read back: " + decision.proof.reason);
   }
+}
+
+/// The closed form that the recurrence suggests, when its equality is proved within the limits.
+[[nodiscard]] std::string proved_closed_form(const proof::Proof& question, const Options& options,
+                                             const Watch& watch, Progress& progress) {
+  const std::optional<std::string> candidate = proof::closed_form_candidate(question);
+  if (!candidate) return "";
+  std::vector<std::string> names{question.claim->running};
+  for (const claim::Parameter& parameter : question.claim->parameters) {
+    names.push_back(parameter.name);
+  }
+  auto equality = std::make_shared<claim::Claim>(*question.claim);
+  try {
+    const claim::Source source{"closed form", *candidate};
+    equality->closed = claim::parse_expression(source, {0, candidate->size()}, names);
+    equality->evidence = {};
+    const Decision decision = decide(equality, options, watch, progress);
+    if (decision.status() != Status::established) return "";
+  } catch (const claim::InputError&) {
+    return "";  // not an expression that a claim may have: nothing to say
+  }
+  return claim::to_text(*equality->closed);
 }
 
 [[nodiscard]] std::string found_text(const claim::Claim& claim, const Decision& decision) {
@@ -75,6 +98,9 @@ Status find(const Options& options) {
     const Watch watch(options);
     Progress progress;
     decision = decide(as_question(*claim), options, watch, progress);
+    if (!claim->is_equality()) {
+      decision.closed_form = proved_closed_form(decision.proof, options, watch, progress);
+    }
     if (options.write && decision.status() == Status::established) {
       copy = with_evidence(*claim->source, evidence_of(decision.proof));
       check_copy(*claim->source, copy, options, watch, progress);

@@ -138,6 +138,9 @@ std::string verdict_text(const Decision& decision) {
   out += line("claim", proof.claim->title);
   out += line("", claimed_text(proof));
   out += recurrence_text(proof);
+  if (!decision.closed_form.empty())
+    out += line("closed form", fmt::format("S({}) = {}, proved as a claim of its own",
+                                           proof.claim->running, decision.closed_form));
   out += line("reason", readable_inequalities(proof.reason));
   if (proof.counterexample) {
     out += line("point", fmt::format("{} fails at {}", proof.counterexample->what,
@@ -187,6 +190,7 @@ std::string decision_json(const Decision& decision) {
           {{"check", finding.check}, {"cases", finding.cases}, {"agrees", finding.agrees}});
     }
   }
+  if (!decision.closed_form.empty()) out["closed_form"] = decision.closed_form;
   out["exit_status"] = static_cast<int>(decision.status());
   return out.dump(2, ' ', false, Json::error_handler_t::replace) + "\n";
 }

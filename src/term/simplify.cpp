@@ -3,6 +3,8 @@
 
 #include "term/simplify.hpp"
 
+#include <algorithm>
+
 namespace sumwright::term {
 
 using algebra::Factored;
@@ -33,6 +35,27 @@ long taken_step(const RingPtr& ring, Factored& rational, const Atom& atom) {
   if (atom.kind != AtomKind::reciprocal_factorial) return 0;
   if (take(rational, next, -1)) return 1;
   return take(rational, atom.argument.polynomial(ring), 1) ? -1 : 0;
+}
+
+/// L!/L! is 1; false when no such pair is there.
+bool cancel_one(Product& product) {
+  for (const auto& [atom, e] : product.atoms) {
+    if (atom.kind != AtomKind::factorial) continue;
+    Atom other = atom;
+    other.kind = AtomKind::reciprocal_factorial;
+    const auto below = std::find_if(product.atoms.begin(), product.atoms.end(),
+                                    [&](const auto& entry) { return entry.first == other; });
+    if (below == product.atoms.end()) continue;
+    const unsigned both = std::min(e, below->second);
+    const Atom above = atom;
+    Product out;
+    out.coefficient = product.coefficient;
+    for (const auto& [one, count] : product.atoms)
+      out.multiply(one, one == above || one == other ? count - both : count);
+    product = std::move(out);
+    return true;
+  }
+  return false;
 }
 
 /// One atom moved by one; false when none can be.
@@ -67,7 +90,7 @@ void simplify(const RingPtr& ring, Factored& rational, Product& product) {
   }
   product = std::move(kept);
   for (int round = 0; round < most_rounds; ++round)
-    if (!move_one(ring, rational, product)) return;
+    if (!cancel_one(product) && !move_one(ring, rational, product)) return;
 }
 
 }  // namespace sumwright::term

@@ -48,7 +48,7 @@ class LatexValues {
 
   const std::vector<proof::Symbol>& symbols_;
   const LatexNames& names_;
-  double room_ = 2000;  ///< em of long polynomials still to be shown in full: about three pages
+  double room_ = 1200;  ///< em of long polynomials still to be shown in full: about two pages
   std::size_t abbreviated_ = 0;
 };
 

@@ -35,6 +35,26 @@ TEST(Find, AnswersAQuestionWithARightSide) {
   EXPECT_EQ(outcome.out.find("one by one"), std::string::npos);
 }
 
+TEST(Find, GivesAClosedFormThatItProved) {
+  const TestFolder folder;
+  folder.write("q.toml",
+               "format = 1\ntitle = \"q\"\nrunning = \"n\"\nfrom = 0\n[sum]\n"
+               "summand = \"binomial(n, k)^2\"\n"
+               "over = [ { index = \"k\", low = 0, high = \"n\" } ]\n");
+  const Outcome text = folder.sumwright({"find", "q.toml"});
+  EXPECT_NE(text.out.find("closed form   S(n) = factorial(2*n)/factorial(n)^2, proved as a claim"),
+            std::string::npos)
+      << text.out;
+  const Outcome json = folder.sumwright({"find", "q.toml", "--json"});
+  EXPECT_NE(json.out.find("\"closed_form\": \"factorial(2*n)/factorial(n)^2\""), std::string::npos)
+      << json.out;
+  folder.write("e.toml",
+               "format = 1\ntitle = \"e\"\nrunning = \"n\"\nfrom = 0\n[sum]\n"
+               "summand = \"binomial(n, k)^3\"\n"
+               "over = [ { index = \"k\", low = 0, high = \"n\" } ]\n");
+  EXPECT_EQ(folder.sumwright({"find", "e.toml"}).out.find("closed form"), std::string::npos);
+}
+
 TEST(Find, NothingWithinTheOrder) {
   const TestFolder folder;
   folder.write("c.toml", squares_claim());

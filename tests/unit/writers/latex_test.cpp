@@ -187,6 +187,9 @@ TEST(Latex, LettersOfTheArgumentAvoidTheClaims) {
   EXPECT_EQ(expressions.mixed("n >= 0, 0 <= a <= 2*n + 1"), "$n\\ge 0$, $0\\le a\\le 2n+1$");
   EXPECT_EQ(expressions.mixed("F(n, n + 1) is kept"), "$\\mathcal{F}(n,n+1)$ is kept");
   EXPECT_EQ(expressions.mixed("x_y > {0}"), "x\\_y $>$ \\{$0$\\}");
+  EXPECT_EQ(expressions.mixed("F(n, n) has 2 point(s) outside"),
+            "$\\mathcal{F}(n,n)$ has $2$ point(s) outside");
+  EXPECT_EQ(expressions.mixed("2*3*a >= 2*n"), "$2\\cdot 3a\\ge 2n$");
   EXPECT_EQ(expressions.mixed("100% \\input{a}").find("\\input"), std::string::npos);
 }
 
