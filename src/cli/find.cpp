@@ -18,6 +18,8 @@ namespace {
 
 namespace fs = std::filesystem;
 
+constexpr std::size_t kLongestClosedForm = 1000;  // characters; a longer one helps nobody
+
 // FILE may be the claim itself when it is written as the claim was; another name for the same file
 // is more likely a mistake.
 void check_target(const Options& options) {
@@ -45,7 +47,7 @@ void check_copy(const claim::Source& source, const std::string& text, const Opti
 [[nodiscard]] std::string proved_closed_form(const proof::Proof& question, const Options& options,
                                              const Watch& watch, Progress& progress) {
   const std::optional<std::string> candidate = proof::closed_form_candidate(question);
-  if (!candidate) return "";
+  if (!candidate || candidate->size() > kLongestClosedForm) return "";
   std::vector<std::string> names{question.claim->running};
   for (const claim::Parameter& parameter : question.claim->parameters) {
     names.push_back(parameter.name);
