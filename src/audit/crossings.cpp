@@ -42,8 +42,8 @@ std::optional<numeric> meeting(const claim::Claim& claim, const Point& base,
   Point at = base;
   return linear_root([&](const numeric& n) {
     at.set(claim.running, n);
-    const Value left = evaluate(u, at);
-    const Value right = evaluate(v, at);
+    Value left = evaluate(u, at);
+    Value right = evaluate(v, at);
     if (!left.exists()) return left;
     if (!right.exists()) return right;
     return Value::of(left.number - right.number);

@@ -338,7 +338,7 @@ class ProductText {
 
 /// b(n)/a_0(n); a single term simplified.
 static std::string quotient(const Proof& question) {
-  const std::string plain =
+  std::string plain =
       fmt::format("({})/({})", question.right_side_text, question.recurrence_text[0]);
   const term::Setting setting = term::make_setting(question.claim);
   const claim::ExpressionPtr& right = question.claim->evidence.right_side;
