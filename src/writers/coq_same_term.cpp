@@ -64,7 +64,7 @@ class Bracketing {
   }
 
   std::string power() {
-    const std::string base = application();
+    std::string base = application();
     if (!next("^")) return base;
     ++at_;
     return "(" + base + "^" + power() + ")";

@@ -264,7 +264,7 @@ std::string end_text(const proof::Proof& proof, bool upper) {
   const claim::Range& r = proof.claim->sum.over[0];
   const claim::Bound& bound = upper ? r.high : r.low;
   if (bound.value) return integer_text(proof, *bound.value);
-  const std::string variable = upper ? kHighEnd : kLowEnd;
+  std::string variable = upper ? kHighEnd : kLowEnd;
   if (proof.claim->is_equality()) return variable;
   return fmt::format("({} {})", variable, name_of(proof.claim->running));
 }

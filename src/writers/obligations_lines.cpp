@@ -38,9 +38,7 @@ class LineReader {
         continue;
       }
       check_plain();
-      if (line_.empty()) {
-        open_entry_ = false;
-      } else if (line_ == "#" || line_.starts_with("# ")) {
+      if (line_.empty() || line_ == "#" || line_.starts_with("# ")) {
         open_entry_ = false;
       } else if (line_.starts_with("== ")) {
         heading();

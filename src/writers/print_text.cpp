@@ -109,7 +109,7 @@ std::string TextPrinter::atom(const proof::Atom& value) const {
 }
 
 std::string TextPrinter::product(const proof::Product& value) const {
-  const std::string coefficient = factored(value.coefficient);
+  std::string coefficient = factored(value.coefficient);
   if (value.atoms.empty() || value.coefficient.constant == 0) return coefficient;
   std::string out;
   if (coefficient == "-1") {
