@@ -52,11 +52,16 @@ void check_copy(const claim::Source& source, const std::string& text, const Opti
   for (const claim::Parameter& parameter : question.claim->parameters) {
     names.push_back(parameter.name);
   }
+  // The recurrence that was found is the evidence: nothing is searched for again.
   auto equality = std::make_shared<claim::Claim>(*question.claim);
+  const auto parse = [&](const std::string& text) {
+    return claim::parse_expression(claim::Source{"closed form", text}, {0, text.size()}, names);
+  };
   try {
-    const claim::Source source{"closed form", *candidate};
-    equality->closed = claim::parse_expression(source, {0, candidate->size()}, names);
-    equality->evidence = {};
+    equality->closed = parse(*candidate);
+    const std::string& index = question.claim->sum.over.at(0).index;
+    names.push_back(index);
+    equality->evidence.certificate = {{index, parse(question.certificate_text)}};
     const Decision decision = decide(equality, options, watch, progress);
     if (decision.status() != Status::established) return "";
   } catch (const claim::InputError&) {

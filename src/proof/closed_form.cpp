@@ -227,10 +227,9 @@ class ProductText {
     mpz_class whole;
     mpz_ui_pow_ui(whole.get_mpz_t(), static_cast<unsigned long>(m), static_cast<unsigned long>(m));
     scale(mpq_class(1, whole), exponent);
-    const mpq_class there(mpz_class::factorial(at.get_ui() * static_cast<unsigned long>(m)),
+    const mpz_class there(mpz_class::factorial(at.get_ui() * static_cast<unsigned long>(m)) /
                           mpz_class::factorial(at.get_ui()));
-    constant_ *= power(mpq_class(there), -exponent);
-    constant_.canonicalize();
+    constant_ *= power(there, -exponent);
   }
 
   bool single(const mpq_class& shift, long exponent) {

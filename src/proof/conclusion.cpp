@@ -181,14 +181,8 @@ class LiteralRange {
   [[nodiscard]] std::vector<Affine> forms(const term::End& end, bool upper) const {
     std::vector<Affine> out;
     if (end.affine) out.push_back(*end.affine);
-    for (const Product& f : summand_)
-      for (const auto& [atom, e] : f.atoms) {
-        if (atom.kind != AtomKind::reciprocal_factorial) continue;
-        if (atom.argument.coefficients[term::index] != (upper ? -1 : 1)) continue;
-        Affine rest = atom.argument;
-        rest.coefficients[term::index] = 0;
-        out.push_back(upper ? rest : -rest);
-      }
+    for (const SupportEnd& support : support_ends(summand_, upper))
+      if (support.steep == 1) out.push_back(support.bound);
     return out;
   }
 
@@ -209,19 +203,12 @@ class LiteralRange {
       const std::optional<long> bound = facts.lower_bound(upper ? -k : k);
       if (bound) out.push_back(upper ? -*bound : *bound);
     }
-    for (const Product& f : summand_)
-      for (const auto& [atom, e] : f.atoms) {
-        if (atom.kind != AtomKind::reciprocal_factorial) continue;
-        const long slope = atom.argument.coefficients[term::index];
-        Affine rest = atom.argument;
-        rest.coefficients[term::index] = 0;
-        if (slope == 0 || (slope < 0) != upper || !rest.is_constant()) continue;
-        // slope k + c >= 0
-        const long c = rest.constant;
-        const long s = std::abs(slope);
-        const long quotient = c >= 0 ? c / s : -((-c + s - 1) / s);
-        out.push_back(upper ? quotient : -quotient);
-      }
+    for (const SupportEnd& support : support_ends(summand_, upper)) {
+      if (!support.bound.is_constant()) continue;
+      const long c = support.bound.constant;
+      out.push_back(upper ? term::floor_quotient(c, support.steep)
+                          : -term::floor_quotient(-c, support.steep));
+    }
     return out;
   }
 

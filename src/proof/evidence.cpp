@@ -34,6 +34,16 @@ std::string leading_monomials(const Polynomial& residue) {
   return out;
 }
 
+/// a/b when neither is 0 and the index cancels: certificates of proportional recurrences.
+std::optional<RationalFunction> quotient_free_of_index(const RationalFunction& a,
+                                                       const RationalFunction& b) {
+  if (a.is_zero() || b.is_zero()) return std::nullopt;
+  RationalFunction out = a / b;
+  if (out.numerator().depends_on(term::index) || out.denominator().depends_on(term::index))
+    return std::nullopt;
+  return out;
+}
+
 /// Whether the certificate belongs to another recurrence: the text of that recurrence.
 std::string recurrence_of_certificate(const Terms& terms, const EvidenceDraft& evidence,
                                       const algebra::Deadline& deadline) {
@@ -41,13 +51,12 @@ std::string recurrence_of_certificate(const Terms& terms, const EvidenceDraft& e
   options.max_order = static_cast<unsigned>(evidence.coefficients.size());
   options.deadline = deadline;
   const auto found = search::find_telescoper(terms.setting.ring, shift_quotients(terms), options);
-  if (!found || found->certificate.is_zero() || evidence.certificate->is_zero()) return "";
-  const RationalFunction factor = *evidence.certificate / found->certificate;
-  if (factor.numerator().depends_on(term::index) || factor.denominator().depends_on(term::index))
-    return "";
+  if (!found) return "";
+  const auto factor = quotient_free_of_index(*evidence.certificate, found->certificate);
+  if (!factor) return "";
   std::string out;
   for (const Polynomial& a : found->coefficients)
-    out += (out.empty() ? "[" : ", ") + (RationalFunction(a) * factor).to_string();
+    out += (out.empty() ? "[" : ", ") + (RationalFunction(a) * *factor).to_string();
   return out + "]";
 }
 
@@ -158,14 +167,12 @@ namespace {
 std::string known_certificate(const RationalFunction& right, const RationalFunction& brought,
                               const Polynomial& cleared) {
   const std::string text = term::claim_text((right / RationalFunction(cleared)).factored());
-  if (right.is_zero() || brought.is_zero()) return "; a certificate for it is " + text;
-  const RationalFunction factor = brought / right;
-  if (factor.numerator().depends_on(term::index) || factor.denominator().depends_on(term::index))
-    return "; a certificate for it is " + text;
+  const auto factor = quotient_free_of_index(brought, right);
+  if (!factor) return "; a certificate for it is " + text;
   return fmt::format(
       "; the certificate belongs to this recurrence multiplied by {}; the one for the recurrence "
       "as it stands is {}",
-      term::claim_text(factor.factored()), text);
+      term::claim_text(factor->factored()), text);
 }
 
 }  // namespace

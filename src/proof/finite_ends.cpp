@@ -30,11 +30,8 @@ ExpressionPtr parse(const term::Setting& setting, const Affine& form) {
 /// floor(form/divisor).
 ExpressionPtr floor_of(const term::Setting& setting, const Affine& form, long divisor) {
   if (divisor == 1) return parse(setting, form);
-  if (form.is_constant()) {
-    const long c = form.constant;
-    const long quotient = c >= 0 ? c / divisor : -((-c + divisor - 1) / divisor);
-    return parse(setting, Affine::of(setting.size(), quotient));
-  }
+  if (form.is_constant())
+    return parse(setting, Affine::of(setting.size(), term::floor_quotient(form.constant, divisor)));
   Expression literal;
   literal.value = divisor;
   Expression quotient;
@@ -47,17 +44,11 @@ ExpressionPtr floor_of(const term::Setting& setting, const Affine& form, long di
   return std::make_shared<Expression>(call);
 }
 
-/// The k at which slope * k + rest >= 0 ends: k <= floor(rest/-slope), or k >= -floor(rest/slope).
-std::optional<claim::Bound> end_of_support(const term::Setting& setting, const term::Atom& atom,
-                                           bool upper) {
-  if (atom.kind != AtomKind::reciprocal_factorial) return std::nullopt;
-  const long slope = atom.argument.coefficients[term::index];
-  if (slope == 0 || (slope < 0) != upper) return std::nullopt;
-  Affine rest = atom.argument;
-  rest.coefficients[term::index] = 0;
-  const long steep = std::labs(slope);
+/// k <= floor(bound/steep), or k >= ceil(bound/steep).
+claim::Bound end_of_support(const term::Setting& setting, const SupportEnd& support, bool upper) {
   claim::Bound out;
-  out.value = floor_of(setting, upper ? rest : -rest + (steep - 1), steep);
+  out.value =
+      floor_of(setting, upper ? support.bound : support.bound + (support.steep - 1), support.steep);
   return out;
 }
 
@@ -71,15 +62,13 @@ struct Candidate {
 std::vector<Candidate> candidates(const term::Setting& setting, const term::Facts& region,
                                   const std::vector<term::Product>& summand, bool upper) {
   std::vector<Candidate> out;
-  for (const term::Product& f : summand)
-    for (const auto& [atom, e] : f.atoms) {
-      const std::optional<claim::Bound> bound = end_of_support(setting, atom, upper);
-      if (!bound) continue;
-      std::optional<term::End> end = term::make_end(setting, *bound, upper);
-      if (!end) continue;
-      std::optional<VanishingDraft> reason = vanishing(region, end->outside, summand);
-      if (reason) out.push_back({*bound, std::move(*end), std::move(*reason)});
-    }
+  for (const SupportEnd& support : support_ends(summand, upper)) {
+    const claim::Bound bound = end_of_support(setting, support, upper);
+    std::optional<term::End> end = term::make_end(setting, bound, upper);
+    if (!end) continue;
+    std::optional<VanishingDraft> reason = vanishing(region, end->outside, summand);
+    if (reason) out.push_back({bound, std::move(*end), std::move(*reason)});
+  }
   return out;
 }
 

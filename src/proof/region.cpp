@@ -80,16 +80,9 @@ class Chooser {
     std::vector<Affine> out;
     const End& end = upper ? range_.high : range_.low;
     if (end.affine) add_family(out, *end.affine, upper);
-    for (const Product& f : summand_)
-      for (const auto& [atom, e] : f.atoms) {
-        if (atom.kind != AtomKind::reciprocal_factorial) continue;
-        const long slope = atom.argument.coefficients[term::index];
-        if (slope == 0 || (slope < 0) != upper) continue;
-        Affine rest = atom.argument;
-        rest.coefficients[term::index] = 0;
-        // slope * k + rest >= 0: for |slope| > 1 the weaker |k| <= |rest| still bounds the support.
-        add_family(out, upper ? rest : -rest, upper);
-      }
+    // Where steep > 1, the weaker |k| <= |bound| still bounds the support.
+    for (const SupportEnd& support : support_ends(summand_, upper))
+      add_family(out, support.bound, upper);
     return out;
   }
 
@@ -221,6 +214,20 @@ bool all_hold(const Setting& setting, const Facts& facts, const std::vector<Need
     }
   }
   return true;
+}
+
+std::vector<SupportEnd> support_ends(const std::vector<Product>& summand, bool upper) {
+  std::vector<SupportEnd> out;
+  for (const Product& f : summand)
+    for (const auto& [atom, e] : f.atoms) {
+      if (atom.kind != AtomKind::reciprocal_factorial) continue;
+      const long slope = atom.argument.coefficients[term::index];
+      if (slope == 0 || (slope < 0) != upper) continue;
+      Affine rest = atom.argument;
+      rest.coefficients[term::index] = 0;
+      out.push_back({std::abs(slope), upper ? rest : -rest});
+    }
+  return out;
 }
 
 std::optional<VanishingDraft> vanishing(const Facts& facts, const std::vector<Conjunction>& where,

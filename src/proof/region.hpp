@@ -50,6 +50,15 @@ struct AuthorRange {
                                                        const std::vector<Need>& needs,
                                                        long threshold, std::string& why);
 
+/// An end of a product's support, from a reciprocal factorial: steep * k <= bound for an upper end,
+/// steep * k >= bound for a lower one; steep > 0, the bound free of the index.
+struct SupportEnd {
+  long steep = 1;
+  term::Affine bound;
+};
+[[nodiscard]] std::vector<SupportEnd> support_ends(const std::vector<term::Product>& summand,
+                                                   bool upper);
+
 /// Per product an rfact atom that is negative on each of the alternatives; nothing when some
 /// product has none.
 [[nodiscard]] std::optional<VanishingDraft> vanishing(const term::Facts& facts,

@@ -244,10 +244,6 @@ class Drafter {
     return false;
   }
 
-  /// Denominators free of the index: into factorials free of the index where that costs nothing,
-  /// else into the weight.
-  bool absorb_free_factors() { return true; }
-
   bool bring_shifts() {
     for (std::size_t i = 0; i < out_.coefficients.size(); ++i) {
       std::vector<Bringing> parts;

@@ -74,6 +74,10 @@ Affine operator+(const Affine& a, long constant) {
 
 Affine operator-(const Affine& a, long constant) { return a + multiply(-1, constant); }
 
+long floor_quotient(long numerator, long denominator) {
+  return numerator >= 0 ? numerator / denominator : -((-numerator + denominator - 1) / denominator);
+}
+
 bool to_affine(const algebra::Polynomial& polynomial, Affine& out) {
   if (polynomial.total_degree() > 1) return false;
   out = Affine::zero(polynomial.ring()->size());

@@ -41,6 +41,9 @@ struct Affine {
 [[nodiscard]] Affine operator+(const Affine& a, long constant);
 [[nodiscard]] Affine operator-(const Affine& a, long constant);
 
+/// The largest integer <= numerator/denominator, denominator > 0.
+[[nodiscard]] long floor_quotient(long numerator, long denominator);
+
 /// The affine form that a polynomial is, if it is one with coefficients that fit.
 [[nodiscard]] bool to_affine(const algebra::Polynomial& polynomial, Affine& out);
 

@@ -19,13 +19,6 @@ constexpr long most_points = 20000;
   throw claim::InputError(*setting.claim->source, place, what, "a claim about nothing is refused");
 }
 
-Facts from_start(const Setting& setting) {
-  const mpz_class& from = setting.claim->from;
-  if (!from.fits_slong_p())
-    throw claim::InputError(*setting.claim->source, {}, "this number is too large");
-  return setting.from(from.get_si());
-}
-
 struct Side {
   std::size_t symbol;
   long low;
@@ -123,7 +116,7 @@ bool no_integer_point(const Setting& setting) {
 
 void refuse_contradiction(const Setting& setting) {
   const claim::Claim& claim = *setting.claim;
-  const Facts facts = from_start(setting);
+  const Facts facts = setting.from(checked_long(setting, claim.from, {}));
   for (const claim::Assumption& a : claim.assumptions) {
     if (a.comparison != claim::Comparison::not_equal) continue;
     if (a.over_integers) {

@@ -28,7 +28,7 @@ Affine tighten(const Affine& form) {
   if (g <= 1) return form;
   Affine out = form;
   for (long& c : out.coefficients) c /= g;
-  out.constant = form.constant >= 0 ? form.constant / g : -((-form.constant + g - 1) / g);
+  out.constant = floor_quotient(form.constant, g);
   return out;
 }
 

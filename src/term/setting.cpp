@@ -53,12 +53,6 @@ void add_assumption(Setting& setting, const claim::Assumption& a) {
   }
 }
 
-long checked_long(const Setting& setting, const mpz_class& value, claim::Place place) {
-  if (!value.fits_slong_p())
-    throw claim::InputError(*setting.claim->source, place, "this number is too large");
-  return value.get_si();
-}
-
 std::vector<Conjunction> combine(const std::vector<Conjunction>& a,
                                  const std::vector<Conjunction>& b) {
   std::vector<Conjunction> out;
@@ -122,6 +116,12 @@ std::optional<End> end_of(const Setting& setting, const Expression& e, bool uppe
 
 Facts Setting::from(long least) const {
   return hypotheses.with(Affine::symbol(size(), running) - least);
+}
+
+long checked_long(const Setting& setting, const mpz_class& value, claim::Place place) {
+  if (!value.fits_slong_p())
+    throw claim::InputError(*setting.claim->source, place, "this number is too large");
+  return value.get_si();
 }
 
 Setting make_setting(const std::shared_ptr<const claim::Claim>& claim) {

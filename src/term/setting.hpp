@@ -39,6 +39,10 @@ struct Setting {
 /// contradictory.
 [[nodiscard]] Setting make_setting(const std::shared_ptr<const claim::Claim>& claim);
 
+/// A number of the claim as a machine integer. Throws claim::InputError (with the place) when it is
+/// too large.
+[[nodiscard]] long checked_long(const Setting& setting, const mpz_class& value, claim::Place place);
+
 /// An expression known to be integer-affine in integer symbols.
 /// Throws claim::InputError (with the place) when it is not.
 [[nodiscard]] Affine to_affine(const Setting& setting, const claim::Expression& expression);

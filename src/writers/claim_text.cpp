@@ -78,22 +78,6 @@ std::string sum_text(const claim::Sum& sum) {
   return out;
 }
 
-std::string comparison_text(claim::Comparison comparison) {
-  switch (comparison) {
-    case claim::Comparison::less_equal:
-      return "<=";
-    case claim::Comparison::less:
-      return "<";
-    case claim::Comparison::greater_equal:
-      return ">=";
-    case claim::Comparison::greater:
-      return ">";
-    case claim::Comparison::not_equal:
-      break;
-  }
-  return "!=";
-}
-
 std::string exclusion_text(const std::string& name, const claim::Exclusion& exclusion) {
   switch (exclusion.kind) {
     case claim::Exclusion::Kind::constant:
@@ -163,6 +147,22 @@ std::string statement_text(const proof::Proof& proof) {
   if (left.empty()) return fmt::format("a recurrence for S({}) = {} {}", claim.running, sum, every);
   return fmt::format("{} = {} {}, where S({}) = {}", left, stated.right_side, every, claim.running,
                      sum);
+}
+
+std::string comparison_text(claim::Comparison comparison) {
+  switch (comparison) {
+    case claim::Comparison::less_equal:
+      return "<=";
+    case claim::Comparison::less:
+      return "<";
+    case claim::Comparison::greater_equal:
+      return ">=";
+    case claim::Comparison::greater:
+      return ">";
+    case claim::Comparison::not_equal:
+      break;
+  }
+  return "!=";
 }
 
 }  // namespace sumwright::writers

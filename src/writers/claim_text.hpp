@@ -43,4 +43,7 @@ struct StatedRecurrence {
 /// The kind of claim: `equality`, `recurrence`, `question`.
 [[nodiscard]] std::string claim_kind(const proof::Proof& proof);
 
+/// `<=`, `<`, `>=`, `>`, `!=`.
+[[nodiscard]] std::string comparison_text(claim::Comparison comparison);
+
 }  // namespace sumwright::writers

@@ -223,8 +223,7 @@ std::string claim_script(const proof::Proof& proof, const std::string& parameter
                          const std::string& hypotheses) {
   const std::string n = names(proof).n;
   const std::string given = parameters + hypotheses;
-  std::string ends;
-  for (const std::string& end : end_variables(proof)) ends += " " + end;
+  const std::string ends = end_arguments(proof);
   if (!proof.claim->is_equality() && ends.empty())
     return fmt::format(
         "  intros K{} s{} Hs {} Hn. rewrite !Hs. exact (conclusion K{} {} Hn).\nQed.\n\n",

@@ -16,9 +16,6 @@ class FiniteRangeText : private SectionText {
   explicit FiniteRangeText(const proof::Proof& proof) : SectionText(proof) {}
 
   std::string run() {
-    const claim::Range& author = proof_.claim->sum.over[0];
-    lo_ = author.low.value ? integer_text(proof_, *author.low.value) : "lo_end";
-    hi_ = author.high.value ? integer_text(proof_, *author.high.value) : "hi_end";
     out_ += heading("An infinite range is a finite one");
     outside_support();
     finite_sum();
@@ -26,18 +23,41 @@ class FiniteRangeText : private SectionText {
     return out_;
   }
 
+  /// The claim of a recurrence, inside the section.
+  std::string infinite_claim() {
+    out_ += note("The recurrence of a sum with infinite ends.");
+    out_ += fmt::format(
+        "Lemma infinite_range{0} (s : Z -> K) :\n{1}"
+        "  forall {2} : Z, {3} <= {2} ->\n  {4}.\nProof.\n"
+        "  intros Hs Ho {2} Hn. rewrite !(finite_sequence{5} s Hs Ho) by lia.\n"
+        "  exact (conclusion {2} Hn).\nQed.\n\n",
+        end_binders(proof_, "Z -> Z"), sequence_premises(), names_.n, from_,
+        recurrence_equation(proof_, "K"), end_arguments(proof_));
+    return out_;
+  }
+
  private:
-  [[nodiscard]] std::string binders(const std::string& type) const {
+  [[nodiscard]] std::string term() const {
+    return fmt::format("summand {} {}", names_.n, names_.k);
+  }
+
+  /// The ends that are functions of the running variable, applied to it.
+  [[nodiscard]] std::string ends_here() const {
+    const claim::Range& author = proof_.claim->sum.over[0];
     std::string out;
-    for (const std::string& end : end_variables(proof_))
-      out += fmt::format(" ({} : {})", end, type);
+    if (!author.low.value) out += " " + end_text(proof_, false);
+    if (!author.high.value) out += " " + end_text(proof_, true);
     return out;
   }
 
-  [[nodiscard]] std::string of_running(const std::string& n) const {
-    std::string out;
-    for (const std::string& end : end_variables(proof_)) out += fmt::format(" ({} {})", end, n);
-    return out;
+  /// What is assumed of the sequence s and of the ends.
+  [[nodiscard]] std::string sequence_premises() const {
+    const std::string low = end_text(proof_, false);
+    const std::string high = end_text(proof_, true);
+    return fmt::format(
+        "  (forall {0} : Z, s {0} = sum {1} {2} (fun {3} : Z => {4})) ->\n"
+        "  (forall {0} : Z, {5} <= {0} -> {6}) ->\n",
+        names_.n, low, high, names_.k, term(), from_, vanishing_text(proof_, term(), low, high));
   }
 
   void outside_support() {
@@ -63,7 +83,8 @@ class FiniteRangeText : private SectionText {
     const proof::FiniteRange& finite = *proof_.finite_range;
     const std::string low = integer_text(proof_, *finite.range.low.value);
     const std::string high = integer_text(proof_, *finite.range.high.value);
-    const std::string term = fmt::format("summand {} {}", names_.n, names_.k);
+    const std::string lo = end_name(proof_, false);
+    const std::string hi = end_name(proof_, true);
     out_ += note(
         "Ends beyond which all terms are 0, whatever they are, and those of the support give the "
         "same sum.");
@@ -74,26 +95,18 @@ class FiniteRangeText : private SectionText {
         "  apply (sum_same K {4} {5} {8} {9} (fun {6} : Z => {7})).\n"
         "  - intros {6} Hk Ho. cbv beta. apply outside_support; index.\n"
         "  - intros {6} Hk Ho. cbv beta. first [apply Hv; lia | exfalso; index].\nQed.\n\n",
-        names_.n, binders("Z"), from_, vanishing_text(proof_, term, lo_, hi_), lo_, hi_, names_.k,
-        term, low, high);
+        names_.n, end_binders(proof_, "Z"), from_, vanishing_text(proof_, term(), lo, hi), lo, hi,
+        names_.k, term(), low, high);
   }
 
   void recurrence() {
-    const std::string term = fmt::format("summand {} {}", names_.n, names_.k);
     out_ += note("The sum as a sequence.");
     out_ += fmt::format(
-        "Lemma finite_sequence{0} (s : Z -> K) :\n"
-        "  (forall {1} : Z, s {1} = sum {2} {3} (fun {4} : Z => {5})) ->\n"
-        "  (forall {1} : Z, {6} <= {1} -> {7}) ->\n"
-        "  forall {1} : Z, {6} <= {1} -> s {1} = left_side {1}.\nProof.\n"
-        "  intros Hs Ho {1} Hn. rewrite Hs. exact (finite_sum {1}{8} Hn (Ho {1} Hn)).\nQed.\n\n",
-        binders("Z -> Z"), names_.n, end_text(proof_, false), end_text(proof_, true), names_.k,
-        term, from_, vanishing_text(proof_, term, end_text(proof_, false), end_text(proof_, true)),
-        of_running(names_.n));
+        "Lemma finite_sequence{0} (s : Z -> K) :\n{1}"
+        "  forall {2} : Z, {3} <= {2} -> s {2} = left_side {2}.\nProof.\n"
+        "  intros Hs Ho {2} Hn. rewrite Hs. exact (finite_sum {2}{4} Hn (Ho {2} Hn)).\nQed.\n\n",
+        end_binders(proof_, "Z -> Z"), sequence_premises(), names_.n, from_, ends_here());
   }
-
-  std::string lo_;
-  std::string hi_;
 };
 
 }  // namespace
@@ -113,26 +126,7 @@ std::string finite_range_section(const proof::Proof& proof) { return FiniteRange
 
 std::string infinite_claim_section(const proof::Proof& proof) {
   if (!proof.finite_range || proof.claim->is_equality()) return "";
-  const std::string n = names(proof).n;
-  const std::string from = bracketed(std::to_string(proof.from));
-  std::string binders;
-  std::string ends;
-  for (const std::string& end : end_variables(proof)) {
-    binders += fmt::format(" ({} : Z -> Z)", end);
-    ends += " " + end;
-  }
-  const std::string term = fmt::format("summand {} {}", n, names(proof).k);
-  return note("The recurrence of a sum with infinite ends.") +
-         fmt::format(
-             "Lemma infinite_range{0} (s : Z -> K) :\n"
-             "  (forall {1} : Z, s {1} = sum {2} {3} (fun {4} : Z => {5})) ->\n"
-             "  (forall {1} : Z, {6} <= {1} -> {7}) ->\n"
-             "  forall {1} : Z, {6} <= {1} ->\n  {8}.\nProof.\n"
-             "  intros Hs Ho {1} Hn. rewrite !(finite_sequence{9} s Hs Ho) by lia.\n"
-             "  exact (conclusion {1} Hn).\nQed.\n\n",
-             binders, n, end_text(proof, false), end_text(proof, true), names(proof).k, term, from,
-             vanishing_text(proof, term, end_text(proof, false), end_text(proof, true)),
-             recurrence_equation(proof, "K"), ends);
+  return FiniteRangeText(proof).infinite_claim();
 }
 
 std::string index_premise(const proof::Proof& proof) {

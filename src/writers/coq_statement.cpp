@@ -10,6 +10,7 @@
 
 #include "claim/affine.hpp"
 #include "claim/parts.hpp"
+#include "writers/claim_text.hpp"
 #include "writers/coq_text.hpp"
 
 namespace sumwright::writers::coq {
@@ -60,19 +61,7 @@ std::string power_text(const proof::Proof& proof, const Expression& e) {
 }
 
 std::string comparison_sign(claim::Comparison c) {
-  switch (c) {
-    case claim::Comparison::less_equal:
-      return "<=";
-    case claim::Comparison::less:
-      return "<";
-    case claim::Comparison::greater_equal:
-      return ">=";
-    case claim::Comparison::greater:
-      return ">";
-    case claim::Comparison::not_equal:
-      return "<>";
-  }
-  return "";
+  return c == claim::Comparison::not_equal ? "<>" : comparison_text(c);
 }
 
 std::string word_condition(claim::Exclusion::Kind kind) {
@@ -260,14 +249,21 @@ std::string sum_text(const proof::Proof& proof) {
                      end_text(proof, true), name_of(sum.over[0].index), summand);
 }
 
-std::string end_text(const proof::Proof& proof, bool upper) {
+std::string end_name(const proof::Proof& proof, bool upper) {
   const claim::Range& r = proof.claim->sum.over[0];
   const claim::Bound& bound = upper ? r.high : r.low;
   if (bound.value) return integer_text(proof, *bound.value);
-  std::string variable = upper ? kHighEnd : kLowEnd;
-  if (proof.claim->is_equality()) return variable;
-  return fmt::format("({} {})", variable, name_of(proof.claim->running));
+  return upper ? kHighEnd : kLowEnd;
 }
+
+std::string end_text(const proof::Proof& proof, bool upper) {
+  const claim::Range& r = proof.claim->sum.over[0];
+  const bool infinite = !(upper ? r.high : r.low).value;
+  if (!infinite || proof.claim->is_equality()) return end_name(proof, upper);
+  return fmt::format("({} {})", end_name(proof, upper), name_of(proof.claim->running));
+}
+
+namespace {
 
 std::vector<std::string> end_variables(const proof::Proof& proof) {
   std::vector<std::string> out;
@@ -275,6 +271,20 @@ std::vector<std::string> end_variables(const proof::Proof& proof) {
     if (!r.low.value) out.emplace_back(kLowEnd);
     if (!r.high.value) out.emplace_back(kHighEnd);
   }
+  return out;
+}
+
+}  // namespace
+
+std::string end_arguments(const proof::Proof& proof) {
+  std::string out;
+  for (const std::string& end : end_variables(proof)) out += " " + end;
+  return out;
+}
+
+std::string end_binders(const proof::Proof& proof, const std::string& type) {
+  std::string out;
+  for (const std::string& end : end_variables(proof)) out += fmt::format(" ({} : {})", end, type);
   return out;
 }
 
@@ -313,9 +323,7 @@ std::string statement_text(const proof::Proof& proof, const std::string& field) 
   const std::string parameters = parameter_binders(proof, field);
   std::string out = parameters.empty() ? "forall" : "forall " + parameters;
   const bool equality = proof.claim->is_equality();
-  std::string ends;
-  for (const std::string& end : end_variables(proof))
-    ends += fmt::format(" ({} : {})", end, equality ? "Z" : "Z -> Z");
+  const std::string ends = end_binders(proof, equality ? "Z" : "Z -> Z");
   out += equality ? fmt::format(" ({} : Z){},\n", n, ends)
                   : fmt::format("{} (s : Z -> {}),\n", ends, field);
   const std::string vanishing =

@@ -38,8 +38,12 @@ struct Hypothesis {
 /// An end of the summed range as it stands in the statement: a variable when it is infinite, of the
 /// running variable in a recurrence.
 [[nodiscard]] std::string end_text(const proof::Proof& proof, bool upper);
-/// The variables for infinite ends, low before high.
-[[nodiscard]] std::vector<std::string> end_variables(const proof::Proof& proof);
+/// The same, the variable by itself in every claim.
+[[nodiscard]] std::string end_name(const proof::Proof& proof, bool upper);
+/// The variables for infinite ends, low before high: as arguments ` lo_end hi_end` and as binders
+/// ` (lo_end : Z) (hi_end : Z)`; empty when both ends are finite.
+[[nodiscard]] std::string end_arguments(const proof::Proof& proof);
+[[nodiscard]] std::string end_binders(const proof::Proof& proof, const std::string& type);
 /// `(forall k : Z, k < lo_end \/ hi_end < k -> summand = 0)`, with the ends that are infinite and
 /// `summand` in place of the author's expression; empty when both are finite.
 [[nodiscard]] std::string vanishing_text(const proof::Proof& proof, const std::string& summand,
